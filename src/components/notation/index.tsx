@@ -1,0 +1,63 @@
+import { formulaLabel, parseFormula } from './formula';
+import { oxidationStateText, parseQuantity, parseUnit, type QuantityInput, unitLabel } from './quantity';
+import { Runs } from './Runs';
+import { runsToText } from './runs';
+import { parseConfiguration, parseDCount, parsePointGroup, parseTerm, parseTransition, termLabel } from './term';
+
+interface Styled {
+  className?: string | undefined;
+}
+
+/** A formula in the plain text of the contract: `[Cr(ox)3]3-`, `trans-[CoCl2(en)2]+`, `K3[Cr(ox)3]·3H2O`. */
+export function Formula({ formula, className }: Styled & { formula: string }) {
+  return <Runs runs={parseFormula(formula)} label={formulaLabel(formula)} className={className} />;
+}
+
+/** A term symbol: `4A2g`, `4T1g(F)`, `2Sigma_g+`. */
+export function Term({ term, className }: Styled & { term: string }) {
+  return <Runs runs={parseTerm(term)} label={termLabel(term)} className={className} />;
+}
+
+/** An irreducible representation: `T2g`, `A1'`, `E''`, `Pi_u`. */
+export function Irrep({ irrep, className }: Styled & { irrep: string }) {
+  return <Term term={irrep} className={className} />;
+}
+
+/** The symbol of a point group: `Oh`, `D4h`, `Cinfv`. */
+export function PointGroup({ group, className }: Styled & { group: string }) {
+  return <Runs runs={parsePointGroup(group)} label={group.replace('inf', ' infinity ')} className={className} />;
+}
+
+/** A transition, lower state first: `2T2g` → `2Eg`. */
+export function Transition({ from, to, className }: Styled & { from?: string | null; to?: string | null }) {
+  const label = [from, to].flatMap((end) => (end ? [termLabel(end)] : [])).join(' to ');
+  return <Runs runs={parseTransition(from, to)} label={label} className={className} />;
+}
+
+/** An electron configuration: `t2g3 eg0`. */
+export function Configuration({ configuration, className }: Styled & { configuration: string }) {
+  return <Runs runs={parseConfiguration(configuration)} label={configuration} className={className} />;
+}
+
+/** A d-electron count: d³. */
+export function DCount({ count, className }: Styled & { count: number }) {
+  return <Runs runs={parseDCount(count)} label={`d ${count}`} className={className} />;
+}
+
+/** An element with its oxidation state: Co(III). */
+export function OxidationState({ element, state, className }: Styled & { element: string; state: number | null }) {
+  return <span className={className}>{oxidationStateText(element, state)}</span>;
+}
+
+/** A number with its uncertainty and unit. */
+export function Quantity({ className = '', ...quantity }: Styled & QuantityInput) {
+  const runs = parseQuantity(quantity);
+  const { unit, ...bare } = quantity;
+  const label = unit && `${runsToText(parseQuantity(bare))} ${unitLabel(unit)}`;
+  return <Runs runs={runs} label={label} className={`num ${className}`} />;
+}
+
+/** A unit on its own: `dm3 mol-1 cm-1`. */
+export function Unit({ unit, className }: Styled & { unit: string }) {
+  return <Runs runs={parseUnit(unit)} label={unitLabel(unit)} className={className} />;
+}
