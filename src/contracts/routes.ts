@@ -1,0 +1,12 @@
+import { complexRoutes } from './complexes.ts';
+import { deriveRoutes } from './derive.ts';
+import { sharingRoutes } from './sharing.ts';
+import { spectrumRoutes } from './spectra.ts';
+
+/**
+ * Every endpoint of the program: who may call it, what enters and what leaves. Requests are checked by it, the OpenAPI
+ * document is made from it, and the access matrix test asks for a row for each of its entries.
+ */
+export const routes = { ...deriveRoutes, ...complexRoutes, ...spectrumRoutes, ...sharingRoutes };
+
+export type RouteName = keyof typeof routes;

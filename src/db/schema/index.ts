@@ -1,0 +1,5 @@
+export * from './accounts.ts';
+export * from './complexes.ts';
+export * from './folios.ts';
+export * from './spectra.ts';
+export * from './work.ts';

@@ -1,0 +1,108 @@
+import { defineMiddleware } from 'astro:middleware';
+import { randomUUID } from 'node:crypto';
+import { getSession } from 'auth-astro/server';
+import { type Asker, askerOfSession, askerOfToken } from './server/access/asker.ts';
+import { problem, toProblem } from './server/http.ts';
+import { log } from './server/log.ts';
+import { isLoopback, settings } from './server/settings.ts';
+import { startBackground } from './server/start.ts';
+
+if (process.env.ZAFFRE_SERVE === '1') startBackground();
+
+const UNSAFE = new Set(['POST', 'PUT', 'PATCH', 'DELETE']);
+const SESSION_COOKIE = /(?:^|;\s*)(?:__Secure-)?authjs\.session-token(?:\.\d+)?=/;
+
+/** Origins under which this server may be asked: the public one, and in demo mode every name of this machine. */
+function ownOrigin(url: URL): boolean {
+  const { mode, publicOrigin } = settings();
+  if (url.origin === publicOrigin) return true;
+  return mode === 'demo' && isLoopback(url.hostname) && url.port === new URL(publicOrigin).port;
+}
+
+/**
+ * A write by cookie must come from our own pages: by its Origin, or by Sec-Fetch-Site where a browser leaves Origin
+ * out. Neither is a refusal.
+ */
+function fromOwnPage(request: Request): boolean {
+  const origin = request.headers.get('origin');
+  if (origin !== null) return URL.canParse(origin) && ownOrigin(new URL(origin));
+  return request.headers.get('sec-fetch-site') === 'same-origin';
+}
+
+async function askerOf(request: Request) {
+  const authorization = request.headers.get('authorization');
+  // Where cookie and bearer both come, the bearer counts, also when it is wrong.
+  if (authorization !== null) {
+    const token = /^Bearer\s+(\S+)$/i.exec(authorization)?.[1];
+    return token ? askerOfToken(token) : null;
+  }
+  if (!SESSION_COOKIE.test(request.headers.get('cookie') ?? '')) return null;
+  const session = await getSession(request);
+  return session?.accountId ? askerOfSession(session) : null;
+}
+
+const SECURITY_HEADERS = {
+  'x-content-type-options': 'nosniff',
+  'referrer-policy': 'same-origin',
+  'cross-origin-opener-policy': 'same-origin',
+  'permissions-policy': 'camera=(), geolocation=(), microphone=()',
+};
+
+/** What `default-src 'none'` keeps from ever running: an answer of the API opened as a page. */
+const API_POLICY = "default-src 'none'; frame-ancestors 'none'; sandbox";
+
+function withHeaders(answer: Response, isApi: boolean, requestId: string): Response {
+  const response = new Response(answer.body, answer); // the headers of a redirect are immutable: copy first
+  for (const [name, value] of Object.entries(SECURITY_HEADERS)) response.headers.set(name, value);
+  response.headers.set('x-request-id', requestId);
+  if (settings().publicOrigin.startsWith('https:'))
+    response.headers.set('strict-transport-security', 'max-age=31536000; includeSubDomains');
+  const policy = response.headers.get('content-security-policy');
+  if (policy)
+    response.headers.set('content-security-policy', `${policy} style-src-attr 'unsafe-inline'; frame-ancestors 'none'`);
+  else if (isApi) response.headers.set('content-security-policy', API_POLICY);
+  else response.headers.set('x-frame-options', 'DENY');
+  if (!response.headers.has('cache-control')) response.headers.set('cache-control', 'private, no-store');
+  return response;
+}
+
+/** What the framework itself refuses under /api (an unknown path, a method that is not served) is a problem, too. */
+function asProblem(response: Response, isApi: boolean, path: string): Response {
+  const ours = !isApi || path.startsWith('/api/auth/') || response.status < 400 || response.status === 412;
+  if (ours || response.headers.get('content-type')?.startsWith('application/problem+json')) return response;
+  return problem(response.status, 'There is no such endpoint or method; /api/openapi.json lists what is served');
+}
+
+export const onRequest = defineMiddleware(async (context, next) => {
+  const { request, url, locals, cookies } = context;
+  const started = performance.now();
+  const requestId = randomUUID();
+  const isApi = url.pathname.startsWith('/api/');
+  locals.requestId = requestId;
+  locals.asker = null as Asker | null;
+  locals.theme = cookies.get('zaffre-theme')?.value === 'dark' ? 'dark' : 'light';
+
+  const answer = async (): Promise<Response> => {
+    if (!ownOrigin(url)) return problem(421, 'This host is not the one this registry is served under');
+    try {
+      locals.asker = await askerOf(request);
+    } catch (error) {
+      return toProblem(error, requestId);
+    }
+    const byCookie = !request.headers.has('authorization') && SESSION_COOKIE.test(request.headers.get('cookie') ?? '');
+    if (UNSAFE.has(request.method) && byCookie && (locals.asker || !isApi) && !fromOwnPage(request))
+      return problem(403, 'A write by cookie must come from a page of this registry');
+    return next();
+  };
+
+  const response = withHeaders(asProblem(await answer(), isApi, url.pathname), isApi, requestId);
+  log.info({
+    requestId,
+    method: request.method,
+    path: url.pathname,
+    status: response.status,
+    ms: Math.round(performance.now() - started),
+    account: locals.asker?.accountId,
+  });
+  return response;
+});

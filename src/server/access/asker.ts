@@ -1,0 +1,96 @@
+import { and, eq, gt, isNull } from 'drizzle-orm';
+import type { Db } from '../../db/client.ts';
+import { accessTokens, accounts, folios, grants, memberships } from '../../db/schema/index.ts';
+import { database } from '../database.ts';
+import { nowIso, sha256 } from '../ids.ts';
+import type { Actor } from '../trail.ts';
+
+export type Role = 'lead' | 'contributor';
+export type Level = 'view' | 'download';
+
+export interface ActiveGrant {
+  id: string;
+  folioId: string;
+  /** The lab whose folio it is: a guest sees what a member of it may share. */
+  labId: string;
+  level: Level;
+  shows: 'attested' | 'proposed';
+}
+
+/** Who is asking, as the database has it now: never what a cookie remembers. */
+export interface Asker extends Actor {
+  readonly accountId: string;
+  readonly email: string;
+  readonly name: string;
+  readonly steward: boolean;
+  readonly labs: ReadonlyMap<string, Role>;
+  /** Grants that hold today, of folios not under embargo. */
+  readonly grants: readonly ActiveGrant[];
+  readonly tokenId: string | null;
+  /** What the asker's means of entry allows: a session both, a token what it was made for. */
+  readonly scopes: ReadonlySet<'read' | 'write'>;
+}
+
+/** A member sees what the programme shares; a guest only what folios grant. */
+export const isMember = (asker: Asker): boolean => asker.steward || asker.labs.size > 0;
+
+/** Labs in which the asker holds a role. */
+export const labsWith = (asker: Asker, role: Role): string[] =>
+  [...asker.labs].filter(([, held]) => held === role).map(([labId]) => labId);
+
+async function load(
+  db: Db,
+  account: typeof accounts.$inferSelect,
+  token?: typeof accessTokens.$inferSelect,
+): Promise<Asker> {
+  const now = nowIso();
+  const [held, given] = await Promise.all([
+    db.select().from(memberships).where(eq(memberships.accountId, account.id)),
+    db
+      .select({
+        id: grants.id,
+        folioId: grants.folioId,
+        labId: folios.labId,
+        level: grants.level,
+        shows: folios.shows,
+        embargoUntil: folios.embargoUntil,
+      })
+      .from(grants)
+      .innerJoin(folios, eq(folios.id, grants.folioId))
+      .where(and(eq(grants.accountId, account.id), isNull(grants.revokedAt), gt(grants.expiresAt, now))),
+  ]);
+  // A token made for one lab brings the rights of that lab alone.
+  const labs = held.filter((m) => !token?.labId || m.labId === token.labId);
+  return {
+    accountId: account.id,
+    email: account.email,
+    name: account.name,
+    steward: account.steward && !token?.labId,
+    labs: new Map(labs.map((m) => [m.labId, m.role])),
+    grants: given.filter((g) => !g.embargoUntil || g.embargoUntil <= now),
+    tokenId: token?.id ?? null,
+    scopes: new Set(token?.scopes ?? ['read', 'write']),
+  };
+}
+
+/** The account of a session cookie, or null when it was ended or the account closed since. */
+export async function askerOfSession(session: { accountId: string; version: number }): Promise<Asker | null> {
+  const { db } = await database();
+  const [account] = await db.select().from(accounts).where(eq(accounts.id, session.accountId));
+  if (account?.state !== 'active' || account.sessionVersion !== session.version) return null;
+  return load(db, account);
+}
+
+/** The account of an access token, or null when it is unknown, lapsed or revoked. */
+export async function askerOfToken(token: string): Promise<Asker | null> {
+  const { db } = await database();
+  const [row] = await db
+    .select()
+    .from(accessTokens)
+    .innerJoin(accounts, eq(accounts.id, accessTokens.accountId))
+    .where(
+      and(eq(accessTokens.hash, sha256(token)), isNull(accessTokens.revokedAt), gt(accessTokens.expiresAt, nowIso())),
+    );
+  if (row?.account.state !== 'active') return null;
+  return load(db, row.account, row.access_token);
+}

@@ -1,0 +1,16 @@
+import { getViteConfig } from 'astro/config';
+
+/**
+ * Suites by folder: unit and checks are pure and run in the bare runner; api runs every request through the
+ * middleware on a database of its own. The browser and fault suites have runners of their own (scripts/test.mjs).
+ */
+export default getViteConfig({
+  test: {
+    include: ['tests/{unit,checks,api}/**/*.test.{ts,tsx}'],
+    setupFiles: ['tests/setup/silence.ts'],
+    testTimeout: 20_000,
+    hookTimeout: 30_000,
+    pool: 'forks',
+    maxWorkers: 2,
+  },
+});
