@@ -1,0 +1,13 @@
+export * from './absorbance';
+export { ABSORBANCE_LIMIT, checkConditions, type Flag, type MeasuredCurve, type SolventGiven } from './conditions';
+export { type SpectrumToWrite, writeJcamp } from './jcamp/write';
+export * from './oscillator-strength';
+export { type PickedBand, type PickOptions, pickBands } from './pick-bands';
+export { ascending, type Curve, decimate } from './points';
+export { readSpectrumFile } from './read';
+export { findSolvent, type Solvent, solvents } from './solvents';
+export * from './types';
+export { isAbscissaLabel, xUnitFromText, xUnitNames, yUnitFromText, yUnitNames } from './unit-names';
+export { convertEnergy, convertX, type EnergyUnit, toWavenumber, wavenumberInterval } from './units';
+export * from './wavelength-check';
+export { guardCell, writeCsv } from './write-csv';
