@@ -1,4 +1,5 @@
 import { type Geometry, transPairs } from './catalogue';
+import { pillarsText, ringText, trianglesText } from './site-texts';
 
 /** What a name can be read from: donor labels, ligands and chelate links at the vertices. */
 export interface LabelledArrangement {
@@ -13,8 +14,8 @@ const WITH_TRANS_PAIRS = new Set(['TS-3', 'SP-4', 'SPY-4', 'SS-4', 'SPY-5', 'OC-
 /**
  * Names that tell isomers apart, mirror images being named alike.
  *
- * A short name (cis, trans, fac, mer, all-cis, trans-A, cis-α …) where it fits one form only; else with the trans
- * pairs, or the pairs alone; null where that is still not enough, or where there is only one form.
+ * A short name (cis, trans, fac, mer, all-cis, trans-A, cis-α, axial: A, B …) where it fits one form only; else with
+ * the trans pairs, the order round the ring or the triangles, or these alone; null where that is still not enough, or where there is only one form.
  *
  * @param forms - one arrangement of each form, all of the same ligands
  */
@@ -22,7 +23,7 @@ export function descriptors(geometry: Geometry, forms: readonly LabelledArrangem
   if (forms.length < 2) return forms.map(() => null);
   const view = new Forms(geometry, forms);
   const short = forms.map((form) => view.shortName(form));
-  const text = forms.map((form) => view.pairsText(form));
+  const text = forms.map((form) => view.fullText(form));
   const both = short.map((name, n) => [name, text[n]].filter(Boolean).join('; ') || null);
   const unique = (list: (string | null)[], n: number): string | null => {
     const name = list[n] ?? null;
@@ -57,13 +58,15 @@ class Forms {
     const { symbol } = this.geometry;
     if (WITH_AXIS.has(symbol)) return `axial: ${[form.sites[0]!, form.sites[1]!].sort().join(', ')}`;
     if (symbol === 'SPY-5') return `apical: ${form.sites[0]}`;
+    if (symbol === 'TPR-6') return pillarsText(form.sites);
     if (symbol === 'TS-3') return `stem: ${form.sites[0]}`;
     if (symbol === 'OC-6') return this.polydentateName(form) ?? this.tripleName(form) ?? this.pairName(form);
     return symbol === 'SP-4' || symbol === 'SPY-4' ? this.pairName(form) : null;
   }
 
-  pairsText(form: LabelledArrangement): string | null {
-    if (this.trans.length === 0) return null;
+  fullText(form: LabelledArrangement): string | null {
+    if (this.geometry.symbol === 'TPR-6') return trianglesText(form.sites);
+    if (this.trans.length === 0) return ringText(this.geometry, form.sites);
     const pairs = this.trans.map((pair) =>
       pair
         .map((vertex) => form.sites[vertex]!)

@@ -103,7 +103,7 @@ describe('published counts: stereoisomers, pairs of enantiomers', () => {
     ]);
   });
 
-  /** G. H. Searle and A. M. Sargeson, Inorg. Chem. 4 (1965) 45 on trien: trans, cis-α, cis-β; from memory. */
+  /** A. M. Sargeson and G. H. Searle, Inorg. Chem. 4 (1965) 45 on trien: trans, cis-α, cis-β; from memory. */
   test('linear tetradentate with two like ligands: trans, and pairs of cis-α and cis-β', () => {
     const { isomers } = list('OC-6', '(NNNN) X2');
     expect(isomers.map(({ descriptor, chirality, pointGroup }) => `${descriptor} ${chirality} ${pointGroup}`)).toEqual([
@@ -193,6 +193,21 @@ describe('names', () => {
     ['TBPY-5', 'A4 B', ['axial: A, B', 'axial: A, A']],
     ['SPY-5', 'A4 B', ['apical: B', 'apical: A']],
     ['TS-3', 'A2 B', ['stem: B', 'stem: A']],
+    [
+      'TPR-6',
+      'A4 B2',
+      [
+        'pillars: A–A, A–A, B–B',
+        'pillars: A–A, A–B, A–B; triangles: A A A and A B B',
+        'pillars: A–A, A–B, A–B; triangles: A A B and A A B',
+        'pillars: A–A, A–B, A–B; triangles: A A B and A A B',
+      ],
+    ],
+    [
+      'PBPY-7',
+      'A5 B2',
+      ['axial: B, B', 'axial: A, A; ring: A, A, A, B, B', 'axial: A, A; ring: A, A, B, A, B', 'axial: A, B'],
+    ],
   ])('%s %s', (geometry, text, expected) => {
     expect(names(geometry, text)).toEqual(expected);
   });
