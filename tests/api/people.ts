@@ -3,7 +3,11 @@ import type { Asker } from '#src/server/access/asker.ts';
 /** An account with an access token, made straight in the database. */
 export async function person(
   name: string,
-  { labs = {}, steward = false, scopes = ['read', 'write'] }: { labs?: Record<string, 'lead' | 'contributor'>; steward?: boolean; scopes?: ('read' | 'write')[] } = {},
+  {
+    labs = {},
+    steward = false,
+    scopes = ['read', 'write'],
+  }: { labs?: Record<string, 'lead' | 'contributor'>; steward?: boolean; scopes?: ('read' | 'write')[] } = {},
 ): Promise<{ id: string; email: string; token: string }> {
   const { database } = await import('#src/server/database.ts');
   const { newId, newSecret, nowIso, sha256 } = await import('#src/server/ids.ts');
@@ -15,8 +19,17 @@ export async function person(
   const createdAt = nowIso();
   await write(async (tx) => {
     await tx.insert(accounts).values({ id, email, name, steward, createdAt });
-    for (const [labId, role] of Object.entries(labs)) await tx.insert(memberships).values({ accountId: id, labId, role, createdAt });
-    await tx.insert(accessTokens).values({ id: newId(), accountId: id, name: 'test', hash: sha256(token), scopes, createdAt, expiresAt: '2999-01-01T00:00:00.000Z' });
+    for (const [labId, role] of Object.entries(labs))
+      await tx.insert(memberships).values({ accountId: id, labId, role, createdAt });
+    await tx.insert(accessTokens).values({
+      id: newId(),
+      accountId: id,
+      name: 'test',
+      hash: sha256(token),
+      scopes,
+      createdAt,
+      expiresAt: '2999-01-01T00:00:00.000Z',
+    });
   });
   return { id, email, token };
 }

@@ -1,4 +1,5 @@
 import { and, eq, type SQL } from 'drizzle-orm';
+import { normaliseAccession } from '../../contracts/accession.ts';
 import { bands, complexes, labs, preparations, spectra } from '../../db/schema/index.ts';
 import { database } from '../database.ts';
 import { HttpError, notInSight } from '../http.ts';
@@ -41,6 +42,17 @@ export interface SpectrumPropose extends SpectrumAccess {
 }
 export interface BandJudge extends SpectrumAccess {
   readonly band: typeof bands.$inferSelect;
+}
+
+/**
+ * The accession on a path, in its normal spelling. One that cannot be an accession is like one that nobody has.
+ *
+ * @throws {HttpError} 404
+ */
+export function accessionParam(params: Record<string, string>): string {
+  const accession = normaliseAccession(params.accession ?? '');
+  if (accession === null) throw notInSight();
+  return accession;
 }
 
 const grant = <T extends object>(access: T) => access as T & { readonly [proof]: never };

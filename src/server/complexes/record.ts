@@ -1,0 +1,96 @@
+import { and, asc, desc, eq, isNull, ne } from 'drizzle-orm';
+import { readFormula } from '../../chem/formula/index.ts';
+import type { ComplexRecord } from '../../contracts/complexes.ts';
+import { accounts, complexes, preparations, trail } from '../../db/schema/index.ts';
+import { isMember } from '../access/asker.ts';
+import { type ComplexAccess, canChangeComplex } from '../access/records.ts';
+import { complexDownload, complexSight, preparationSight } from '../access/sight.ts';
+import { database } from '../database.ts';
+import { preparationRecords } from '../preparations/record.ts';
+import { summaries } from './summary.ts';
+
+const SKELETON = (key: string) => key.split(' / ')[0] ?? key;
+
+/** Usual cautions for the composition alone; a formula that can no longer be read has none computed, which is told. */
+function cautions(formula: string, answers: Record<string, string>): ComplexRecord['cautions'] {
+  const reading = readFormula(formula, answers);
+  return reading.cautions;
+}
+
+/** A complex in full, as this asker gets it. */
+export async function complexRecord(access: ComplexAccess): Promise<ComplexRecord> {
+  const { asker, complex } = access;
+  const { db } = await database();
+  const [[summary], prepared, siblings, history, [downloadable]] = await Promise.all([
+    summaries(asker, [complex]),
+    db
+      .select({ preparation: preparations })
+      .from(preparations)
+      .innerJoin(complexes, eq(complexes.id, preparations.complexId))
+      .where(and(eq(preparations.complexId, complex.id), ne(preparations.state, 'withdrawn'), preparationSight(asker)))
+      .orderBy(desc(preparations.id)),
+    siblingsOf(access),
+    historyOf(access),
+    db
+      .select({ id: complexes.id })
+      .from(complexes)
+      .where(and(eq(complexes.id, complex.id), complexDownload(asker))),
+  ]);
+  const member = isMember(asker);
+  return {
+    ...summary!,
+    notes: member ? complex.notes : null,
+    withdrawnReason: complex.withdrawnReason,
+    cautions: cautions(complex.formula, complex.answers),
+    doubts: 0,
+    evidence: [],
+    preparations: await preparationRecords(prepared.map(({ preparation }) => preparation)),
+    history,
+    siblings,
+    may: {
+      change: canChangeComplex(asker, complex),
+      addSpectrum: member && asker.scopes.has('write') && complex.state !== 'withdrawn',
+      download: downloadable !== undefined,
+    },
+  };
+}
+
+/** Other stereoisomers of the same connectivity, as far as the asker sees. */
+async function siblingsOf({ asker, complex }: ComplexAccess): Promise<ComplexRecord['siblings']> {
+  const { db } = await database();
+  const rows = await db
+    .select({
+      accession: complexes.accession,
+      descriptor: complexes.descriptor,
+      chirality: complexes.chirality,
+      identityKey: complexes.identityKey,
+    })
+    .from(complexes)
+    .where(
+      and(
+        eq(complexes.hill, complex.hill),
+        eq(complexes.charge, complex.charge),
+        ne(complexes.id, complex.id),
+        isNull(complexes.mergedInto),
+        complexSight(asker),
+      ),
+    )
+    .orderBy(asc(complexes.accession))
+    .limit(20);
+  return rows
+    .filter((row) => SKELETON(row.identityKey) === SKELETON(complex.identityKey))
+    .map(({ accession, descriptor, chirality }) => ({ accession, descriptor, chirality }));
+}
+
+/** What happened to the record. Guests see no names and no inner remarks: only that it was registered or changed, and when. */
+async function historyOf({ asker, complex }: ComplexAccess): Promise<ComplexRecord['history']> {
+  const { db } = await database();
+  const rows = await db
+    .select({ at: trail.at, action: trail.action, detail: trail.detail, who: accounts.name })
+    .from(trail)
+    .leftJoin(accounts, eq(accounts.id, trail.actorId))
+    .where(and(eq(trail.subjectType, 'complex'), eq(trail.subjectId, complex.id)))
+    .orderBy(desc(trail.seq))
+    .limit(100);
+  return isMember(asker) ? rows : rows.map(({ at, action }) => ({ at, action, who: null, detail: {} }));
+}
