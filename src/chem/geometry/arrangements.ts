@@ -1,7 +1,7 @@
-import { DomainError } from '../errors';
-import type { Geometry } from './catalogue';
-import type { LigandKind } from './ligand-slot';
-import { type Placement, placedLinks, placementsOf } from './placements';
+import { DomainError } from '../errors.ts';
+import type { Geometry } from './catalogue.ts';
+import type { LigandKind } from './ligand-slot.ts';
+import { type Placement, placedLinks, placementsOf } from './placements.ts';
 
 /** All ligands set down: what stands at each vertex, and which vertices are joined. */
 export interface Arrangement {

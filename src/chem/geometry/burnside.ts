@@ -1,6 +1,6 @@
-import { type Geometry, operationsOf } from './catalogue';
-import type { LigandKind } from './ligand-slot';
-import { type Placement, placementKey, placementsOf } from './placements';
+import { type Geometry, operationsOf } from './catalogue.ts';
+import type { LigandKind } from './ligand-slot.ts';
+import { type Placement, placementKey, placementsOf } from './placements.ts';
 
 /**
  * Number of stereoisomers by the lemma of Cauchy, Frobenius and Burnside: the mean, over the proper rotations of the

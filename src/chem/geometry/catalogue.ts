@@ -1,8 +1,8 @@
-import { isLinear, type PermutingOperation, permutingOperations } from '../symmetry/permuting-operations';
-import { pointGroup } from '../symmetry/point-group';
-import { hullEdges } from './hull';
-import { polyhedra } from './polyhedra';
-import { dot, type Vector3 } from './vector';
+import { isLinear, type PermutingOperation, permutingOperations } from '../symmetry/permuting-operations.ts';
+import { pointGroup } from '../symmetry/point-group.ts';
+import { hullEdges } from './hull.ts';
+import { polyhedra } from './polyhedra.ts';
+import { dot, type Vector3 } from './vector.ts';
 
 /** An ideal coordination polyhedron. */
 export interface Geometry {

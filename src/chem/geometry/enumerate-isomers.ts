@@ -1,13 +1,13 @@
-import { DomainError } from '../errors';
-import { isLinear } from '../symmetry/permuting-operations';
-import { pointGroup, stabiliser } from '../symmetry/point-group';
-import { type Arrangement, arrangementKey, arrangements, donorColours, moved } from './arrangements';
-import { burnsideCount } from './burnside';
-import { findGeometry, type Geometry, operationsOf } from './catalogue';
-import { skewLineChirality } from './handedness';
-import { type LigandKind, type LigandSlot, ligandKinds } from './ligand-slot';
-import { descriptors } from './naming';
-import { viewMirror } from './view';
+import { DomainError } from '../errors.ts';
+import { isLinear } from '../symmetry/permuting-operations.ts';
+import { pointGroup, stabiliser } from '../symmetry/point-group.ts';
+import { type Arrangement, arrangementKey, arrangements, donorColours, moved } from './arrangements.ts';
+import { burnsideCount } from './burnside.ts';
+import { findGeometry, type Geometry, operationsOf } from './catalogue.ts';
+import { skewLineChirality } from './handedness.ts';
+import { type LigandKind, type LigandSlot, ligandKinds } from './ligand-slot.ts';
+import { descriptors } from './naming.ts';
+import { viewMirror } from './view.ts';
 
 /** Which ligands on which polyhedron. */
 export interface IsomerRequest {

@@ -1,5 +1,5 @@
-import type { Geometry } from './catalogue';
-import { add, cross, dot, scale, subtract } from './vector';
+import type { Geometry } from './catalogue.ts';
+import { add, cross, dot, scale, subtract } from './vector.ts';
 
 /** Below this a pair of chelate edges is parallel, crossing or at right angles and has no handedness. */
 const TOLERANCE = 1e-6;

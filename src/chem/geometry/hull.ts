@@ -1,5 +1,5 @@
-import type { Vector3 } from './vector';
-import { add, cross, dot, length, normalise, scale, subtract } from './vector';
+import type { Vector3 } from './vector.ts';
+import { add, cross, dot, length, normalise, scale, subtract } from './vector.ts';
 
 const TOLERANCE = 1e-6;
 

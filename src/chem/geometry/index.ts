@@ -1,4 +1,4 @@
-export { findGeometry, type Geometry, geometries } from './catalogue';
+export { findGeometry, type Geometry, geometries } from './catalogue.ts';
 export {
   countIsomers,
   enumerateIsomers,
@@ -6,8 +6,8 @@ export {
   type IsomerList,
   type IsomerRequest,
   isomerIndex,
-} from './enumerate-isomers';
-export type { LigandSlot } from './ligand-slot';
-export { drawPolyhedron, type PolyhedronDrawing } from './projection';
-export { isomerRequest, type ReadLigand } from './request';
-export { defaultView, turned, type View } from './view';
+} from './enumerate-isomers.ts';
+export type { LigandSlot } from './ligand-slot.ts';
+export { drawPolyhedron, type PolyhedronDrawing } from './projection.ts';
+export { isomerRequest, type ReadLigand } from './request.ts';
+export { defaultView, turned, type View } from './view.ts';

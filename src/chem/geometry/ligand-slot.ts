@@ -1,5 +1,5 @@
-import { DomainError } from '../errors';
-import type { Geometry } from './catalogue';
+import { DomainError } from '../errors.ts';
+import type { Geometry } from './catalogue.ts';
 
 /** A kind of ligand and how many of it the metal carries. */
 export interface LigandSlot {

@@ -1,5 +1,5 @@
-import { type Geometry, transPairs } from './catalogue';
-import { pillarsText, ringText, trianglesText } from './site-texts';
+import { type Geometry, transPairs } from './catalogue.ts';
+import { pillarsText, ringText, trianglesText } from './site-texts.ts';
 
 /** What a name can be read from: donor labels, ligands and chelate links at the vertices. */
 export interface LabelledArrangement {

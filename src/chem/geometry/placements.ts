@@ -1,7 +1,7 @@
-import { DomainError } from '../errors';
-import type { Geometry } from './catalogue';
-import type { LigandKind } from './ligand-slot';
-import { cross, dot, length, normalise, subtract, type Vector3 } from './vector';
+import { DomainError } from '../errors.ts';
+import type { Geometry } from './catalogue.ts';
+import type { LigandKind } from './ligand-slot.ts';
+import { cross, dot, length, normalise, subtract, type Vector3 } from './vector.ts';
 
 /** One ligand set down on a polyhedron. */
 export interface Placement {

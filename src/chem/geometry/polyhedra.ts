@@ -1,4 +1,4 @@
-import type { Vector3 } from './vector';
+import type { Vector3 } from './vector.ts';
 
 /** One line of the table of polyhedral symbols, with where the donors stand. */
 export interface Polyhedron {

@@ -1,7 +1,7 @@
-import type { Geometry } from './catalogue';
-import { hullFaces } from './hull';
-import { add, length, normalise, scale, type Vector3 } from './vector';
-import { clearance, defaultView, onScreen, type View } from './view';
+import type { Geometry } from './catalogue.ts';
+import { hullFaces } from './hull.ts';
+import { add, length, normalise, scale, type Vector3 } from './vector.ts';
+import { clearance, defaultView, onScreen, type View } from './view.ts';
 
 /** Numbers for a drawing in a square box, in its units, x to the right and y down as in SVG. */
 export interface PolyhedronDrawing {

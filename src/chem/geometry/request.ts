@@ -1,6 +1,6 @@
-import { DomainError } from '../errors';
-import type { IsomerRequest } from './enumerate-isomers';
-import type { LigandSlot } from './ligand-slot';
+import { DomainError } from '../errors.ts';
+import type { IsomerRequest } from './enumerate-isomers.ts';
+import type { LigandSlot } from './ligand-slot.ts';
 
 /** What a reading of a formula knows of a ligand. */
 export interface ReadLigand {

@@ -1,4 +1,4 @@
-import type { Geometry } from './catalogue';
+import type { Geometry } from './catalogue.ts';
 
 /** Vertices of the ring of a bipyramid follow the two axial ones. */
 const FIRST_OF_RING = 2;

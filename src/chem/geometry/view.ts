@@ -1,4 +1,4 @@
-import { type Geometry, operationsOf } from './catalogue';
+import { type Geometry, operationsOf } from './catalogue.ts';
 import {
   add,
   apply,
@@ -11,7 +11,7 @@ import {
   trace,
   transpose,
   type Vector3,
-} from './vector';
+} from './vector.ts';
 
 /** Where the polyhedron is looked at from. */
 export interface View {

@@ -1,4 +1,4 @@
-import type { Matrix3, Vector3 } from '../geometry/vector';
+import type { Matrix3, Vector3 } from '../geometry/vector.ts';
 import {
   apply,
   cross,
@@ -10,7 +10,7 @@ import {
   normalise,
   subtract,
   transpose,
-} from '../geometry/vector';
+} from '../geometry/vector.ts';
 
 /** A symmetry operation of a set of points about the origin. */
 export interface PermutingOperation {

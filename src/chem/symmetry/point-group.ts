@@ -1,6 +1,6 @@
-import type { Matrix3, Vector3 } from '../geometry/vector';
-import { add, apply, determinant, length, multiply, normalise, trace } from '../geometry/vector';
-import type { PermutingOperation } from './permuting-operations';
+import type { Matrix3, Vector3 } from '../geometry/vector.ts';
+import { add, apply, determinant, length, multiply, normalise, trace } from '../geometry/vector.ts';
+import type { PermutingOperation } from './permuting-operations.ts';
 
 /** Points with a kind each and links between them, such as donor atoms and chelate edges. */
 export interface ColouredPoints {
