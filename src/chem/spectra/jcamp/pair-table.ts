@@ -125,7 +125,7 @@ export function readAssignments(lines: readonly ValueLine[], hasHeight: boolean)
     while (offset > rowEnd && row + 1 < lines.length) rowEnd += 1 + lines[++row]!.text.length;
     return lines[row]?.line ?? 0;
   };
-  const GROUP = /\s*[,;]?\s*\(([^<()]*)(?:<([^>]*)>)?[^()]*\)/y;
+  const GROUP = /\s*[,;]?\s*\(([^<()]*)(?:<((?:[^>]|>(?!\s*\)))*)>)?\s*\)/y;
   const end = text.trimEnd().length;
   let at = 0;
   while (at < end) {
