@@ -55,10 +55,10 @@ export function buildFits(root, hash = contentHash(root)) {
  * broken-off build is made again.
  *
  * @param {(line: string) => void} say
- * @param {{ force?: boolean }} [options]
+ * @param {{ force?: boolean, seconds?: number }} [options] - `seconds`: how long each step may take
  * @throws {UsageError} when the build fails
  */
-export function ensureBuild(say, { force = false } = {}, root = ROOT) {
+export function ensureBuild(say, { force = false, seconds = 900 } = {}, root = ROOT) {
   const hash = contentHash(root);
   if (!force && buildFits(root, hash)) return;
   say('Building; this takes about a minute.');
@@ -73,6 +73,7 @@ export function ensureBuild(say, { force = false } = {}, root = ROOT) {
       env: { ...env, ASTRO_TELEMETRY_DISABLED: '1' },
       encoding: 'utf8',
       maxBuffer: 1e9,
+      timeout: seconds * 1000,
     });
     if (status !== 0) throw new UsageError(`${stdout}${stderr}\nThe build failed (${args.join(' ')}); see above.`);
   }

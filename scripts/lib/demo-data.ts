@@ -1,4 +1,3 @@
-import { existsSync } from 'node:fs';
 import { rm } from 'node:fs/promises';
 import { join } from 'node:path';
 import { pathToFileURL } from 'node:url';
@@ -13,7 +12,8 @@ import { ROOT, UsageError } from './options.mjs';
 /** Where the registry notes how far the demo data got: `loading`, then `loaded`. */
 const MARK = 'demo';
 
-type LoadDemo = (database: Database, store: ObjectStore) => Promise<void>;
+/** Fills an empty registry. Lies in scripts/demo.ts. */
+export type LoadDemo = (database: Database, store: ObjectStore) => Promise<void>;
 
 /**
  * Bring the database to this release and, where asked for, put the demo data into a registry that is empty. A load
@@ -22,7 +22,11 @@ type LoadDemo = (database: Database, store: ObjectStore) => Promise<void>;
  * @returns whether the registry holds the demo data
  * @throws {UsageError} when a broken-off load lies in a database that is not a file of ours
  */
-export async function prepareDatabase(settings: Settings, demo: boolean): Promise<boolean> {
+export async function prepareDatabase(
+  settings: Settings,
+  demo: boolean,
+  loadDemo: LoadDemo = loadDemoScript,
+): Promise<boolean> {
   let database = await openDatabase(settings.databaseUrl, settings.databaseAuthToken);
   try {
     await migrateDatabase(database);
@@ -32,7 +36,7 @@ export async function prepareDatabase(settings: Settings, demo: boolean): Promis
       database = await openDatabase(settings.databaseUrl, settings.databaseAuthToken);
       await migrateDatabase(database);
     }
-    if (demo && (await isEmpty(database))) await load(database, settings);
+    if (demo && (await isEmpty(database))) await load(database, settings, loadDemo);
     return (await readMark(database)) === 'loaded';
   } finally {
     database.close();
@@ -42,16 +46,22 @@ export async function prepareDatabase(settings: Settings, demo: boolean): Promis
 /** Whether a load of the demo data was broken off here. */
 export const isHalfLoaded = async (database: Pick<Database, 'db'>) => (await readMark(database)) === 'loading';
 
-async function load(database: Database, settings: Settings): Promise<void> {
-  const script = join(ROOT, 'scripts', 'demo.ts');
-  if (!existsSync(script)) return;
-  const { loadDemo } = (await import(pathToFileURL(script).href)) as { loadDemo: LoadDemo };
+async function load(database: Database, settings: Settings, loadDemo: LoadDemo): Promise<void> {
   await writeMark(database, 'loading');
   const store = openStore(settings);
-  await loadDemo(database, store);
-  store.close();
+  try {
+    await loadDemo(database, store);
+  } finally {
+    store.close();
+  }
   await writeMark(database, 'loaded');
 }
+
+const loadDemoScript: LoadDemo = async (database, store) => {
+  const script = pathToFileURL(join(ROOT, 'scripts', 'demo.ts')).href;
+  const { loadDemo } = (await import(script)) as { loadDemo: LoadDemo };
+  await loadDemo(database, store);
+};
 
 async function isEmpty({ db }: Database): Promise<boolean> {
   const count = sql<number>`count(*)`;

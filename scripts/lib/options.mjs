@@ -37,10 +37,14 @@ export function parseOptions(command, options, args = process.argv.slice(2)) {
   }
 }
 
-/** Take settings from a file `.env` beside package.json; what the environment says already stands. */
+/**
+ * Take settings from a file `.env` beside package.json, or another one named by ZAFFRE_ENV_FILE (empty for none). What
+ * the environment says already stands.
+ */
 export function loadEnvironmentFile() {
-  const file = join(ROOT, '.env');
-  if (existsSync(file)) process.loadEnvFile(file);
+  const name = process.env.ZAFFRE_ENV_FILE ?? '.env';
+  const file = join(ROOT, name);
+  if (name && existsSync(file)) process.loadEnvFile(file);
 }
 
 /**
