@@ -21,7 +21,7 @@ export const BandClass = z.enum([
 export const Centre = z
   .object({
     element: z.string(),
-    group: z.number().int(),
+    group: z.number().int().nullable(),
     oxidationState: z.object({ value: z.number().nullable(), nominal: z.boolean(), alternatives: z.array(z.number()) }),
     dCount: z.number().nullable(),
     geometry: z.string().nullable(),

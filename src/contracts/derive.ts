@@ -5,7 +5,7 @@ import { route } from './route.ts';
 const Counted = z.object({ formula: z.string(), count: z.number() });
 const CentreReading = z.object({
   element: z.string(),
-  group: z.number().int(),
+  group: z.number().int().nullable(),
   oxidationState: z.number().nullable(),
   dCount: z.number().nullable(),
   nominal: z.boolean(),

@@ -95,7 +95,7 @@ CREATE TABLE `centre` (
 	`complex_id` text NOT NULL,
 	`ordinal` integer NOT NULL,
 	`element` text NOT NULL,
-	`group` integer NOT NULL,
+	`group` integer,
 	`oxidation_state` real,
 	`nominal` integer DEFAULT false NOT NULL,
 	`alternatives` text DEFAULT '[]' NOT NULL,

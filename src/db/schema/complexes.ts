@@ -83,8 +83,8 @@ export const centres = sqliteTable(
       .references(() => complexes.id),
     ordinal: integer().notNull(),
     element: text().notNull(),
-    /** Group of the periodic table, 3–12. */
-    group: integer().notNull(),
+    /** Group of the periodic table, 3–12; null for an f-block partner. */
+    group: integer(),
     /** May be fractional (shared) or null (not to be shared out by formula alone). */
     oxidationState: real(),
     nominal: integer({ mode: 'boolean' }).notNull().default(false),
