@@ -4,8 +4,8 @@ const YEAR = 365 * 24 * 3600;
 
 function switchTheme() {
   const root = document.documentElement;
-  const theme = root.dataset['theme'] === 'dark' ? 'light' : 'dark';
-  root.dataset['theme'] = theme;
+  const theme = root.dataset.theme === 'dark' ? 'light' : 'dark';
+  root.dataset.theme = theme;
   const secure = location.protocol === 'https:' ? '; Secure' : '';
   // biome-ignore lint/suspicious/noDocumentCookie: the server reads it on the next request; Cookie Store is not everywhere
   document.cookie = `zaffre-theme=${theme}; Path=/; Max-Age=${YEAR}; SameSite=Lax${secure}`;
@@ -14,7 +14,7 @@ function switchTheme() {
 
 /** The switch says what it would do. */
 function nameSwitches() {
-  const dark = document.documentElement.dataset['theme'] === 'dark';
+  const dark = document.documentElement.dataset.theme === 'dark';
   for (const element of document.querySelectorAll('[data-theme-switch]')) {
     element.textContent = dark ? 'Light theme' : 'Dark theme';
   }

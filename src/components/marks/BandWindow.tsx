@@ -35,9 +35,7 @@ export function BandWindow({ counts, range = [200, 1100], window: chosen, width 
         role="img"
         aria-labelledby={titleId}
       >
-        <title id={titleId}>
-          {counts.reduce((a, b) => a + b, 0)} bands from {from} to {to} nm
-        </title>
+        <title id={titleId}>{`${counts.reduce((a, b) => a + b, 0)} bands from ${from} to ${to} nm`}</title>
         {chosen && (
           <rect
             x={place(chosen[0]) * width}

@@ -1,5 +1,5 @@
 import { formulaLabel, parseFormula } from './formula';
-import { oxidationStateText, parseQuantity, parseUnit, type QuantityInput, unitLabel } from './quantity';
+import { ABSENT, oxidationStateText, parseQuantity, parseUnit, type QuantityInput, unitLabel } from './quantity';
 import { Runs } from './Runs';
 import { runsToText } from './runs';
 import { parseConfiguration, parseDCount, parsePointGroup, parseTerm, parseTransition, termLabel } from './term';
@@ -49,12 +49,22 @@ export function OxidationState({ element, state, className }: Styled & { element
   return <span className={className}>{oxidationStateText(element, state)}</span>;
 }
 
-/** A number with its uncertainty and unit. */
-export function Quantity({ className = '', ...quantity }: Styled & QuantityInput) {
-  const runs = parseQuantity(quantity);
-  const { unit, ...bare } = quantity;
-  const label = unit && `${runsToText(parseQuantity(bare))} ${unitLabel(unit)}`;
-  return <Runs runs={runs} label={label} className={`num ${className}`} />;
+/** A number with its uncertainty and unit: the figures in the mono font, so that they stand in columns. */
+export function Quantity({ className = '', unit, ...number }: Styled & QuantityInput) {
+  const figures = parseQuantity({ ...number, bracketed: unit !== undefined });
+  const isAbsent = runsToText(figures) === ABSENT;
+  if (!unit || isAbsent) return <Runs runs={figures} className={`num ${className}`} />;
+  return (
+    <span
+      className={`whitespace-nowrap ${className}`}
+      role="math"
+      aria-label={`${runsToText(figures)} ${unitLabel(unit)}`}
+    >
+      <Runs runs={figures} className="num" />
+      {'\u00a0'}
+      <Runs runs={parseUnit(unit)} />
+    </span>
+  );
 }
 
 /** A unit on its own: `dm3 mol-1 cm-1`. */

@@ -7,6 +7,8 @@ export interface QuantityInput {
   uncertainty?: number | null | undefined;
   /** Plain text, such as `dm3 mol-1 cm-1`. */
   unit?: string | undefined;
+  /** Brackets a value with its uncertainty although no unit is given here, because one follows. */
+  bracketed?: boolean | undefined;
   /** Significant figures where no uncertainty tells; 4 by default. Integers keep all of theirs. */
   figures?: number | undefined;
 }
@@ -58,7 +60,7 @@ export function formatNumber(value: number | null | undefined, figures = 4): str
  * Sets a quantity: `(21 550 ± 60) cm−1`, `6.6 × 10−4`, `(6.60 ± 0.05) × 10−4`. Powers of ten are used below 10⁻³ and
  * from 10⁷ on. The value is rounded to the last place of its uncertainty.
  */
-export function parseQuantity({ value, uncertainty, unit, figures = 4 }: QuantityInput): Run[] {
+export function parseQuantity({ value, uncertainty, unit, bracketed, figures = 4 }: QuantityInput): Run[] {
   if (value === null || value === undefined || !Number.isFinite(value)) return [{ text: ABSENT, style: 'normal' }];
   const out = new RunBuilder();
   const u = uncertainty && Number.isFinite(uncertainty) && uncertainty > 0 ? uncertainty : null;
@@ -70,7 +72,7 @@ export function parseQuantity({ value, uncertainty, unit, figures = 4 }: Quantit
   else {
     const decimals = decimalsFor(scale(u));
     const pair = `${groupDigits(fixed(scale(value), decimals))} ± ${groupDigits(fixed(scale(u), decimals))}`;
-    out.add(power || unit ? `(${pair})` : pair);
+    out.add(power || unit || bracketed ? `(${pair})` : pair);
   }
   if (power) out.add(' × 10').add(groupDigits(String(power)), 'sup');
   if (unit) out.add(unit === '%' ? DIGIT_SPACE : '\u00a0').addAll(parseUnit(unit));

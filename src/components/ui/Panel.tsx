@@ -2,7 +2,9 @@ import { type ReactNode, useId } from 'react';
 
 interface PanelProps {
   title?: ReactNode;
-  /** Small text or controls at the right of the title. */
+  /** Controls next to the title. */
+  controls?: ReactNode;
+  /** Small text or buttons at the right. */
   aside?: ReactNode;
   /** The double cobalt rule, for what says who something is. */
   specimen?: boolean;
@@ -13,7 +15,15 @@ interface PanelProps {
 }
 
 /** A part of a screen on glaze, with a heading and something beside it. */
-export function Panel({ title, aside, specimen = false, flush = false, className = '', children }: PanelProps) {
+export function Panel({
+  title,
+  controls,
+  aside,
+  specimen = false,
+  flush = false,
+  className = '',
+  children,
+}: PanelProps) {
   const id = useId();
   const ground = specimen ? 'specimen' : 'panel border border-hairline bg-glaze';
   return (
@@ -21,13 +31,14 @@ export function Panel({ title, aside, specimen = false, flush = false, className
       className={`${ground} ${flush ? 'pt-4' : 'px-[18px] py-4'} ${className}`}
       aria-labelledby={title ? id : undefined}
     >
-      {(title || aside) && (
-        <div className={`mb-2.5 flex flex-wrap items-baseline gap-x-3 gap-y-1.5 ${flush ? 'px-[18px]' : ''}`}>
+      {(title || controls || aside) && (
+        <div className={`mb-2.5 flex flex-wrap items-center gap-x-3 gap-y-1.5 ${flush ? 'px-[18px]' : ''}`}>
           {title && (
             <h2 id={id} className="text-base font-semibold">
               {title}
             </h2>
           )}
+          {controls}
           {aside && <div className="ml-auto text-xs text-ink-soft">{aside}</div>}
         </div>
       )}

@@ -14,6 +14,8 @@ export class ProblemError extends Error {
     readonly title: string,
     readonly detail: string | undefined,
     readonly errors: readonly ProblemDetail[] = [],
+    /** All that the answer held, its own members among it: the `accession` of a 409. */
+    readonly members: Readonly<Record<string, unknown>> = {},
   ) {
     super(detail ?? title);
   }
@@ -51,7 +53,7 @@ export async function readProblem(response: Response): Promise<ProblemError> {
   }
   const body = (await response.json().catch(() => ({}))) as Partial<ProblemError>;
   const errors = Array.isArray(body.errors) ? body.errors : [];
-  return new ProblemError(response.status, body.title ?? fallback, body.detail, errors);
+  return new ProblemError(response.status, body.title ?? fallback, body.detail, errors, { ...body });
 }
 
 /** A request that never arrived. */

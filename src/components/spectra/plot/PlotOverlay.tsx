@@ -43,14 +43,20 @@ export function PlotOverlay({ area, bands, xUnit, yUnit }: OverlayProps) {
         height={area.height}
         aria-hidden="true"
       >
+        {marks.map(({ band, x, y }, i) => (
+          <path
+            key={`${band.wavenumber} ${band.class}`}
+            d={`M${x} ${y - TICK - 2}V${Math.min(y - TICK - 2, labels[i]!.y + 4)}`}
+            stroke={bandStyle(band.class).colour}
+            strokeWidth="0.8"
+            opacity="0.5"
+          />
+        ))}
         {marks.map(({ band, runs, x, y }, i) => {
           const { colour, letter, stroke } = bandStyle(band.class);
           const label = labels[i]!;
           return (
             <g key={`${band.wavenumber} ${band.class}`} fill={colour} stroke="none">
-              {label.y < y - TICK - 5.5 && (
-                <path d={`M${x} ${y - TICK - 2}V${label.y + 4}`} stroke={colour} strokeWidth="0.8" opacity="0.5" />
-              )}
               <BandTick x={x} y={y} colour={colour} stroke={stroke} />
               <text x={label.x} y={label.y} textAnchor="middle" fontSize="12.5" className="plot-label">
                 <tspan fontWeight="600">{letter}</tspan>

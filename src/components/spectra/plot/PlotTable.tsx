@@ -28,7 +28,7 @@ export function PlotTable({ series, joined, view, xUnit, yUnit }: PlotTableProps
       // biome-ignore lint/a11y/noNoninteractiveTabindex: a box that scrolls must be reached by keyboard (WCAG 2.1.1)
       tabIndex={0}
     >
-      <table className="table table-compact num">
+      <table className="table table-compact">
         <thead className="sticky top-0 bg-glaze">
           <tr>
             <th scope="col">
@@ -41,7 +41,7 @@ export function PlotTable({ series, joined, view, xUnit, yUnit }: PlotTableProps
             ))}
           </tr>
         </thead>
-        <tbody>
+        <tbody className="num">
           {rows.map((i) => (
             <tr key={i}>
               <td>{formatNumber(joined.x[i], X_FIGURES[xUnit])}</td>

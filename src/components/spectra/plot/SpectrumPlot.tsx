@@ -53,10 +53,7 @@ export function SpectrumPlot({
     return a < b ? [a, b] : [b, a];
   };
   const whole: ViewWindow = [joined.x[0] ?? 0, joined.x.at(-1) ?? 1];
-  const view = useMemo(
-    () => (viewPerCm ? convert(viewPerCm, fromWavenumber) : null),
-    [viewPerCm, xUnit],
-  );
+  const view = useMemo(() => (viewPerCm ? convert(viewPerCm, fromWavenumber) : null), [viewPerCm, xUnit]);
   const setView = (next: ViewWindow | null) => setViewPerCm(next && convert(next, toWavenumber));
   const index =
     cursorPerCm === null || joined.x.length === 0 ? null : nearestIndex(joined.x, fromWavenumber(cursorPerCm, xUnit));
@@ -167,18 +164,16 @@ function Place({ wavenumber }: { wavenumber: number }) {
   );
 }
 
-/** An axis by name and unit, divided by a solidus (ISO 80000-1: quantity calculus). */
+/** An axis by name and unit, divided by a solidus (quantity calculus, ISO 80000-1); a logarithm is of that quotient. */
 function AxisTitle({ name, unit }: { name: string; unit: string }) {
-  const isQuantity = name === 'A';
+  if (!unit) return <i>{name}</i>;
+  const quantity = name.replace(/^log /, '');
+  const isLog = quantity !== name;
   return (
     <>
-      {isQuantity ? <i>{name}</i> : name}
-      {unit && (
-        <>
-          {' / '}
-          <Unit unit={unit} />
-        </>
-      )}
+      {isLog && 'log('}
+      {quantity} / <Unit unit={unit} />
+      {isLog && ')'}
     </>
   );
 }

@@ -1,5 +1,6 @@
 import type uPlot from 'uplot';
 import { groupDigits } from '../../notation/quantity';
+import { DIGIT_SPACE } from '../../notation/runs';
 import { type PlotTheme, SERIES_COLOURS, SERIES_DASHES } from './theme';
 import type { PlotSeries } from './types';
 
@@ -24,16 +25,24 @@ export function seriesLooks({ colour, dash }: PlotSeries, index: number): { colo
   };
 }
 
+/** Below this, log ε is noise about the base line and not a band: the lower end of the band strip, too. */
+const LOWEST_LOG = -2;
+
 /** Ends of the vertical axis: nought in sight where it means something, room at the top. */
 export function verticalRange(
   [min, max]: readonly [number | null, number | null],
   { hasBands, fromZero }: { hasBands: boolean; fromZero: boolean },
 ): [number, number] {
   if (min === null || max === null) return [0, 1];
-  const low = fromZero ? Math.min(0, min) : min;
+  const low = fromZero ? Math.min(0, min) : Math.max(min, Math.min(LOWEST_LOG, max - 1));
   const span = max - low || Math.abs(max) || 1;
   const below = fromZero && min >= 0 ? 0 : 0.04;
   return [low - span * below, max + span * (hasBands ? 0.24 : 0.06)];
+}
+
+/** A tick as text. On the canvas the narrow space all but vanishes, so the groups stand a full no-break space apart. */
+function tickText(value: number): string {
+  return groupDigits(String(Number(value.toPrecision(10)))).replaceAll(DIGIT_SPACE, '\u00a0');
 }
 
 /** Options of the plotting library: one linear axis each way, no legend and no title of its own. */
@@ -43,13 +52,13 @@ export function uplotOptions({ width, height, series, theme, hooks, ...range }: 
     font: theme.font,
     grid: { stroke: theme.grid, width: 1 },
     ticks: { show: false },
-    values: (_: uPlot, ticks: number[]) => ticks.map((v) => groupDigits(String(Number(v.toPrecision(10))))),
+    values: (_: uPlot, ticks: number[]) => ticks.map(tickText),
   };
   return {
     width,
     height,
     legend: { show: false },
-    padding: [10, 14, 0, 0],
+    padding: [10, 24, 0, 0],
     cursor: {
       y: false,
       drag: { x: true, y: false, setScale: false, dist: 4 },

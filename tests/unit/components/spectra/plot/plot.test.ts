@@ -111,6 +111,7 @@ test('the vertical axis shows nought, except for log ε, and leaves room for lab
   expect(verticalRange([5, 50], { hasBands: false, fromZero: true })[0]).toBe(0);
   expect(verticalRange([-1, 50], { hasBands: false, fromZero: true })[0]).toBeLessThan(-1);
   expect(verticalRange([1, 4], { hasBands: false, fromZero: false })[0]).toBeGreaterThan(0);
+  expect(verticalRange([-7, 4], { hasBands: false, fromZero: false })[0]).toBeGreaterThan(-2.5);
   expect(verticalRange([0, 50], { hasBands: true, fromZero: true })[1]).toBeGreaterThan(60);
   expect(verticalRange([null, null], { hasBands: false, fromZero: true })).toEqual([0, 1]);
 });
