@@ -1,6 +1,6 @@
 import { complexRoutes } from './complexes.ts';
 import { deriveRoutes } from './derive.ts';
-import { sharingRoutes } from './sharing.ts';
+import { sharingRoutes } from './sharing-routes.ts';
 import { spectrumRoutes } from './spectra.ts';
 
 /**
