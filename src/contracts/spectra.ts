@@ -73,6 +73,14 @@ export const ReadingOptions = z
   .meta({ id: 'ReadingOptions' });
 export type ReadingOptions = z.infer<typeof ReadingOptions>;
 
+/** The same for a preview, with the conditions that are to be checked against the curve. */
+export const PreviewOptions = ReadingOptions.extend({
+  solvent: conditions.solvent,
+  concentration: conditions.concentration,
+  pathLength: conditions.pathLength,
+}).meta({ id: 'PreviewOptions' });
+export type PreviewOptions = z.infer<typeof PreviewOptions>;
+
 export const SpectrumMetadata = z
   .strictObject({
     complex: z.string().optional().describe('Accession; or give a preparation'),
@@ -81,6 +89,7 @@ export const SpectrumMetadata = z
     ...conditions,
     ...ReadingOptions.shape,
     synthetic: z.boolean().optional().describe('Computed from band parameters, not measured'),
+    state: z.enum(['draft', 'registered']).optional().describe('Registered unless told'),
   })
   .refine((m) => m.complex !== undefined || m.preparation !== undefined, {
     message: 'Tell the complex or the preparation',
@@ -144,9 +153,10 @@ export const BandRecord = z
     assignment: Assignment.extend({ class: BandClass }),
     verdict: z.string().nullable(),
     state: z.enum(['proposed', 'attested', 'disputed']),
-    proposedBy: z.string().nullable(),
-    judgedBy: z.string().nullable(),
+    proposedBy: z.string().nullable().describe('Name; null for guests'),
+    judgedBy: z.string().nullable().describe('Name; null for guests'),
     judgement: z.string().nullable(),
+    may: z.object({ judge: z.boolean() }).describe('Whether this asker may attest or dispute it'),
   })
   .meta({ id: 'Band' });
 export type BandRecord = z.infer<typeof BandRecord>;
@@ -215,6 +225,7 @@ export const SpectrumQuery = Paging.extend({
   technique: listOf(Technique).optional(),
   instrument: listOf(z.string()).optional(),
   flag: listOf(z.string()).optional(),
+  state: listOf(RecordState).optional(),
   q: z.string().trim().max(200).optional(),
   sort: z.enum(['created', '-created', 'title', '-title', 'complex', '-complex']).default('-created'),
   facets: z.enum(['0', '1']).default('0'),
@@ -229,7 +240,7 @@ export const PointsQuery = z.object({
     .describe('Epsilon where the conditions give it, else the quantity of the file'),
   from: z.coerce.number().optional(),
   to: z.coerce.number().optional(),
-  max: z.coerce.number().int().min(2).max(200_000).default(2000),
+  max: z.coerce.number().int().min(4).max(200_000).default(2000),
 });
 export type PointsQuery = z.infer<typeof PointsQuery>;
 
@@ -242,6 +253,7 @@ export const Points = z
     decimated: z.boolean(),
   })
   .meta({ id: 'Points' });
+export type PointsRecord = z.infer<typeof Points>;
 export type Points = z.infer<typeof Points>;
 
 /** A file as it was read, before anything is stored. */
@@ -252,6 +264,7 @@ export const ReadBlock = z
     xUnit: z.string().nullable(),
     yUnit: z.string().nullable(),
     suggestedXUnit: z.string().optional(),
+    suggestedYUnit: z.string().optional(),
     points: z.number().int(),
     x: z.array(z.number()),
     y: z.array(z.number().nullable()),
@@ -259,11 +272,13 @@ export const ReadBlock = z
     warnings: z.array(Note.extend({ line: z.number().int().optional() })),
     format: z.string(),
     dialect: z.record(z.string(), z.unknown()).optional(),
+    flags: z.array(Note).describe('What the conditions sent along say against the curve').optional(),
   })
   .meta({ id: 'ReadBlock' });
 export type ReadBlock = z.infer<typeof ReadBlock>;
 
 export const Judgement = z.strictObject({ reason: z.string().trim().max(2000).optional() });
+export type Judgement = z.infer<typeof Judgement>;
 const limit = 50_000_000; // bytes; settings may lower it
 const tag = 'Spectra';
 
@@ -275,7 +290,7 @@ export const spectrumRoutes = {
     tag: 'Derivations',
     who: 'signed-in',
     scope: 'read',
-    multipart: { parts: { file: z.string(), options: ReadingOptions }, limit },
+    multipart: { parts: { file: z.string(), options: PreviewOptions }, limit },
     status: 200,
     answers: z.object({ blocks: z.array(ReadBlock) }),
   }),

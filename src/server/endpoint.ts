@@ -120,7 +120,8 @@ async function readBody<B extends z.ZodType>(schema: B, request: Request, limit:
   return schema.parse(await readJsonBody(request, limit));
 }
 
-function respond(route: Route, request: Request, result: unknown): Response {
+/** The answer of a route from what its act gave; for acts that must build it themselves, such as a replayed upload. */
+export function respond(route: Route, request: Request, result: unknown): Response {
   if (result instanceof Response) return result;
   const { body, options } = result instanceof Answer ? result : { body: result, options: {} as Answer['options'] };
   const status = options.status ?? route.status;

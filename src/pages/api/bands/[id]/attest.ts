@@ -1,0 +1,9 @@
+import { spectrumRoutes as routes } from '#src/contracts/spectra.ts';
+import { mayJudgeBand } from '#src/server/access/records.ts';
+import { endpoint } from '#src/server/endpoint.ts';
+import { judgeBand } from '#src/server/spectra/judge.ts';
+
+export const POST = endpoint(routes.attestBand, {
+  sight: ({ asker, params }) => mayJudgeBand(asker, params.id!),
+  act: ({ access, body }) => judgeBand(access, 'attested', body),
+});
