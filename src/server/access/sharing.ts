@@ -8,17 +8,19 @@ import { type Access, leads, worksIn } from './records.ts';
 // Proofs of access to what is shared and with whom. As in records.ts: services ask for one, and only this folder
 // makes them.
 
-export interface LabAccess extends Access<'see' | 'change' | 'invite'> {
+interface OfLab {
   readonly lab: typeof labs.$inferSelect;
 }
-export interface LabChange extends LabAccess, Access<'change'> {}
-export interface LabInvite extends LabAccess, Access<'invite'> {}
-export interface FolioAccess extends Access<'see' | 'change' | 'invite'> {
+export interface LabAccess extends Access<'see' | 'change' | 'invite'>, OfLab {}
+export interface LabChange extends Access<'change'>, OfLab {}
+export interface LabInvite extends Access<'invite'>, OfLab {}
+interface OfFolio {
   readonly folio: typeof folios.$inferSelect;
 }
-export interface FolioChange extends FolioAccess, Access<'change'> {}
+export interface FolioAccess extends Access<'see' | 'change' | 'invite'>, OfFolio {}
+export interface FolioChange extends Access<'change'>, OfFolio {}
 /** Leads of the folio's lab and stewards: who may read it, and who is asked to. */
-export interface FolioInvite extends FolioAccess, Access<'invite'> {}
+export interface FolioInvite extends Access<'invite'>, OfFolio {}
 export interface GrantRevoke extends FolioInvite {
   readonly grant: typeof grants.$inferSelect;
 }
