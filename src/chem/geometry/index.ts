@@ -7,6 +7,7 @@ export {
   type IsomerRequest,
   isomerIndex,
 } from './enumerate-isomers.ts';
+export { type IsomerSubject, isomersOf } from './isomers-of.ts';
 export type { LigandSlot } from './ligand-slot.ts';
 export { drawPolyhedron, type PolyhedronDrawing } from './projection.ts';
 export { isomerRequest, type ReadLigand } from './request.ts';

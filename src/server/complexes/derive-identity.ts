@@ -1,13 +1,6 @@
 import { spinChoices } from '../../chem/electrons.ts';
-import { DomainError } from '../../chem/errors.ts';
 import { type EntityReading, type Reading, readFormula } from '../../chem/formula/index.ts';
-import {
-  enumerateIsomers,
-  type Isomer,
-  type IsomerList,
-  isomerIndex,
-  isomerRequest,
-} from '../../chem/geometry/index.ts';
+import { type Isomer, isomerIndex, isomersOf } from '../../chem/geometry/index.ts';
 import { relativeConfigurationKey } from '../../chem/geometry/isomer-key.ts';
 import type { ComplexInput } from '../../contracts/complexes.ts';
 import { HttpError } from '../http.ts';
@@ -62,24 +55,6 @@ function perCentre<T>(given: T | T[] | null | undefined, count: number, pointer:
   if (!Array.isArray(given)) return Array<T>(count).fill(given);
   if (given.length !== count) throw refuse(pointer, `Give one value, or one for each of the ${count} centres`);
   return given;
-}
-
-/** The isomers of an entity on a polyhedron, in the order that `derive/isomers` lists them; null where they are not to be counted. */
-export function isomersOf(
-  entity: EntityReading,
-  geometry: string | null,
-): { list: IsomerList; request: ReturnType<typeof isomerRequest> } | null {
-  if (geometry === null || entity.centres.length !== 1) return null;
-  // The order of a formula's ligands is an accident of spelling.
-  const ligands = [...entity.ligands].sort((a, b) => (a.abbreviation < b.abbreviation ? -1 : 1));
-  try {
-    const request = isomerRequest(geometry, ligands);
-    return { request, list: enumerateIsomers(request) };
-  } catch (error) {
-    // A set of ligands that the enumeration does not bear has no isomer stated; the complex is registered all the same.
-    if (error instanceof DomainError) return null;
-    throw error;
-  }
 }
 
 function chosenIsomer(
