@@ -19,7 +19,16 @@ export function Cuvette({ colour, title, scale = 1 }: CuvetteProps) {
       className="keep-ink inline-block flex-none align-middle"
     >
       <title>{title}</title>
-      <rect x="1" y="1" width="10" height="26" rx="1.5" fill="var(--color-glaze)" stroke="var(--color-glass)" />
+      <rect
+        x="1"
+        y="1"
+        width="10"
+        height="26"
+        rx="1.5"
+        fill="var(--color-glaze)"
+        stroke="var(--color-glass)"
+        vectorEffect="non-scaling-stroke"
+      />
       {colour ? (
         <rect x="2" y="7" width="8" height="19" rx="0.6" fill={colour} />
       ) : (
