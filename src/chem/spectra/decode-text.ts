@@ -57,7 +57,26 @@ function looksBinary(text: string): boolean {
   return odd * 50 > head.length;
 }
 
-/** Lines of a text, whatever ends them. */
+/**
+ * Lines of a text, whatever ends them.
+ *
+ * @throws {DomainError} `too-large` above two million lines, or for a line above 10 000 characters
+ */
 export function splitLines(text: string): string[] {
-  return text.split(/\r\n|\n|\r/);
+  refuseManyLines(text);
+  const lines = text.split(/\r\n|\n|\r/);
+  const long = lines.findIndex((line) => line.length > limits.lineLength);
+  if (long >= 0) {
+    const message = `the line has ${lines[long]!.length} characters; up to ${limits.lineLength} are read`;
+    throw new DomainError('too-large', message, 'file', long + 1);
+  }
+  return lines;
+}
+
+function refuseManyLines(text: string): void {
+  const sign = text.includes('\n') ? '\n' : '\r';
+  let count = 0;
+  for (let at = text.indexOf(sign); at >= 0; at = text.indexOf(sign, at + 1)) {
+    if (++count > limits.lines) throw new DomainError('too-large', `more than ${limits.lines} lines`, 'file');
+  }
 }

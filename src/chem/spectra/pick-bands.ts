@@ -18,8 +18,11 @@ export interface PickOptions {
   prominence?: number;
 }
 
-/** Bands must stand out from noise by so many standard deviations (common practice: 3 to 6). */
-const NOISE_FACTOR = 6;
+/**
+ * Bands must stand out by so many standard deviations of the smoothed curve: between the highest and the lowest of some
+ * hundred values of mere noise lie six to seven.
+ */
+const NOISE_FACTOR = 8;
 /** A shoulder's own height, as the curvature gives it, as a part of the curve's height there (common practice). */
 const SHOULDER_SHARE = 0.02;
 
@@ -40,8 +43,9 @@ interface Candidate extends PickedBand {
 export function pickBands(x: ArrayLike<number>, y: ArrayLike<number>, options: PickOptions = {}): PickedBand[] {
   const { count = Number.POSITIVE_INFINITY, window = 250, prominence = 0.005 } = options;
   const fit = smooth(x, y, window);
-  if (fit.x.length < 9) return [];
-  const threshold = Math.max(prominence * fit.range, NOISE_FACTOR * fit.noise);
+  const isFlat = fit.range <= 1e-9 * Math.abs(fit.y[0] ?? 0); // the last bits of a constant are no structure
+  if (fit.x.length < 9 || isFlat) return [];
+  const threshold = prominence * fit.range;
   const maxima = findMaxima(fit, threshold);
   const shoulders = findShoulders(fit, threshold, maxima);
   return [...maxima, ...shoulders]
@@ -57,7 +61,7 @@ function findMaxima(fit: LocalFit, threshold: number): Candidate[] {
   for (let i = 1; i < x.length - 1; i++) {
     if (!(y[i]! > y[i - 1]! && y[i]! >= y[i + 1]!)) continue;
     const rise = prominenceAt(y, i);
-    if (rise < threshold || y[i]! <= 0) continue;
+    if (rise < Math.max(threshold, NOISE_FACTOR * fit.noise[i]!) || y[i]! <= 0) continue;
     const [wavenumber, height] = vertex(fit, i);
     found.push({ wavenumber, height, fwhm: widthAt(fit, i, height), shoulder: false, prominence: rise });
   }
@@ -115,7 +119,7 @@ function findShoulders(fit: LocalFit, threshold: number, maxima: readonly Candid
     const sigma = (x[right]! - x[left]!) / 2;
     const rim = Math.min(0, Math.max(second[left]!, second[right]!)); // zero, or the turn before another bulge
     const own = (rim - bend) * sigma * sigma;
-    if (own < Math.max(threshold, SHOULDER_SHARE * y[i]!, NOISE_FACTOR * fit.secondNoise * sigma * sigma)) continue;
+    if (own < Math.max(threshold, SHOULDER_SHARE * y[i]!, NOISE_FACTOR * fit.secondNoise[i]! * sigma * sigma)) continue;
     const isMaximum = maxima.some(({ wavenumber }) => wavenumber >= x[left]! && wavenumber <= x[right]!);
     if (isMaximum || y[i]! <= 0) continue;
     found.push({ wavenumber: x[i]!, height: y[i]!, fwhm: null, shoulder: true, prominence: own });

@@ -4,9 +4,9 @@ export interface LocalFit {
   y: Float64Array;
   /** Second derivative. */
   second: Float64Array;
-  /** Standard deviation of noise in the smoothed y, and in the second derivative. */
-  noise: number;
-  secondNoise: number;
+  /** Standard deviation of noise in each smoothed y, and in each second derivative. */
+  noise: Float64Array;
+  secondNoise: Float64Array;
   /** Highest minus lowest smoothed y. */
   range: number;
 }
@@ -27,7 +27,7 @@ export function smooth(x: ArrayLike<number>, y: ArrayLike<number>, halfWidth: nu
   const n = points.x.length;
   const [fitted, second] = [new Float64Array(n), new Float64Array(n)];
   const sigma = noiseOf(points.y);
-  let [worst, used] = [0, 0];
+  const [noise, secondNoise] = [new Float64Array(n), new Float64Array(n)];
   for (let i = 0; i < n; i++) {
     let [from, to] = [i, i];
     while (
@@ -41,16 +41,15 @@ export function smooth(x: ArrayLike<number>, y: ArrayLike<number>, halfWidth: nu
     const local = parabola(points, i, from, to);
     fitted[i] = local.value;
     second[i] = local.second;
-    worst += sigma * local.secondSpread;
-    used += to - from + 1;
+    noise[i] = sigma * local.spread;
+    secondNoise[i] = sigma * local.secondSpread;
   }
   let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
   for (const value of fitted) {
     low = Math.min(low, value);
     high = Math.max(high, value);
   }
-  const noise = n > 0 ? sigma / Math.sqrt(used / n / 2.25) : 0; // middle of a quadratic fit: variance 9/(4m)
-  return { x: points.x, y: fitted, second, noise, secondNoise: n > 0 ? worst / n : 0, range: high - low };
+  return { x: points.x, y: fitted, second, noise, secondNoise, range: high - low };
 }
 
 /** Points without gaps and with rising x, in groups where there are very many. */
@@ -81,7 +80,8 @@ function noiseOf(y: Float64Array): number {
   return (1.4826 * sizes[Math.floor(sizes.length / 2)]!) / Math.sqrt(20);
 }
 
-/** Least-squares parabola through points from..to, at point i; `secondSpread` is u of the second derivative per u(y). */
+/** Least-squares parabola through points from..to, at point i; `spread` and `secondSpread` are u of value and
+ * second derivative per u(y). */
 function parabola(points: { x: Float64Array; y: Float64Array }, i: number, from: number, to: number) {
   const scale = Math.max(points.x[i]! - points.x[from]!, points.x[to]! - points.x[i]!) || 1;
   const s = [0, 0, 0, 0, 0];
@@ -97,9 +97,10 @@ function parabola(points: { x: Float64Array; y: Float64Array }, i: number, from:
   const [s0, s1, s2, s3, s4] = s as [number, number, number, number, number];
   const [b0, b1, b2] = b as [number, number, number];
   const determinant = s0 * (s2 * s4 - s3 * s3) - s1 * (s1 * s4 - s2 * s3) + s2 * (s1 * s3 - s2 * s2);
-  if (!(Math.abs(determinant) > 1e-12)) return { value: points.y[i]!, second: 0, secondSpread: 0 };
+  if (!(Math.abs(determinant) > 1e-12)) return { value: points.y[i]!, second: 0, spread: 1, secondSpread: 0 };
   const value = (b0 * (s2 * s4 - s3 * s3) - b1 * (s1 * s4 - s2 * s3) + b2 * (s1 * s3 - s2 * s2)) / determinant;
   const square = (b0 * (s1 * s3 - s2 * s2) - b1 * (s0 * s3 - s1 * s2) + b2 * (s0 * s2 - s1 * s1)) / determinant;
-  const spread = Math.sqrt(Math.max(0, (s0 * s2 - s1 * s1) / determinant));
-  return { value, second: (2 * square) / scale ** 2, secondSpread: (2 * spread) / scale ** 2 };
+  const spread = Math.sqrt(Math.max(0, (s2 * s4 - s3 * s3) / determinant));
+  const squareSpread = Math.sqrt(Math.max(0, (s0 * s2 - s1 * s1) / determinant));
+  return { value, second: (2 * square) / scale ** 2, spread, secondSpread: (2 * squareSpread) / scale ** 2 };
 }

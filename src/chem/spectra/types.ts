@@ -74,6 +74,9 @@ export interface ReadOptions {
 /** Bounds that hold before anything is expanded (a repeat count of nine digits would grow without end). */
 export const limits = {
   bytes: 50 * 1024 * 1024,
+  lines: 2_000_000,
+  /** Characters; the standard has 80, a table of many columns some thousands. */
+  lineLength: 10_000,
   pointsPerBlock: 1_000_000,
   pointsPerFile: 4_000_000,
   blocks: 64,

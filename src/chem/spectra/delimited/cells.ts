@@ -13,9 +13,9 @@ const GAP = /^(?:|nan|n\.?\/?a\.?|null|none|-+|\?+|#+|\*+|#n\/a|#value!|[+-]?inf
 
 /** A number; NaN for a gap; null for text. */
 export function readCell(cell: string, decimalComma: boolean): number | null {
-  const text = cell.replace(/^[−–]/, '-');
-  if (decimalComma ? NUMBER_WITH_COMMA.test(text) : NUMBER.test(text)) {
-    const value = Number(text.replace(',', '.').replace(/[dD]/, 'e'));
+  const text = /^[−–]/.test(cell) ? `-${cell.slice(1)}` : cell;
+  if ((decimalComma ? NUMBER_WITH_COMMA : NUMBER).test(text)) {
+    const value = Number(decimalComma || /d/i.test(text) ? text.replace(',', '.').replace(/d/i, 'e') : text);
     return Number.isFinite(value) ? value : Number.NaN;
   }
   return GAP.test(text) ? Number.NaN : null;
@@ -57,6 +57,8 @@ export function isStrong({ values }: DataLine): boolean {
 
 /** Blank lines, and lines marked as comments. */
 export function isPassedOver(text: string, delimiter: string): boolean {
+  const first = text.charCodeAt(0);
+  if (first >= 48 && first <= 57) return false; // a digit: most lines there are
   const trimmed = text.trim();
   if (trimmed === '') return true;
   return /^(?:#|%(?!\s*[TR]\b)|\/\/|!)/i.test(trimmed) || (delimiter !== ';' && trimmed.startsWith(';'));

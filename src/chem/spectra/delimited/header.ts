@@ -3,6 +3,10 @@ import { isAbscissaLabel, xUnitFromText, yUnitFromText } from '../unit-names';
 import { cutLine, type Notation } from './cells';
 import type { FoundTable } from './table';
 
+/** Lines of a header that are kept, and characters of each. */
+const MOST_FACTS = 1000;
+const LONGEST_FACT = 1000;
+
 /** What the lines above a table say. */
 export interface Header {
   /** Label of each column; empty where there is none. */
@@ -67,7 +71,8 @@ function factsOf(
   { delimiter }: Notation,
 ): { metadata: Record<string, string>; title: string } {
   let title = '';
-  const entries = lines.map(({ text, line }): [string, string] => {
+  const entries = lines.slice(0, MOST_FACTS).map(({ text: whole, line }): [string, string] => {
+    const text = whole.trim().slice(0, LONGEST_FACT);
     const pair = text.match(/^\s*"?([^:=\t"]{1,60}?)"?\s*[:=\t]\s*(.+)$/);
     if (pair) return [pair[1]!.trim(), pair[2]!.trim().replace(/^"|"$/g, '')];
     const cells = cutLine(text, delimiter).filter((cell) => cell !== '');

@@ -18,6 +18,9 @@ export function isDataRecord({ label }: JcampRecord): boolean {
   return DATA_LABELS.has(label);
 }
 
+/** Blocks that hold nothing, and blocks that link others, are borne to this number. */
+const MOST_TITLES = 4 * limits.blocks;
+
 interface OpenBlock extends RecordBlock {
   isLink: boolean;
   inner: number;
@@ -49,8 +52,12 @@ export function gatherBlocks(records: readonly JcampRecord[], warnings: Spectrum
     }
   };
 
+  let titles = 0;
   for (const record of records) {
     const top = open.at(-1);
+    if (record.label === 'TITLE' && ++titles > MOST_TITLES) {
+      throw new DomainError('too-large', `more than ${MOST_TITLES} blocks, with or without data`, 'file', record.line);
+    }
     if (record.label === 'TITLE') {
       if (top && !top.isLink) close(false);
       open.push(emptyBlock(record, open));

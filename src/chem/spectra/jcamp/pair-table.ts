@@ -125,21 +125,42 @@ export function readAssignments(lines: readonly ValueLine[], hasHeight: boolean)
     while (offset > rowEnd && row + 1 < lines.length) rowEnd += 1 + lines[++row]!.text.length;
     return lines[row]?.line ?? 0;
   };
-  const GROUP = /\s*[,;]?\s*\(([^<()]*)(?:<((?:[^>]|>(?!\s*\)))*)>)?\s*\)/y;
-  const end = text.trimEnd().length;
-  let at = 0;
-  while (at < end) {
-    GROUP.lastIndex = at;
-    const match = GROUP.exec(text);
-    if (!match) throw unreadable(`"${text.slice(at, at + 24).trim()}" is no peak assignment`, lineAt(at));
-    const line = lineAt(GROUP.lastIndex - 1);
-    const numbers = [...fields((match[1] ?? '').replace(/[\s,]+$/, '').replace(/\n/g, ' '), line)];
+  let at = afterSeparators(text, 0);
+  while (at < text.length) {
+    const group = groupAt(text, at);
+    if (group === null) throw unreadable(`"${text.slice(at, at + 24).trim()}" is no peak assignment`, lineAt(at));
+    const line = lineAt(group.end - 1);
+    const numbers = [...fields(group.numbers.replace(/\n/g, ' ').replace(/,\s*$/, ''), line)];
     if (numbers.length === 0) throw unreadable('a peak assignment without a position', line);
     push(table, [numbers[0]!, hasHeight ? (numbers[1] ?? Number.NaN) : Number.NaN], line);
-    table.labels.push((match[2] ?? '').replace(/\s+/g, ' ').trim());
-    at = GROUP.lastIndex;
+    table.labels.push(group.label.replace(/\s+/g, ' ').trim());
+    at = afterSeparators(text, group.end);
   }
   return table;
+}
+
+/** Longest group read, in characters. */
+const LONGEST_GROUP = 1000;
+
+/** The group in round brackets that opens at a place; its label ends at the `>` before the closing bracket. */
+function groupAt(text: string, at: number): { numbers: string; label: string; end: number } | null {
+  const near = text.slice(at, at + LONGEST_GROUP);
+  const inside = near.match(/^\(([^<()]*)([<)])/);
+  if (!inside) return null;
+  const numbers = inside[1] ?? '';
+  if (inside[2] === ')') return { numbers, label: '', end: at + inside[0].length };
+  for (let close = near.indexOf('>'); close >= 0; close = near.indexOf('>', close + 1)) {
+    let end = close + 1;
+    while (/\s/.test(near.charAt(end))) end++;
+    if (near.charAt(end) === ')') return { numbers, label: near.slice(inside[0].length, close), end: at + end + 1 };
+  }
+  return null;
+}
+
+function afterSeparators(text: string, from: number): number {
+  let at = from;
+  while (at < text.length && /[\s,;]/.test(text.charAt(at))) at++;
+  return at;
 }
 
 function unreadable(message: string, line: number): DomainError {

@@ -171,7 +171,12 @@ describe('decimal comma', () => {
   });
 
   test('is refused without FIRSTY, against it, or beside a full stop', () => {
-    for (const changes of [{ FIRSTY: null }, { FIRSTY: '0,070' }, { YFACTOR: '0.5', FIRSTY: '0,025' }]) {
+    const doubts: Record<string, string | null>[] = [
+      { FIRSTY: null },
+      { FIRSTY: '0,070' },
+      { YFACTOR: '0.5', FIRSTY: '0,025' },
+    ];
+    for (const changes of doubts) {
       expect(refusal(jcamp(table, { ...head, ...changes })).message).toMatch(/commas/);
     }
   });
