@@ -111,9 +111,9 @@ CREATE TABLE `centre` (
 	FOREIGN KEY (`complex_id`) REFERENCES `complex`(`id`) ON UPDATE no action ON DELETE no action
 );
 --> statement-breakpoint
-CREATE INDEX `centre_element` ON `centre` (`element`,`oxidation_state`);--> statement-breakpoint
-CREATE INDEX `centre_d` ON `centre` (`d_count`);--> statement-breakpoint
-CREATE INDEX `centre_geometry` ON `centre` (`geometry`);--> statement-breakpoint
+CREATE INDEX `centre_element` ON `centre` (`element`,`oxidation_state`,`complex_id`);--> statement-breakpoint
+CREATE INDEX `centre_d` ON `centre` (`d_count`,`complex_id`);--> statement-breakpoint
+CREATE INDEX `centre_geometry` ON `centre` (`geometry`,`complex_id`);--> statement-breakpoint
 CREATE TABLE `complex_ligand` (
 	`complex_id` text NOT NULL,
 	`ordinal` integer NOT NULL,
@@ -128,7 +128,7 @@ CREATE TABLE `complex_ligand` (
 	FOREIGN KEY (`complex_id`) REFERENCES `complex`(`id`) ON UPDATE no action ON DELETE no action
 );
 --> statement-breakpoint
-CREATE INDEX `complex_ligand_name` ON `complex_ligand` (`abbreviation`);--> statement-breakpoint
+CREATE INDEX `complex_ligand_name` ON `complex_ligand` (`abbreviation`,`complex_id`);--> statement-breakpoint
 CREATE TABLE `complex` (
 	`id` text PRIMARY KEY NOT NULL,
 	`number` integer NOT NULL,
@@ -172,6 +172,7 @@ CREATE UNIQUE INDEX `complex_identity_lab` ON `complex` (`identity_key`,`lab_id`
 CREATE INDEX `complex_identity` ON `complex` (`identity_key`);--> statement-breakpoint
 CREATE INDEX `complex_lab` ON `complex` (`lab_id`,`state`);--> statement-breakpoint
 CREATE INDEX `complex_group` ON `complex` (`point_group`);--> statement-breakpoint
+CREATE INDEX `complex_sight` ON `complex` (`merged_into`,`state`,`visibility`,`lab_id`,`maker_id`,`embargo_until`,`point_group`,`id`);--> statement-breakpoint
 CREATE TABLE `ligand_site` (
 	`complex_id` text NOT NULL,
 	`centre_ordinal` integer NOT NULL,

@@ -48,33 +48,51 @@ export function preparationSight(asker: Asker): SQL {
   return isMember(asker) ? all(complexSight(asker), memberSight(asker, preparations)) : never;
 }
 
-/** Spectra that one grant opens. */
+/** Spectra that one grant opens, of complexes that it opens. */
 function grantedSpectra(grant: Asker['grants'][number]): SQL {
   const listed = sql`exists (select 1 from ${folioItems} where ${folioItems.folioId} = ${grant.folioId}
     and ${folioItems.complexId} = ${spectra.complexId}
     and (${folioItems.spectra} is null or exists (select 1 from json_each(${folioItems.spectra}) where value = ${spectra.id})))`;
   const shareable = any(eq(spectra.visibility, 'programme'), eq(spectra.labId, grant.labId));
-  return all(openComplex(), eq(spectra.state, 'registered'), shareable, listed);
+  return all(eq(spectra.state, 'registered'), shareable, listed);
+}
+
+/**
+ * Spectra that a member sees as a member. Somebody who is a guest elsewhere sees more complexes than that, and of those
+ * only what was granted.
+ */
+function memberSpectra(asker: Asker): SQL {
+  const own = memberSight(asker, spectra);
+  if (asker.grants.length === 0) return own;
+  return all(
+    own,
+    sql`${spectra.complexId} in (select ${complexes.id} from ${complexes} where ${memberSight(asker, complexes)})`,
+  );
+}
+
+// The two below are for queries that are held to complexes in sight already: they spare them a second look at each.
+
+/** Spectra in sight of a complex in sight. */
+export function spectrumSightWithin(asker: Asker): SQL {
+  const asGuest = any(...asker.grants.map(grantedSpectra));
+  return isMember(asker) ? any(memberSpectra(asker), asGuest) : asGuest;
+}
+
+/** Bands in sight of a complex in sight: a guest of a folio that shows attested ones sees no others. */
+export function bandSightWithin(asker: Asker): SQL {
+  const shown = (g: Asker['grants'][number]) => (g.shows === 'attested' ? eq(bands.state, 'attested') : undefined);
+  const asGuest = any(...asker.grants.map((g) => all(grantedSpectra(g), shown(g))));
+  return isMember(asker) ? any(memberSpectra(asker), asGuest) : asGuest;
 }
 
 /** Spectra in sight, of complexes in sight. A query that uses it has `complex` and `spectrum` in its FROM. */
-export function spectrumSight(asker: Asker): SQL {
-  const asGuest = any(...asker.grants.map(grantedSpectra));
-  return isMember(asker) ? any(all(complexSight(asker), memberSight(asker, spectra)), asGuest) : asGuest;
-}
+export const spectrumSight = (asker: Asker): SQL => all(complexSight(asker), spectrumSightWithin(asker));
 
 /** Spectra whose files and full points the asker may take away. */
 export function spectrumDownload(asker: Asker): SQL {
   const asGuest = any(...asker.grants.filter((g) => g.level === 'download').map(grantedSpectra));
-  return isMember(asker) ? any(all(complexSight(asker), memberSight(asker, spectra)), asGuest) : asGuest;
+  return all(complexDownload(asker), isMember(asker) ? any(memberSpectra(asker), asGuest) : asGuest);
 }
 
-/** Bands in sight: a guest of a folio that shows attested ones sees no others. All three tables are in the FROM. */
-export function bandSight(asker: Asker): SQL {
-  const asGuest = any(
-    ...asker.grants.map((g) =>
-      all(grantedSpectra(g), g.shows === 'attested' ? eq(bands.state, 'attested') : undefined),
-    ),
-  );
-  return isMember(asker) ? any(all(complexSight(asker), memberSight(asker, spectra)), asGuest) : asGuest;
-}
+/** Bands in sight. `complex`, `spectrum` and `band` are in the FROM. */
+export const bandSight = (asker: Asker): SQL => all(complexSight(asker), bandSightWithin(asker));

@@ -1,6 +1,7 @@
-import { and, asc, desc, eq, type SQL, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, type SQL, sql } from 'drizzle-orm';
 import type { Page } from '../../contracts/common.ts';
 import type { ComplexQuery, ComplexSummary } from '../../contracts/complexes.ts';
+import type { Db } from '../../db/client.ts';
 import { centres, complexes, spectra } from '../../db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
 import { spectrumSight } from '../access/sight.ts';
@@ -36,6 +37,13 @@ function sortValue(asker: Asker, name: string): SQL<string | number> {
   }
 }
 
+/** Whole rows of the ids of a page: the sort itself runs over narrow ones. */
+async function complexesInOrder(db: Db, ids: string[]) {
+  const rows = ids.length ? await db.select().from(complexes).where(inArray(complexes.id, ids)) : [];
+  const byId = new Map(rows.map((row) => [row.id, row]));
+  return ids.map((id) => byId.get(id)!);
+}
+
 /** Complexes in the asker's sight: one page, the total, and on request what each filter would leave. */
 export async function listComplexes(asker: Asker, query: ComplexQuery): Promise<Page<ComplexSummary>> {
   const { db } = await database();
@@ -44,11 +52,11 @@ export async function listComplexes(asker: Asker, query: ComplexQuery): Promise<
   const falling = query.sort.startsWith('-');
   const by = sortValue(asker, query.sort.replace(/^-/, ''));
   const id = sql`${complexes.id}`;
-  const where = whereOf(asker, filterConditions(db, asker, query));
+  const where = whereOf(asker, filterConditions(asker, query));
 
   const [found, [counted], facetCounts] = await Promise.all([
     db
-      .select({ complex: complexes, value: by })
+      .select({ id: complexes.id, value: by })
       .from(complexes)
       // The first centre stands for the complex where a column shows one value.
       .leftJoin(centres, and(eq(centres.complexId, complexes.id), eq(centres.ordinal, 0)))
@@ -58,11 +66,14 @@ export async function listComplexes(asker: Asker, query: ComplexQuery): Promise<
     db.select({ total: sql<number>`count(*)` }).from(complexes).where(where),
     query.facets === '1' ? facets(db, asker, query) : undefined,
   ]);
-  const { rows, next } = cutPage(found, query.limit, scope, ({ value, complex }) => ({ value, id: complex.id }));
+  const { rows, next } = cutPage(found, query.limit, scope, (row) => row);
   return {
     items: await summaries(
       asker,
-      rows.map(({ complex }) => complex),
+      await complexesInOrder(
+        db,
+        rows.map((row) => row.id),
+      ),
     ),
     total: counted?.total ?? 0,
     next,
