@@ -1,8 +1,8 @@
-/// <reference types="vitest/config" />
 import { getViteConfig } from 'astro/config';
+import type { ViteUserConfig } from 'vitest/config';
 
 /** Processes killed, disks full, stores away: one after another, against the built program where they need one. */
-export default getViteConfig({
+const config: ViteUserConfig = {
   test: {
     include: ['tests/faults/**/*.test.ts'],
     setupFiles: ['tests/setup/silence.ts'],
@@ -12,4 +12,7 @@ export default getViteConfig({
     fileParallelism: false,
     passWithNoTests: true,
   },
-});
+};
+
+// Astro and the test runner each bring a Vite of their own, whose types differ in what is not used here.
+export default getViteConfig(config as Parameters<typeof getViteConfig>[0]);

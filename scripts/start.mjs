@@ -2,6 +2,7 @@ import { ensureBuild } from './lib/build.mjs';
 import { chooseDataFolder, giveUp, loadEnvironmentFile, parseOptions, ROOT, UsageError } from './lib/options.mjs';
 import { ensurePackages, requireNode } from './lib/packages.mjs';
 import { freePort } from './lib/ports.mjs';
+import { aloneInCheckout } from './lib/work-lock.mjs';
 
 // `npm start`. Node built-ins only up to the hand-over, since a fresh clone has no packages yet.
 
@@ -23,8 +24,10 @@ try {
   process.env.PORT = String(await freePort(host, port));
 
   process.chdir(ROOT);
-  ensurePackages(say);
-  ensureBuild(say);
+  aloneInCheckout(say, () => {
+    ensurePackages(say);
+    ensureBuild(say);
+  });
 
   const { register } = await import('tsx/esm/api');
   register();

@@ -3,6 +3,7 @@ import { ensureChromium } from './lib/chromium.mjs';
 import { giveUp, parseOptions, ROOT } from './lib/options.mjs';
 import { ensurePackages, requireNode } from './lib/packages.mjs';
 import { playwright, runNode, single, vitest } from './lib/suites.mjs';
+import { aloneInCheckout } from './lib/work-lock.mjs';
 
 // `npm test`: everything that must hold, in one command. Node built-ins only, since it installs the packages.
 
@@ -32,7 +33,7 @@ const suites = [
     name: 'build',
     budget: 300,
     run: async (s) => {
-      ensureBuild(say, { seconds: s });
+      aloneInCheckout(say, () => ensureBuild(say, { seconds: s }));
       return single(true);
     },
   },
@@ -54,7 +55,7 @@ try {
   const { long = false } = parseOptions('test --', { long: { type: 'boolean' } });
   if (long) process.env.ZAFFRE_LONG = '1';
   process.chdir(ROOT);
-  ensurePackages(say);
+  aloneInCheckout(say, () => ensurePackages(say));
   process.exitCode = await runAll(long ? 4 : 1);
 } catch (error) {
   giveUp(error);

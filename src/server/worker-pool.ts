@@ -1,6 +1,6 @@
+import { once } from 'node:events';
 import { availableParallelism } from 'node:os';
 import { join } from 'node:path';
-import { pathToFileURL } from 'node:url';
 import { Worker } from 'node:worker_threads';
 import { DomainError } from '#src/chem/errors.ts';
 import { HttpError } from './http.ts';
@@ -27,6 +27,7 @@ const SIZE = Math.max(2, Math.min(4, availableParallelism() - 1));
 /** Questions that may wait for a free worker; more are turned away. */
 const QUEUE = 50;
 const MEMORY_MB = 256;
+const START_TIMEOUT_MS = 60_000;
 
 const idle: Worker[] = [];
 const alive = new Set<Worker>();
@@ -63,7 +64,9 @@ export function runInWorker<N extends keyof Tasks>(
 export async function closeWorkers(): Promise<void> {
   for (const { reject } of queue.splice(0)) reject(new Error('the program stops'));
   idle.length = 0;
-  await Promise.all([...alive].map((worker) => worker.terminate()));
+  const ending = [...alive];
+  alive.clear();
+  await Promise.all(ending.map((worker) => worker.terminate()));
 }
 
 function next(): void {
@@ -76,14 +79,20 @@ function next(): void {
     return;
   }
   busy++;
-  const worker = idle.pop() ?? startWorker();
-  alive.add(worker);
-  void ask(worker, waiting).then((usable) => {
+  void serve(waiting).finally(() => {
     busy--;
-    if (usable) idle.push(worker);
-    else alive.delete(worker);
     next();
   });
+}
+
+async function serve(waiting: Waiting): Promise<void> {
+  try {
+    const worker = idle.pop() ?? (await startWorker());
+    if (await ask(worker, waiting)) idle.push(worker);
+    else alive.delete(worker);
+  } catch (error) {
+    waiting.reject(error);
+  }
 }
 
 /** Put one question to a worker. Returns whether it can be asked again. */
@@ -131,13 +140,35 @@ const domainError = ({
   position,
 }: Pick<DomainError, 'code' | 'message' | 'field' | 'position'>) => new DomainError(code, message, field, position);
 
-/** `ZAFFRE_WORKERS` names the folder of the built workers; without it the source is run as it is. */
-function startWorker(): Worker {
-  const resourceLimits = { maxOldGenerationSizeMb: MEMORY_MB };
+/**
+ * Start a worker and wait until it listens, so that its loading counts against nobody's time. `ZAFFRE_WORKERS` names
+ * the folder of the built workers; without it the source is bundled on the spot.
+ */
+async function startWorker(): Promise<Worker> {
+  const options = { resourceLimits: { maxOldGenerationSizeMb: MEMORY_MB }, execArgv: [] };
   const built = process.env.ZAFFRE_WORKERS;
-  if (built) return new Worker(join(built, 'derive.mjs'), { resourceLimits, execArgv: [] });
-  const source = pathToFileURL(join(process.cwd(), 'src/server/workers/derive.ts')).href;
-  // `--import tsx` has no effect in a thread.
-  const start = `import('tsx/esm/api').then(({ register }) => { register(); return import('${source}'); })`;
-  return new Worker(start, { eval: true, resourceLimits, execArgv: [] });
+  const worker = built
+    ? new Worker(join(built, 'derive.mjs'), options)
+    : new Worker(await bundleSource(), { ...options, eval: true });
+  alive.add(worker);
+  try {
+    await once(worker, 'message', { signal: AbortSignal.timeout(START_TIMEOUT_MS) });
+  } catch (error) {
+    alive.delete(worker);
+    void worker.terminate();
+    throw error;
+  }
+  return worker;
+}
+
+async function bundleSource(): Promise<string> {
+  const { build } = await import('esbuild');
+  const { outputFiles } = await build({
+    entryPoints: [join(process.cwd(), 'src/server/workers/derive.ts')],
+    bundle: true,
+    platform: 'node',
+    format: 'cjs',
+    write: false,
+  });
+  return outputFiles[0]!.text;
 }

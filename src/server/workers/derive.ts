@@ -31,3 +31,4 @@ function answer({ id, name, input }: Question): Answer {
 }
 
 parentPort?.on('message', (question: Question) => parentPort?.postMessage(answer(question)));
+parentPort?.postMessage('ready');

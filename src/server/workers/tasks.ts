@@ -1,8 +1,17 @@
+import { readFormula } from '#src/chem/formula/index.ts';
 import { enumerateIsomers } from '#src/chem/geometry/index.ts';
 import { type ReadOptions, readSpectrumFile } from '#src/chem/spectra/index.ts';
 
+type Rest = Parameters<typeof readFormula>;
+interface FormulaInput {
+  text: string;
+  answers?: Rest[1];
+  ownLigands?: Rest[2];
+}
+
 /** The derivations that may take long, by the name under which a worker is asked for them. */
 export const tasks = {
+  formula: ({ text, answers, ownLigands }: FormulaInput) => readFormula(text, answers, ownLigands),
   isomers: enumerateIsomers,
   spectrumFile: ({ bytes, options }: { bytes: Uint8Array; options: ReadOptions }) => readSpectrumFile(bytes, options),
 };

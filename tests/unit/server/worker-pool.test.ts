@@ -23,6 +23,12 @@ describe('the derivations, from source', () => {
     const refused = runInWorker('isomers', { ...request, geometry: 'nonsense' });
     await expect(refused).rejects.toThrow(DomainError);
     await expect(refused).rejects.toMatchObject({ field: 'geometry' });
+    const { entity } = await runInWorker('formula', { text: '[Co(NH3)6]Cl3' });
+    expect(entity).toBe('[Co(NH3)6]3+');
+    await expect(runInWorker('formula', { text: '[Co(NH3)6' })).rejects.toMatchObject({
+      field: 'formula',
+      position: 0,
+    });
   });
 });
 
@@ -37,7 +43,8 @@ describe('a worker that misbehaves', () => {
         if (input.die) process.exit(3);
         if (input.eat) { const all = []; for (;;) all.push(Array.from({ length: 1e5 }, (_, i) => ({ i }))); }
         parentPort.postMessage({ id, value: input.echo });
-      });`;
+      });
+      parentPort.postMessage('ready');`;
     await writeFile(join(folder, 'derive.mjs'), code);
     process.env.ZAFFRE_WORKERS = folder;
   });
