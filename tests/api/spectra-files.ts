@@ -80,3 +80,9 @@ export const formOf = (
   if (json !== undefined) form.append(part, typeof json === 'string' ? json : JSON.stringify(json));
   return form;
 };
+
+/** Start the worker thread that reads files, so that no test waits for it. */
+export async function warmReader(): Promise<void> {
+  const { readBlocks } = await import('#src/server/spectra/read-curve.ts');
+  await readBlocks(new TextEncoder().encode(difdup(inventedCurve())), {});
+}

@@ -2,7 +2,7 @@ import { createHash } from 'node:crypto';
 import { afterAll, beforeAll, describe, expect, test, vi } from 'vitest';
 import { call, json, openRegistry } from './harness.ts';
 import { lab, person } from './people.ts';
-import { decimalCommas, difdup, formOf, inventedCurve } from './spectra-files.ts';
+import { decimalCommas, difdup, formOf, inventedCurve, warmReader } from './spectra-files.ts';
 import { complex } from './spectra-world.ts';
 
 type Person = Awaited<ReturnType<typeof person>>;
@@ -32,13 +32,14 @@ const variant = (mark: string) => difdup(curve, [`##$MARK= ${mark}`]);
 beforeAll(async () => {
   process.env.MAX_UPLOAD_BYTES = '300000';
   registry = await openRegistry();
+  await warmReader();
   north = await lab('North');
   south = await lab('South');
   ada = await person('Ada', { labs: { [north]: 'contributor' } });
   both = await person('Bo', { labs: { [north]: 'contributor', [south]: 'contributor' } });
   guest = await person('Gus');
   nickel = await complex(north, ada.id);
-});
+}, 60_000);
 afterAll(async () => {
   const { closeWorkers } = await import('#src/server/worker-pool.ts');
   await closeWorkers();

@@ -36,7 +36,7 @@ export async function originalFile({ spectrum }: SpectrumTake): Promise<Response
 
 /** The spectrum as JCAMP-DX 5.01, written from the decoded points. */
 export async function jcampFile(access: SpectrumTake): Promise<Response> {
-  const { complex, spectrum } = access;
+  const { spectrum } = access;
   const { db } = await database();
   const [points, solvents, [lab], [instrument]] = await Promise.all([
     loadFilePoints(db, spectrum.id),
@@ -55,7 +55,7 @@ export async function jcampFile(access: SpectrumTake): Promise<Response> {
     ...(instrument ? { instrument: instrument.name } : {}),
     ...(solvents.length > 0 ? { solvent: solventText(solvents) } : {}),
   });
-  const text = withComments(written, cautionLines(cautionsOf({ complex, spectrum, solvents })));
+  const text = withComments(written, cautionLines(await cautionsOf(access, solvents)));
   return new Response(text, {
     headers: {
       'content-type': 'chemical/x-jcamp-dx',

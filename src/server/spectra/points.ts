@@ -20,7 +20,7 @@ export async function readPoints(access: SpectrumAccess, query: PointsQuery): Pr
   const { db } = await database();
   const stored = await loadCurve(db, spectrum.id);
   const { y, yUnit } = await ordinates(access, stored.value, query.yUnit);
-  const x = convertX(stored.x, 'cm-1', query.xUnit);
+  const x = await abscissae(spectrum, stored.x, query.xUnit);
 
   const all = Float64Array.from(stored.x.keys());
   // Whoever may only look gets what one thinning of the whole curve leaves: it is done on the curve as stored, before
@@ -46,6 +46,14 @@ function thin(places: Float64Array, value: Float64Array, max: number): Float64Ar
     places.map((i) => value[i]!),
     max,
   ).x;
+}
+
+/** Abscissae in the order of the ascending copy: as the file has them where its unit is asked for, with every digit. */
+async function abscissae({ id, xUnit }: SpectrumAccess['spectrum'], wavenumber: Float64Array, wanted: XUnit) {
+  if (wanted !== xUnit) return convertX(wavenumber, 'cm-1', wanted);
+  const { db } = await database();
+  const file = await loadFilePoints(db, id);
+  return ascendingOrder(file.x, wanted).order.map((place) => file.x[place]!);
 }
 
 const finiteOrNull = (value: number): number | null => (Number.isFinite(value) ? value : null);

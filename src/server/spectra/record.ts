@@ -18,7 +18,7 @@ import { solventsOf, summaryColumns, summaryOf } from './summary.ts';
 
 /** A spectrum with its conditions and bands, as this asker gets it. */
 export async function describeSpectrum(access: SpectrumAccess): Promise<SpectrumRecord> {
-  const { asker, complex } = access;
+  const { asker } = access;
   const { id } = access.spectrum;
   const { db } = await database();
   const [row] = await db
@@ -56,7 +56,7 @@ export async function describeSpectrum(access: SpectrumAccess): Promise<Spectrum
     instrument: row.instrument,
     operator: isMember(asker) ? spectrum.operator : null,
     visibility: spectrum.visibility,
-    notes: spectrum.notes,
+    notes: isMember(asker) ? spectrum.notes : null,
     withdrawnReason: spectrum.withdrawnReason,
     fileName: spectrum.fileName,
     sha256: spectrum.fileSha256,
@@ -68,7 +68,7 @@ export async function describeSpectrum(access: SpectrumAccess): Promise<Spectrum
     reading: spectrum.reading,
     warnings: spectrum.warnings,
     bands,
-    cautions: cautionsOf({ complex, spectrum, solvents: solvent }),
+    cautions: await cautionsOf(fresh, solvent),
     may: {
       change: canChangeSpectrum(asker, spectrum),
       propose: canPropose(asker, fresh) && spectrum.state !== 'withdrawn',
