@@ -6,7 +6,7 @@ import { type Asker, labsWith } from './asker.ts';
 /** Who is named at the head of a page. */
 export interface FrameUser {
   name: string;
-  /** Names of the asker's labs; none for guests. */
+  /** The lab the asker leads, or the first by name, and how many more there are; none for guests. */
   lab: string | undefined;
   role: 'steward' | 'lead' | 'contributor' | 'guest';
 }
@@ -14,8 +14,10 @@ export interface FrameUser {
 /** What the head of a page says of the asker; null for nobody. */
 export async function frameUser(asker: Asker | null): Promise<FrameUser | null> {
   if (!asker) return null;
-  const names = (await ownLabs(asker)).map(({ name }) => name);
-  return { name: asker.name, lab: names.join(', ') || undefined, role: roleOf(asker) };
+  const own = await ownLabs(asker);
+  const first = own.find(({ role }) => role === 'lead') ?? own[0];
+  const lab = first && (own.length > 1 ? `${first.name} + ${own.length - 1}` : first.name);
+  return { name: asker.name, lab, role: roleOf(asker) };
 }
 
 /** The asker's labs by name, with the role held in each. */

@@ -1,0 +1,111 @@
+import type { InvitationPreview } from '../../contracts/sharing.ts';
+import { Button, ButtonLink } from '../ui/Button.tsx';
+import { longDay } from '../ui/dates.ts';
+import { EmptyState } from '../ui/EmptyState.tsx';
+import { Facts } from '../ui/Panel.tsx';
+import { Problem } from '../ui/Problem.tsx';
+import { joinStep } from './join-step.ts';
+import { NewAccountFields } from './NewAccountFields.tsx';
+import { useJoin } from './useJoin.ts';
+
+interface Props {
+  /** Address of who is signed in in this browser, or null. */
+  signedInAs: string | null;
+  /** Today, ISO 8601, by the server's clock. */
+  today: string;
+}
+
+/** What an invitation offers, and the way to accept it. */
+export function JoinForm({ signedInAs, today }: Props) {
+  const join = useJoin();
+  if (join.token === null) {
+    return (
+      <EmptyState title="No invitation here" action={<ButtonLink href="/signin">Sign in</ButtonLink>}>
+        Open the link in the mail once more, the whole of it: the part after # holds the invitation.
+      </EmptyState>
+    );
+  }
+  if (join.preview.error) {
+    return <Problem problem={join.preview.error} onRetry={() => void join.preview.refetch()} />;
+  }
+  if (!join.preview.data) return <p role="status">Reading the invitation…</p>;
+  const preview = join.preview.data;
+  return (
+    <div className="flex flex-col gap-5">
+      <Offer preview={preview} />
+      <Step preview={preview} signedInAs={signedInAs} today={today} join={join} />
+    </div>
+  );
+}
+
+function Offer({ preview }: { preview: InvitationPreview }) {
+  const { folio, lab, level, role } = preview;
+  return (
+    <Facts
+      facts={[
+        ['From', preview.invitedBy],
+        folio ? ['Folio', folio.name] : null,
+        ['Lab', lab.name],
+        folio ? ['You may', level === 'download' ? 'read and download' : 'read'] : ['As', role],
+        ['For', preview.email],
+        ['Link works', `until ${longDay(preview.expiresAt)}`],
+      ]}
+    />
+  );
+}
+
+interface StepProps extends Props {
+  preview: InvitationPreview;
+  join: ReturnType<typeof useJoin>;
+}
+
+function Step({ preview, signedInAs, today, join }: StepProps) {
+  const { email } = preview;
+  const terms = preview.folio && <Terms today={today} />;
+  switch (joinStep(preview, signedInAs)) {
+    case 'sign-in':
+      return (
+        <>
+          <p>This address has an account. Its password stays as it is.</p>
+          <ButtonLink kind="primary" href={`/signin?${new URLSearchParams({ next: '/join', email })}`}>
+            Sign in as {email} to accept
+          </ButtonLink>
+        </>
+      );
+    case 'other-account':
+      return (
+        <>
+          <p>
+            You are signed in as <b className="font-semibold">{signedInAs}</b>. This invitation is for{' '}
+            <b className="font-semibold">{email}</b> and can be accepted by that address only.
+          </p>
+          <Problem problem={join.leave.error} />
+          <Button kind="primary" disabled={join.leave.isPending} onClick={() => join.leave.mutate()}>
+            Sign out and go on
+          </Button>
+        </>
+      );
+    case 'accept':
+      return (
+        <>
+          {terms}
+          <Problem problem={join.accept.error} />
+          <Button kind="primary" disabled={join.accept.isPending} onClick={() => join.accept.mutate(null)}>
+            Accept the invitation
+          </Button>
+        </>
+      );
+    case 'new-account':
+      return <NewAccountFields email={email} terms={terms} join={join} />;
+  }
+}
+
+function Terms({ today }: { today: string }) {
+  return (
+    <p className="border-l-2 border-hairline pl-3 text-xs text-ink-soft">
+      Accepting on {longDay(today)}, you agree to read-only access to this folio, and to use what you find in it under
+      its licence, which is named on its page and in every download. The day is recorded. The lab may end the access at
+      any time.
+    </p>
+  );
+}
