@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
-import { DomainError } from '#src/chem/errors';
-import { type Reading, readFormula } from '#src/chem/formula';
-import { findLigand } from '#src/chem/ligands';
+import { DomainError } from '#src/chem/errors.ts';
+import { type Reading, readFormula } from '#src/chem/formula/index.ts';
+import { findLigand } from '#src/chem/ligands/index.ts';
 import file from './formula.json';
 
 interface Expectation {

@@ -1,5 +1,5 @@
 import { expect, test } from 'vitest';
-import { spinChoices } from '#src/chem/electrons';
+import { spinChoices } from '#src/chem/electrons.ts';
 import file from './terms.json';
 
 interface Ground {

@@ -85,10 +85,18 @@ const AMMINES = [
 ];
 const NITROGEN_CATIONS = ['NH4', 'N2H5', 'enH2'];
 
+/** `SO4^2-` and `SO4 2-` are SO4, `ClO4-` is ClO4, `Ca2+` is Ca. */
+function withoutCharge(ion: string): string {
+  return ion
+    .replace(/[\^ ]\d*[+-]$/, '')
+    .replace(/^([A-Z][a-z]?)\d\+$/, '$1')
+    .replace(/[+-]$/, '');
+}
+
 /** Read a context the way the rules ask. */
 export function factsOf(context: CautionContext): Facts {
   const ligandSet = new Set(context.ligands.map((l) => l.abbreviation));
-  const ionSet = new Set(context.counterIons.map((i) => i.replace(/\^?\d?[+-]$/, '')));
+  const ionSet = new Set(context.counterIons.map(withoutCharge));
   const ligand = (...names: string[]) => names.some((n) => ligandSet.has(n));
   const ion = (...names: string[]) => names.some((n) => ionSet.has(n));
   const electrolyte = context.electrolyte ?? '';

@@ -14,7 +14,7 @@ const CODE = 'aqua-ion';
 export function settleAquaIon(salt: RawSalt, context: Context): { salt: RawSalt; open: boolean } {
   const [entity] = salt.entities;
   const water = salt.solvates.find((s) => s.symbol === 'H2O');
-  if (salt.entities.length !== 1 || !entity || entity.bracketed || !water || !couldHoldWater(entity))
+  if (salt.entities.length !== 1 || !entity || entity.bracketed || !water || !couldHoldWater(entity, salt))
     return { salt, open: false };
   const each = Math.floor(water.count / entity.count);
   if (each < 1) return { salt, open: false };
@@ -41,9 +41,11 @@ export function settleAquaIon(salt: RawSalt, context: Context): { salt: RawSalt;
   return { salt, open: true };
 }
 
-/** One metal, nothing bound but halides and oxide. */
-function couldHoldWater(entity: RawEntity): boolean {
+/** One metal with nothing bound but halides, or a metal oxide cation such as VO2+ beside its anions. */
+function couldHoldWater(entity: RawEntity, salt: RawSalt): boolean {
+  const anions = salt.ions.some((one) => one.ion.charge < 0) || countOf(entity, (l) => !isOxide(l)) > 0;
   return (
+    (anions || countOf(entity, isOxide) === 0) &&
     entity.metals.length === 1 &&
     entity.metals[0]!.count === 1 &&
     entity.ligands.every((l) => /^(F|Cl|Br|I|O)$/.test(l.ligand.abbreviation))

@@ -71,13 +71,7 @@ function interpretRun(text: string, start: number, before: Marks, parts: Part[],
     const found = heteroatom
       ? { value: { element: heteroatom[0] }, length: 1 }
       : longest(text, i, (spelling) => entitySymbol(spelling, context.library));
-    if (!found && /[+^]/.test(text[i]!))
-      throw refuse(
-        'unreadable',
-        'a charge stands inside the brackets; write it behind them',
-        context.source,
-        start + i,
-      );
+    if (!found && /[+^]/.test(text[i]!)) throw chargeInside(context, start + i);
     if (!found) throw unknownToken(text.slice(i), start + i, context);
     const digits = /^\d+/.exec(text.slice(i + found.length))?.[0] ?? '';
     const count = digits === '' ? 1 : countOf(digits, context.source, start + i + found.length);
@@ -93,6 +87,7 @@ function interpretRun(text: string, start: number, before: Marks, parts: Part[],
 }
 
 function interpretGroup(group: Group, before: Marks, context: Context): Part[] {
+  if (group.charge !== null) throw chargeInside(context, group.start);
   const { marks, length } = readMarks(group.inner, before);
   const suffix = /-κ\^?\d*([A-Z][a-z]?)\S*$/.exec(group.inner);
   const name = group.inner.slice(length, suffix?.index);
@@ -192,6 +187,10 @@ function unknownLigand(name: string, start: number, context: Context): { ligand:
   const donor = /^[A-Z][a-z]?/.exec(name)?.[0] ?? 'C';
   const made = makeLigand(name, plain, charge ?? 0, donor, name, '', 'none');
   return { ligand: made, known: charge !== null };
+}
+
+function chargeInside(context: Context, offset: number): ReturnType<typeof refuse> {
+  return refuse('unreadable', 'a charge stands inside the brackets; write it behind them', context.source, offset);
 }
 
 /** A refusal for a token that is neither element nor ligand, with the nearest known one. */

@@ -32,7 +32,7 @@ function ligandText(ligand: RawLigand, bare: boolean): string {
   const hapto = ligand.hapticity !== null && !/η/.test(key) && /^C\d/.test(key) ? `η${ligand.hapticity}-` : '';
   const mark = /^(μ\d?-)?/.exec(key)?.[0] ?? '';
   const body = `${mark}${hapto}${key.slice(mark.length)}`;
-  const atom = findElement(body) !== null;
+  const atom = findElement(body) !== null && !(body === 'N' && ligand.count > 1); // N2 and N3 are molecules
   return atom && bare ? `${body}${count(ligand.count)}` : `(${body})${count(ligand.count)}`;
 }
 

@@ -40,8 +40,13 @@ interface ChargeOption {
 function splitTrailingCharge(items: readonly Item[]): { items: readonly Item[]; options: ChargeOption[] } {
   const last = items.at(-1);
   if (!last) return { items, options: [] };
-  if (last.kind === 'group')
-    return { items, options: last.charge === null ? [] : [{ charge: last.charge, count: null }] };
+  if (last.kind === 'group') {
+    if (last.charge === null) return { items, options: [] };
+    return {
+      items: [...items.slice(0, -1), { ...last, charge: null }],
+      options: [{ charge: last.charge, count: null }],
+    };
+  }
   const raised = /(\^\(?(\d*[+-]+|[+-]\d+)\)?|\((\d*[+-]|[+-]\d+)\))$/.exec(last.text);
   const plain = raised ? null : /(\d*)([+-]+)$/.exec(last.text);
   const cut = (length: number): readonly Item[] =>

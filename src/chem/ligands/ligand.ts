@@ -17,7 +17,7 @@ export interface Ligand {
   charge: number;
   /** Other charges the same atoms are met with, e.g. nitrosyl counted 1-; the usual one is `charge`. */
   alternativeCharges: readonly number[];
-  /** Donor atoms in the order of the chain. */
+  /** Donor atoms in the order of the chain, as many as the ligand can use. */
   donors: readonly string[];
   denticity: number;
   /** Denticities the ligand is met with at one centre, usual first. */
@@ -92,8 +92,11 @@ export function ligand(
 ): Ligand {
   const composition = plainComposition(formula);
   if (!composition) throw new Error(`ligand ${abbreviation}: ${formula} is no composition`);
-  const atoms = donors.split(' ');
   const { synonyms = [], denticities, hapticity = null, bite, ...rest } = options;
+  const named = donors.split(' ');
+  // A ligand that can take two places by like atoms names its donor once: nitrate, acetate.
+  const extra = Math.max(named.length, ...(denticities ?? [])) - named.length;
+  const atoms = [...named, ...Array<string>(extra).fill(named[0]!)];
   return {
     alternativeCharges: [],
     otherDonors: [],
