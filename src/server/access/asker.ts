@@ -94,3 +94,22 @@ export async function askerOfToken(token: string): Promise<Asker | null> {
   if (row?.account.state !== 'active') return null;
   return load(db, row.account, row.access_token);
 }
+
+/**
+ * Who ordered work that runs apart from the request, as the database has them by now; null when the account was closed
+ * or the token that ordered it no longer opens anything. A token's narrower rights hold for the work, too.
+ */
+export async function askerAgain({ accountId, tokenId }: Actor): Promise<Asker | null> {
+  const { db } = await database();
+  const [account] = await db
+    .select()
+    .from(accounts)
+    .where(eq(accounts.id, accountId ?? ''));
+  if (account?.state !== 'active') return null;
+  if (!tokenId) return load(db, account);
+  const [token] = await db
+    .select()
+    .from(accessTokens)
+    .where(and(eq(accessTokens.id, tokenId), isNull(accessTokens.revokedAt), gt(accessTokens.expiresAt, nowIso())));
+  return token ? load(db, account, token) : null;
+}
