@@ -198,6 +198,20 @@ describe('upload', () => {
     expect((await call('POST', '/api/spectra', { as: ada.token, json: {}, headers: noBoundary })).status).toBe(400);
   });
 
+  test('takes the metadata as a file of JSON, too, and stops a form that is too long whatever it holds', async () => {
+    const form = new FormData();
+    form.append('metadata', new Blob([JSON.stringify(told())], { type: 'application/json' }));
+    form.append('file', new Blob([variant('json as a file')]), 'a.jdx');
+    await json(call('POST', '/api/spectra', { as: ada.token, form }), 201);
+    const long = formOf(variant('long'), told());
+    long.append('more', new Blob(['x'.repeat(600_000)]), 'more.bin');
+    expect((await call('POST', '/api/spectra', { as: ada.token, form: long })).status).toBe(413);
+    const longText = new FormData();
+    longText.append('file', new Blob([variant('long text')]), 'a.jdx');
+    longText.append('metadata', new Blob([JSON.stringify(told({ notes: 'x'.repeat(210_000) }))]));
+    expect((await call('POST', '/api/spectra', { as: ada.token, form: longText })).status).toBe(413);
+  });
+
   test('acts once for one Idempotency-Key', async () => {
     const headers = { 'idempotency-key': 'try-1' };
     const body = variant('once');

@@ -1,9 +1,10 @@
 import { and, asc, eq } from 'drizzle-orm';
 import type { BandRecord } from '#src/contracts/spectra.ts';
 import { bands, centres, complexes, spectra, spectrumSolvents } from '#src/db/schema/index.ts';
-import { canJudge, type SpectrumAccess } from '#src/server/access/records.ts';
+import { type BandJudge, canJudge, type SpectrumAccess } from '#src/server/access/records.ts';
 import { bandSight } from '#src/server/access/sight.ts';
 import { database } from '#src/server/database.ts';
+import { notInSight } from '#src/server/http.ts';
 import { namesFor } from './people.ts';
 import { verdictOf } from './verdict.ts';
 
@@ -26,11 +27,13 @@ export async function describeBands(access: SpectrumAccess): Promise<BandRecord[
   );
 }
 
-/** One band as the asker gets it. */
-export async function describeBand(access: SpectrumAccess, bandId: string): Promise<BandRecord> {
-  const found = (await describeBands(access)).find(({ id }) => id === bandId);
-  if (!found) throw new Error(`band ${bandId} is out of the sight of who judged it`);
-  return found;
+/** The band that was judged, as it is now; also where its new state takes it out of the asker's sight. */
+export async function describeJudged(access: BandJudge): Promise<BandRecord> {
+  const { db } = await database();
+  const rows = await db.select().from(bands).where(eq(bands.id, access.band.id));
+  const [record] = await describe(access, rows);
+  if (!record) throw notInSight(); // deleted since
+  return record;
 }
 
 async function describe({ asker, spectrum }: SpectrumAccess, rows: Band[]): Promise<BandRecord[]> {

@@ -6,7 +6,7 @@ import { database } from '#src/server/database.ts';
 import { HttpError } from '#src/server/http.ts';
 import { nowIso } from '#src/server/ids.ts';
 import { record } from '#src/server/trail.ts';
-import { describeBand } from './band-record.ts';
+import { describeJudged } from './band-record.ts';
 import { refuse } from './refuse.ts';
 
 /**
@@ -52,5 +52,5 @@ export async function judgeBand(
       detail: { spectrum: spectrum.id, class: band.class, ...(reason ? { reason } : {}) },
     });
   });
-  return describeBand(access, band.id);
+  return describeJudged(access);
 }

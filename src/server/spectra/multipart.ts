@@ -19,6 +19,8 @@ export interface Upload {
 }
 
 const TEXT_BYTES = 200_000;
+/** What a form holds beside its file: the JSON part, boundaries and headers. */
+const BESIDES_BYTES = TEXT_BYTES + 20_000;
 const NAME_LENGTH = 200;
 
 /**
@@ -50,11 +52,11 @@ export async function readUpload(request: Request, jsonPart: string): Promise<Up
       );
       return;
     }
-    const parts: Uint8Array[] = [];
     if (name !== jsonPart || text !== undefined) fault ??= unknownPart(name, jsonPart);
     reading.push(
-      drain(stream, (chunk) => parts.push(chunk)).then(() => {
-        if (name === jsonPart) text ??= Buffer.concat(parts.slice(0, 64)).toString('utf8');
+      drainText(stream).then((value) => {
+        if (value === null) fault ??= tooLarge(TEXT_BYTES);
+        else text ??= value;
       }),
     );
   });
@@ -70,9 +72,10 @@ export async function readUpload(request: Request, jsonPart: string): Promise<Up
 
   try {
     const body = NodeReadable.fromWeb((request.body ?? new ReadableStream()) as WebStream<Uint8Array>);
-    await pipeline(body, form);
+    await pipeline(body, (source) => upTo(source, limit + BESIDES_BYTES), form);
     await Promise.all(reading);
   } catch (error) {
+    if (error instanceof HttpError) throw error;
     throw fault ?? new HttpError(400, `The form cannot be read: ${error instanceof Error ? error.message : 'broken'}`);
   }
   if (fault) throw fault;
@@ -89,6 +92,27 @@ function openForm(request: Request, limit: number) {
   } catch {
     throw new HttpError(400, 'The form cannot be read: its boundary is missing');
   }
+}
+
+/** Pass a body on, up to a number of bytes: its Content-Length may lie or be missing. @throws {HttpError} 413 */
+async function* upTo(source: AsyncIterable<Uint8Array>, limit: number): AsyncGenerator<Uint8Array> {
+  let size = 0;
+  for await (const chunk of source) {
+    size += chunk.byteLength;
+    if (size > limit) throw tooLarge(limit);
+    yield chunk;
+  }
+}
+
+/** A small part as text, or null when it is not small. */
+async function drainText(stream: Readable): Promise<string | null> {
+  const chunks: Uint8Array[] = [];
+  let size = 0;
+  await drain(stream, (chunk) => {
+    size += chunk.byteLength;
+    if (size <= TEXT_BYTES) chunks.push(chunk);
+  });
+  return size > TEXT_BYTES ? null : Buffer.concat(chunks).toString('utf8');
 }
 
 async function drain(stream: Readable, take: (chunk: Uint8Array) => void): Promise<void> {

@@ -73,7 +73,7 @@ export async function readCurve(bytes: Uint8Array, told: ReadingOptions): Promis
   return {
     title: found.title,
     block,
-    column: told.columns?.y[block] ?? 0,
+    column: told.columns?.y[block % told.columns.y.length] ?? 0,
     xUnit,
     yUnit,
     x: found.x,
