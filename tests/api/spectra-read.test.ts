@@ -262,3 +262,15 @@ describe('list', () => {
     expect((await call('GET', `/api/spectra?limit=1&sort=title&cursor=${next}`, { as: ada.token })).status).toBe(400);
   });
 });
+
+test('a member of another lab who sees a spectrum by a grant to look at it takes no files of it', async () => {
+  const hidden = await complex(north, ada.id, { visibility: 'lab' });
+  const spectrum = await upload(ada.token, hidden.accession, difdup(curve), { visibility: 'lab' });
+  const partner = await person('Pia', { labs: { [south]: 'lead' } });
+  expect((await call('GET', `/api/spectra/${spectrum.id}`, { as: partner.token })).status).toBe(404);
+  await share({ labId: north, makerId: lead.id, complexId: hidden.id, guestId: partner.id });
+  expect(await json(call('GET', `/api/spectra/${spectrum.id}`, { as: partner.token }))).toMatchObject({
+    may: { download: false },
+  });
+  expect((await call('GET', `/api/spectra/${spectrum.id}/file`, { as: partner.token })).status).toBe(403);
+});

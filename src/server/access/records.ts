@@ -3,7 +3,7 @@ import { normaliseAccession } from '../../contracts/accession.ts';
 import { bands, complexes, labs, preparations, spectra } from '../../db/schema/index.ts';
 import { database } from '../database.ts';
 import { HttpError, notInSight } from '../http.ts';
-import { type Asker, isMember } from './asker.ts';
+import type { Asker } from './asker.ts';
 import { bandSight, complexSight, preparationSight, spectrumDownload, spectrumSight } from './sight.ts';
 
 // Proofs of access. Only this folder makes them, and the services ask for one: an endpoint that forgets to ask does
@@ -143,9 +143,9 @@ export async function mayTakeSpectrum(asker: Asker, id: string): Promise<Spectru
   return grant({ asker, complex: seen.complex, spectrum: seen.spectrum });
 }
 
-/** Whether a guest may take files of this spectrum; a member who sees it may. */
+/** Whether the asker may take files of this spectrum; a member, too, may see one by a grant to look at it alone. */
 export const canTakeSpectrum = async (asker: Asker, id: string): Promise<boolean> =>
-  isMember(asker) || (await findSpectrum(id, spectrumDownload(asker))) !== undefined;
+  (await findSpectrum(id, spectrumDownload(asker))) !== undefined;
 
 export const canChangeSpectrum = (asker: Asker, spectrum: typeof spectra.$inferSelect): boolean =>
   asker.scopes.has('write') &&
