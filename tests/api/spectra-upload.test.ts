@@ -235,6 +235,10 @@ describe('upload', () => {
     const written = await (await call('GET', `/api/spectra/${made.id}/jcamp`, { as: ada.token })).text();
     expect(written).toMatch(/^##TITLE= SYNTHETIC/);
     expect(written).toMatch(/##DATA PROCESSING= SYNTHETIC/);
+    // Nickel compounds carry usual cautions: they travel with the file, in lines that the standard takes for comments.
+    expect(made.cautions).not.toEqual([]);
+    expect(written).toMatch(/\r\n\$\$ Caution: /);
+    expect(written.split('\r\n').every((line) => line.length <= 80)).toBe(true);
     const { readSpectrumFile } = await import('#src/chem/spectra/index.ts');
     const [again] = readSpectrumFile(new TextEncoder().encode(written));
     expect(again!.x).toEqual(curve.x);
