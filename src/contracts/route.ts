@@ -30,6 +30,8 @@ export interface Route<Query extends z.ZodType = z.ZodType, Body extends z.ZodTy
   answers: z.ZodType | string | null;
   /** Needs If-Match. */
   conditional?: boolean;
+  /** Serves ranges of its file. */
+  ranges?: boolean;
   /** Further refusals worth telling in the document. */
   refusals?: Record<number, string>;
 }

@@ -306,6 +306,8 @@ export const sharingRoutes = {
     tag: share,
     status: 200,
     answers: 'application/zip',
+    ranges: true,
+    refusals: { 409: 'It is not ready yet', 404: 'Not in sight, or access to any of its content ended' },
   }),
   listTokens: route({
     ...read,

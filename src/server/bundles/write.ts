@@ -6,6 +6,7 @@ import { database } from '../database.ts';
 import { jcampFile } from '../spectra/download.ts';
 import { openOriginal } from '../spectra/original.ts';
 import { loadFilePoints } from '../spectra/stored-points.ts';
+import { VERSION } from '../version.ts';
 import { BagStream } from './bag.ts';
 import type { Content } from './content.ts';
 import { dataPackage, roCrate } from './metadata.ts';
@@ -13,8 +14,8 @@ import { csvPath, jcampPath, originalPath } from './paths.ts';
 import { type Facts, licenceText, readmeText } from './readme.ts';
 import { csvOf, tablesOf } from './tables.ts';
 
-/** Raised whenever the layout changes: the same content by another layout is another bundle. */
-const SOFTWARE = 'Zaffre 0.1.0';
+/** The same content by another release may be laid out otherwise, and is another bundle. */
+const SOFTWARE = `Zaffre ${VERSION}`;
 /** UUIDv5 namespace of our bundles, drawn once. */
 const NAMESPACE = '3f0c7c1e-5f0a-4f0e-9d53-6a1f7d2b8c41';
 

@@ -1,0 +1,2 @@
+/** The release, as in package.json (a test compares them). */
+export const VERSION = '0.1.0';
