@@ -64,10 +64,10 @@ export async function resolveItems(tx: Tx, asker: Asker, items: FolioItem[], poi
 const inJson = (column: typeof complexes.accession | typeof spectra.id, values: string[]) =>
   sql`${column} in (select value from json_each(${JSON.stringify(values)}))`;
 
-/** Make these the items of a folio. Items that the asker does not see, put in by others, stay where they are. */
+/** Make these the items of a folio. Items put in by others that the asker may not pass on stay where they are. */
 export async function replaceItems(tx: Tx, asker: Asker, folioId: string, items: Item[]): Promise<void> {
   const inFolio = eq(folioItems.folioId, folioId);
-  const visible = sql`${folioItems.complexId} in (select ${complexes.id} from ${complexes} where ${complexSight(asker)})`;
+  const visible = sql`${folioItems.complexId} in (select ${complexes.id} from ${complexes} where ${complexSight(withoutGrants(asker))})`;
   const hidden = await tx
     .select()
     .from(folioItems)
