@@ -110,7 +110,7 @@ export function DataTable<T>(props: DataTableProps<T>) {
                     <button
                       type="button"
                       onClick={column.getToggleSortingHandler()}
-                      className="inline-flex min-h-6 items-center gap-1 hover:text-ink"
+                      className={`inline-flex min-h-6 items-center gap-1 hover:text-ink ${byId.get(column.id)!.figures ? 'flex-row-reverse' : ''}`}
                     >
                       {byId.get(column.id)!.header}
                       <Arrow aria-hidden="true" size={12} className={order ? '' : 'invisible'} />

@@ -1,0 +1,35 @@
+/** What waits for somebody, as the first page shows it; it is not on the wire, since the page is drawn on the server. */
+export interface DaySheet {
+  drafts: Waiting<{ accession: string; formula: string; lab: string; updatedAt: string }>;
+  spectrumDrafts: Waiting<{ id: string; title: string; formula: string; createdAt: string }>;
+  /** Spectra with assignments that the asker may attest and did not propose. */
+  toAttest: Waiting<{ id: string; title: string; formula: string; lab: string; bands: number; classes: string[] }>;
+  /** Sent by the asker and still open. */
+  invitations: Waiting<{ id: string; email: string; to: string; href: string; expiresAt: string }>;
+  recentSpectra: {
+    id: string;
+    title: string;
+    formula: string;
+    accession: string;
+    lab: string;
+    colour: string | null;
+    createdAt: string;
+    synthetic: boolean;
+  }[];
+  /** Folios granted to the asker by labs of others. */
+  folios: {
+    id: string;
+    name: string;
+    lab: string;
+    items: number;
+    licence: string;
+    access: 'view' | 'download';
+    expires: string | null;
+  }[];
+}
+
+/** The first few, and how many there are in all. */
+export interface Waiting<T> {
+  items: T[];
+  total: number;
+}
