@@ -1,4 +1,4 @@
-import { findElement } from './elements';
+import { findElement } from './elements.ts';
 
 /** Fields for which spin states are told apart. */
 export type FieldGeometry = 'OC-6' | 'T-4' | 'SP-4';

@@ -1,4 +1,4 @@
-import { type CautionRule, type Facts, isRadioactive } from './rule';
+import { type CautionRule, type Facts, isRadioactive } from './rule.ts';
 
 const SDS = 'safety data sheet';
 const CLP = 'CLP Regulation (EC) 1272/2008, Annex VI (from memory)';

@@ -1,5 +1,5 @@
-import { strongOxidant } from './composition-rules';
-import type { CautionRule, Facts } from './rule';
+import { strongOxidant } from './composition-rules.ts';
+import type { CautionRule, Facts } from './rule.ts';
 
 const CLP = 'CLP Regulation (EC) 1272/2008, Annex VI (from memory)';
 const BRETHERICK = "Bretherick's Handbook of Reactive Chemical Hazards, 8th ed. 2017 (from memory)";

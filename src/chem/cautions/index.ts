@@ -1,8 +1,8 @@
-import { compositionRules } from './composition-rules';
-import { conditionRules } from './condition-rules';
-import { type Caution, type CautionContext, type CautionRule, factsOf } from './rule';
+import { compositionRules } from './composition-rules.ts';
+import { conditionRules } from './condition-rules.ts';
+import { type Caution, type CautionContext, type CautionRule, factsOf } from './rule.ts';
 
-export type { Caution, CautionContext, CautionRule, Facts } from './rule';
+export type { Caution, CautionContext, CautionRule, Facts } from './rule.ts';
 
 /** Stands on every panel of cautions. */
 export const STANDING_SENTENCE =

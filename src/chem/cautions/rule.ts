@@ -1,4 +1,4 @@
-import { type Composition, findElement } from '../elements';
+import { type Composition, findElement } from '../elements.ts';
 
 /** What the rules look at. All but the composition may be unknown; a rule that lacks its facts stays silent. */
 export interface CautionContext {

@@ -1,7 +1,7 @@
-import { DomainError } from '../errors';
-import { type ScreenColour, xyzToSrgb } from './srgb';
-import { chromaticity, type Triple, tristimulus } from './tristimulus';
-import { nameColour } from './words';
+import { DomainError } from '../errors.ts';
+import { type ScreenColour, xyzToSrgb } from './srgb.ts';
+import { chromaticity, type Triple, tristimulus } from './tristimulus.ts';
+import { nameColour } from './words.ts';
 
 /** Spectrum of a dissolved complex, and how it is looked at. */
 export interface SolutionSpectrum {

@@ -1,4 +1,4 @@
-import type { Triple } from './tristimulus';
+import type { Triple } from './tristimulus.ts';
 
 /** A colour for a screen. */
 export interface ScreenColour {

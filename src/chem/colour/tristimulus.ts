@@ -1,5 +1,5 @@
-import { DomainError } from '../errors';
-import { table } from './cie-tables';
+import { DomainError } from '../errors.ts';
+import { table } from './cie-tables.ts';
 
 /** X, Y, Z with Y = 100 for the illuminant itself. */
 export type Triple = [number, number, number];

@@ -1,5 +1,5 @@
-import { DomainError } from '../errors';
-import { type Triple, whiteD65 } from './tristimulus';
+import { DomainError } from '../errors.ts';
+import { type Triple, whiteD65 } from './tristimulus.ts';
 
 /** A stretch of the visible, the word for light of it, and the word for what is seen when it is taken away. */
 interface Stretch {

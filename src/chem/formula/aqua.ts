@@ -1,7 +1,7 @@
-import { findLigand } from '../ligands';
-import type { Context } from './entity';
-import { findAnion } from './lexicon';
-import type { RawEntity, RawLigand, RawSalt } from './raw';
+import { findLigand } from '../ligands/index.ts';
+import type { Context } from './entity.ts';
+import { findAnion } from './lexicon.ts';
+import type { RawEntity, RawLigand, RawSalt } from './raw.ts';
 
 const CODE = 'aqua-ion';
 

@@ -1,5 +1,5 @@
-import type { Part } from './entity';
-import type { Fragment, RawEntity, RawLigand, RawMetal } from './raw';
+import type { Part } from './entity.ts';
+import type { Fragment, RawEntity, RawLigand, RawMetal } from './raw.ts';
 
 /** Where an entity stands and what was written about it outside its brackets. */
 export interface EntityFrame {

@@ -1,9 +1,9 @@
-import { isDBlock } from '../elements';
-import { chargeOf } from './charge-text';
-import type { Context } from './entity';
-import { commonStates, stateLabel } from './oxidation-states';
-import type { RawEntity, RawSalt } from './raw';
-import { usualCharges } from './share';
+import { isDBlock } from '../elements.ts';
+import { chargeOf } from './charge-text.ts';
+import type { Context } from './entity.ts';
+import { commonStates, stateLabel } from './oxidation-states.ts';
+import type { RawEntity, RawSalt } from './raw.ts';
+import { usualCharges } from './share.ts';
 
 /** Charges after balancing; null where a question is open. */
 export interface Balance {

@@ -1,4 +1,4 @@
-import type { RawEntity, RawLigand } from './raw';
+import type { RawEntity, RawLigand } from './raw.ts';
 
 /** Polyhedral symbols by coordination number, usual first. @see Red Book 2005, table IR-9.2 */
 const POLYHEDRA: Readonly<Record<number, readonly string[]>> = {

@@ -1,10 +1,10 @@
-import { findElement } from '../elements';
-import { findLigand, type Ligand, type LigandIndex, ligand as makeLigand, nearestLigand } from '../ligands';
-import { compositionOf, entitySymbol, longest } from './lexicon';
-import type { NormalText } from './normalise';
-import type { Fragment, RawLigand, RawMetal } from './raw';
-import { countOf, type Group, type Item, refuse } from './syntax';
-import type { Answers, Question } from './types';
+import { findElement } from '../elements.ts';
+import { findLigand, type Ligand, type LigandIndex, ligand as makeLigand, nearestLigand } from '../ligands/index.ts';
+import { compositionOf, entitySymbol, longest } from './lexicon.ts';
+import type { NormalText } from './normalise.ts';
+import type { Fragment, RawLigand, RawMetal } from './raw.ts';
+import { countOf, type Group, type Item, refuse } from './syntax.ts';
+import type { Answers, Question } from './types.ts';
 
 /** What interpreting needs besides the text: library, answers given, and a place for questions raised. */
 export interface Context {

@@ -1,7 +1,7 @@
-import { type Composition, hillFormula } from '../elements';
-import { fragmentKey, ligandKey } from './assemble';
-import { chargeOf } from './charge-text';
-import type { RawEntity } from './raw';
+import { type Composition, hillFormula } from '../elements.ts';
+import { fragmentKey, ligandKey } from './assemble.ts';
+import { chargeOf } from './charge-text.ts';
+import type { RawEntity } from './raw.ts';
 
 /**
  * Canonical key of an entity: composition, charge, ligands with linkage and bridges, and who holds what where fragments

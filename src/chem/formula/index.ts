@@ -1,5 +1,5 @@
-export { compareSymbols } from './print';
-export { cautionContext, readFormula } from './read';
+export { compareSymbols } from './print.ts';
+export { cautionContext, readFormula } from './read.ts';
 export type {
   Answers,
   CentreReading,
@@ -9,4 +9,4 @@ export type {
   Question,
   Reading,
   Solvate,
-} from './types';
+} from './types.ts';

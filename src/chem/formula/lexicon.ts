@@ -1,6 +1,6 @@
-import { type Composition, findElement } from '../elements';
-import { findLigand, type Ligand, type LigandIndex } from '../ligands';
-import { anions, cations, type Ion, metalOxoanions, solvents } from './ions';
+import { type Composition, findElement } from '../elements.ts';
+import { findLigand, type Ligand, type LigandIndex } from '../ligands/index.ts';
+import { anions, cations, type Ion, metalOxoanions, solvents } from './ions.ts';
 
 /** Longest spelling that is looked for inside a run of text, in characters. */
 const WINDOW = 24;

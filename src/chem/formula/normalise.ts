@@ -1,4 +1,4 @@
-import { DomainError } from '../errors';
+import { DomainError } from '../errors.ts';
 
 /** Text in one alphabet, with the offset in the original of each of its characters (and of its end). */
 export interface NormalText {

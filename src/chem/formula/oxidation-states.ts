@@ -1,4 +1,4 @@
-import { findElement } from '../elements';
+import { findElement } from '../elements.ts';
 
 // Element: common states / all states met in isolated compounds. N. N. Greenwood & A. Earnshaw, Chemistry of the
 // Elements, 2nd ed. 1997, tables of oxidation states of each group (from memory); Ir(IX) only as a gas-phase ion.

@@ -1,7 +1,7 @@
-import { findElement } from '../elements';
-import { fragmentKey, ligandKey } from './assemble';
-import { chargeOf } from './charge-text';
-import type { Fragment, RawEntity, RawLigand, RawMetal, RawSalt } from './raw';
+import { findElement } from '../elements.ts';
+import { fragmentKey, ligandKey } from './assemble.ts';
+import { chargeOf } from './charge-text.ts';
+import type { Fragment, RawEntity, RawLigand, RawMetal, RawSalt } from './raw.ts';
 
 /**
  * Order of symbols in a formula: by alphabet, letter by letter of element symbols, so that CO comes before Cl.

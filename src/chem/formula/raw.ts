@@ -1,6 +1,6 @@
-import type { Composition } from '../elements';
-import type { Ligand } from '../ligands';
-import type { Ion } from './ions';
+import type { Composition } from '../elements.ts';
+import type { Ligand } from '../ligands/index.ts';
+import type { Ion } from './ions.ts';
 
 /** A ligand as written in an entity, before charges are balanced. */
 export interface RawLigand {

@@ -1,21 +1,21 @@
-import { type CautionContext, cautionsFor } from '../cautions';
-import { addCompositions, type Composition, findElement, hillFormula, isDBlock, molarMass } from '../elements';
-import { DomainError } from '../errors';
-import { ligands as builtIn, indexLigands, type Ligand, type LigandIndex } from '../ligands';
-import { settleAquaIon } from './aqua';
-import { type Balance, balanceCharges } from './balance';
-import { coordination, geometriesFor } from './coordination';
-import type { Context } from './entity';
-import { identityOf } from './identity';
-import { compositionOf } from './lexicon';
-import { type NormalText, normalise } from './normalise';
-import { entityText, ionText, type PrintCharges, saltText } from './print';
-import type { RawEntity, RawSalt } from './raw';
-import { applyRepairs, mistypedMetal, type Repair, suspiciousTokens } from './repairs';
-import { interpretSalt } from './salt';
-import { shareCharge } from './share';
-import { type Component, parseSyntax } from './syntax';
-import type { Answers, EntityReading, LigandReading, Question, Reading } from './types';
+import { type CautionContext, cautionsFor } from '../cautions/index.ts';
+import { addCompositions, type Composition, findElement, hillFormula, isDBlock, molarMass } from '../elements.ts';
+import { DomainError } from '../errors.ts';
+import { ligands as builtIn, indexLigands, type Ligand, type LigandIndex } from '../ligands/index.ts';
+import { settleAquaIon } from './aqua.ts';
+import { type Balance, balanceCharges } from './balance.ts';
+import { coordination, geometriesFor } from './coordination.ts';
+import type { Context } from './entity.ts';
+import { identityOf } from './identity.ts';
+import { compositionOf } from './lexicon.ts';
+import { type NormalText, normalise } from './normalise.ts';
+import { entityText, ionText, type PrintCharges, saltText } from './print.ts';
+import type { RawEntity, RawSalt } from './raw.ts';
+import { applyRepairs, mistypedMetal, type Repair, suspiciousTokens } from './repairs.ts';
+import { interpretSalt } from './salt.ts';
+import { shareCharge } from './share.ts';
+import { type Component, parseSyntax } from './syntax.ts';
+import type { Answers, EntityReading, LigandReading, Question, Reading } from './types.ts';
 
 const builtInIndex = indexLigands(builtIn);
 
@@ -232,6 +232,7 @@ function entityReading(entity: RawEntity, charge: number | null, waterOpen: bool
         denticity: denticity.get(l) ?? 1,
         hapticity: l.hapticity,
         donors: l.donors.slice(0, l.hapticity ?? denticity.get(l) ?? l.donors.length),
+        ...shapeOf(l.ligand, denticity.get(l) ?? 1),
         bridging: l.mu !== null,
         name: l.ligand.name,
       }),
@@ -240,6 +241,19 @@ function entityReading(entity: RawEntity, charge: number | null, waterOpen: bool
     geometries: geometriesFor(coordinationNumber, centre?.dCount ?? null),
     configuration: entity.configuration,
     identity: identityOf(entity, composition, charge),
+  };
+}
+
+/** How a ligand holds its donors, where it uses all of them. */
+function shapeOf(
+  { bite, span, planar, donors }: Ligand,
+  denticity: number,
+): Pick<LigandReading, 'bite' | 'span' | 'planar'> {
+  if (denticity < 2 || denticity !== donors.length) return {};
+  return {
+    bite: bite.map(([a, b]) => [a, b]),
+    ...(span ? { span } : {}),
+    ...(planar ? { planar } : {}),
   };
 }
 

@@ -1,5 +1,5 @@
-import { isDBlock } from '../elements';
-import type { NormalText } from './normalise';
+import { isDBlock } from '../elements.ts';
+import type { NormalText } from './normalise.ts';
 
 /** A token that is probably mistyped, at its place in the normalised text. */
 export interface Repair {

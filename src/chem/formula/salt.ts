@@ -1,12 +1,12 @@
-import { isDBlock } from '../elements';
-import { assembleEntity } from './assemble';
-import { type Context, holdsMetal, interpretParts, runHoldsMetal } from './entity';
-import type { Ion } from './ions';
-import { compositionOf, findAnion, findCation, findSolvent, longest, metalOxoanion } from './lexicon';
-import type { BareMetal, RawSalt } from './raw';
-import { stereoBefore, withoutStereo } from './stereo';
-import { type Component, countOf, type Group, type Item, readCharge, refuse } from './syntax';
-import { interpretUnbracketed } from './unbracketed';
+import { isDBlock } from '../elements.ts';
+import { assembleEntity } from './assemble.ts';
+import { type Context, holdsMetal, interpretParts, runHoldsMetal } from './entity.ts';
+import type { Ion } from './ions.ts';
+import { compositionOf, findAnion, findCation, findSolvent, longest, metalOxoanion } from './lexicon.ts';
+import type { BareMetal, RawSalt } from './raw.ts';
+import { stereoBefore, withoutStereo } from './stereo.ts';
+import { type Component, countOf, type Group, type Item, readCharge, refuse } from './syntax.ts';
+import { interpretUnbracketed } from './unbracketed.ts';
 
 /** Everything typed, taken apart into entities, free ions and solvates. */
 export function interpretSalt(components: readonly Component[], context: Context): RawSalt {

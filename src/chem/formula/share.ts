@@ -1,10 +1,10 @@
-import { dElectronCount } from '../electrons';
-import { findElement, isDBlock } from '../elements';
-import { chargeOf } from './charge-text';
-import type { Context } from './entity';
-import { commonStates, type LigandField, plausibility, stateLabel } from './oxidation-states';
-import type { RawEntity, RawLigand, RawMetal } from './raw';
-import type { CentreReading } from './types';
+import { dElectronCount } from '../electrons.ts';
+import { findElement, isDBlock } from '../elements.ts';
+import { chargeOf } from './charge-text.ts';
+import type { Context } from './entity.ts';
+import { commonStates, type LigandField, plausibility, stateLabel } from './oxidation-states.ts';
+import type { RawEntity, RawLigand, RawMetal } from './raw.ts';
+import type { CentreReading } from './types.ts';
 
 /** Atoms inside an entity that keep one state: heteroatoms of polyoxometalates, and s-block cations between oxides. */
 const FIXED: Readonly<Record<string, number>> = {

@@ -1,4 +1,4 @@
-import type { Item } from './syntax';
+import type { Item } from './syntax.ts';
 
 const STEREO_END = /((?:(?:trans|cis|fac|mer|rac|meso|Δ|Λ)-)+)$/;
 const STEREO_START = /^((?:(?:trans|cis|fac|mer|rac|meso|Δ|Λ)-)+)/;

@@ -1,5 +1,5 @@
-import { DomainError } from '../errors';
-import type { NormalText } from './normalise';
+import { DomainError } from '../errors.ts';
+import type { NormalText } from './normalise.ts';
 
 /** Letters, digits and marks between brackets, counts included: `CoCl2`, `K4`, `SO4^2-`. */
 export interface Run {

@@ -1,5 +1,5 @@
-import type { Caution } from '../cautions';
-import type { Composition } from '../elements';
+import type { Caution } from '../cautions/index.ts';
+import type { Composition } from '../elements.ts';
 
 /** Something a person must settle: the code is the key of the answer, the choices its values. */
 export interface Question {
@@ -33,6 +33,11 @@ export interface LigandReading {
   hapticity: number | null;
   /** Donor atoms in the order of the chain. */
   donors: string[];
+  /** Pairs of those donors joined by a chelate ring; left out where it binds by fewer donors than it has. */
+  bite?: [number, number][];
+  /** Where a stiff tridentate always sits. */
+  span?: 'fac' | 'mer';
+  planar?: boolean;
   bridging: boolean;
   name: string;
 }

@@ -1,12 +1,12 @@
-import { findElement } from '../elements';
-import { assembleEntity } from './assemble';
-import { type Context, holdsMetal, interpretParts, type Part, runHoldsMetal } from './entity';
-import type { Ion } from './ions';
-import { findAnion, findCation, longest } from './lexicon';
-import { commonStates } from './oxidation-states';
-import type { RawIon, RawSalt } from './raw';
-import { withoutStereo } from './stereo';
-import { type Component, countOf, type Item, readCharge } from './syntax';
+import { findElement } from '../elements.ts';
+import { assembleEntity } from './assemble.ts';
+import { type Context, holdsMetal, interpretParts, type Part, runHoldsMetal } from './entity.ts';
+import type { Ion } from './ions.ts';
+import { findAnion, findCation, longest } from './lexicon.ts';
+import { commonStates } from './oxidation-states.ts';
+import type { RawIon, RawSalt } from './raw.ts';
+import { withoutStereo } from './stereo.ts';
+import { type Component, countOf, type Item, readCharge } from './syntax.ts';
 
 /**
  * Everyday formulae without square brackets. Leading cations and trailing anions that hardly bind (sulfate,

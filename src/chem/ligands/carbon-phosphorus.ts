@@ -1,4 +1,4 @@
-import { type Ligand, ligand } from './ligand';
+import { type Ligand, ligand } from './ligand.ts';
 
 const PPH2 = 'P(c1ccccc1)c1ccccc1';
 

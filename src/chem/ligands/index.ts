@@ -1,11 +1,11 @@
-import { carbonPhosphorusLigands } from './carbon-phosphorus';
-import { type Ligand, plainComposition } from './ligand';
-import { nitrogenLigands } from './nitrogen';
-import { oxygenSulfurLigands } from './oxygen-sulfur';
-import { simpleLigands } from './simple';
+import { carbonPhosphorusLigands } from './carbon-phosphorus.ts';
+import { type Ligand, plainComposition } from './ligand.ts';
+import { nitrogenLigands } from './nitrogen.ts';
+import { oxygenSulfurLigands } from './oxygen-sulfur.ts';
+import { simpleLigands } from './simple.ts';
 
-export type { Ligand, LigandOptions, PiCharacter } from './ligand';
-export { ligand, plainComposition } from './ligand';
+export type { Ligand, LigandOptions, PiCharacter } from './ligand.ts';
+export { ligand, plainComposition } from './ligand.ts';
 
 /** The built-in library. A lab's own ligands are handed to the reader beside it. */
 export const ligands: readonly Ligand[] = [

@@ -1,4 +1,4 @@
-import { addCompositions, type Composition, findElement } from '../elements';
+import { addCompositions, type Composition, findElement } from '../elements.ts';
 
 /** What a ligand can do with metal dπ electrons: give to them, neither, or take from them. */
 export type PiCharacter = 'donor' | 'none' | 'acceptor';
@@ -26,6 +26,10 @@ export interface Ligand {
   hapticity: number | null;
   /** Pairs of donor indices linked by a chelate ring. */
   bite: readonly (readonly [number, number])[];
+  /** Where a stiff tridentate always sits: its ends face to face (mer) or all three on one face (fac). */
+  span?: 'fac' | 'mer';
+  /** All donors in one plane with the metal, as a macrocycle or a salicylaldimine holds them. */
+  planar?: boolean;
   /** Donor atoms the ligand can turn to instead, e.g. dmso by S. */
   otherDonors: readonly string[];
   /** Able to hold two centres, so that it bridges when written between two metals. */
@@ -51,6 +55,8 @@ export interface LigandOptions {
   denticities?: readonly number[];
   hapticity?: number;
   bite?: readonly (readonly [number, number])[];
+  span?: 'fac' | 'mer';
+  planar?: boolean;
   otherDonors?: readonly string[];
   canBridge?: boolean;
   redoxActive?: boolean;

@@ -1,4 +1,4 @@
-import { type Ligand, ligand, ring } from './ligand';
+import { type Ligand, ligand, ring } from './ligand.ts';
 
 const JORGENSEN = 'f: C. K. Jørgensen, Modern Aspects of Ligand Field Theory, 1971, p. 347 (reprinted table)';
 const SERIES = 'series: common practice';
@@ -39,6 +39,7 @@ export const nitrogenLigands: readonly Ligand[] = [
   ligand('tacn', 'C6H15N3', 0, 'N N N', '1,4,7-triazacyclononane', 'C1CNCCNCCN1', 'none', {
     synonyms: ['9aneN3', '[9]aneN3'],
     bite: ring(3),
+    span: 'fac',
   }),
   ligand('sep', 'C12H30N8', 0, 'N N N N N N', 'sepulchrate', 'C1CNCN2CNCCNCN(CN1)CNCCNC2', 'none', {
     synonyms: ['sepulchrate'],
@@ -162,11 +163,15 @@ export const nitrogenLigands: readonly Ligand[] = [
   ligand('bpz', 'C8H6N4', 0, 'N N', '2,2′-bipyrazine', 'c1cnc(cn1)-c1cnccn1', 'acceptor'),
   ligand('tpy', 'C15H11N3', 0, 'N N N', '2,2′:6′,2″-terpyridine', 'c1ccnc(c1)-c1cccc(n1)-c1ccccn1', 'acceptor', {
     synonyms: ['terpy', 'trpy', 'terpyridine'],
+    span: 'mer',
   }),
-  ligand('bpp', 'C11H9N5', 0, 'N N N', '2,6-di(pyrazol-1-yl)pyridine', 'c1cnn(c1)-c1cccc(n1)-n1cccn1', 'acceptor'),
+  ligand('bpp', 'C11H9N5', 0, 'N N N', '2,6-di(pyrazol-1-yl)pyridine', 'c1cnn(c1)-c1cccc(n1)-n1cccn1', 'acceptor', {
+    span: 'mer',
+  }),
   ligand('pic', 'C6H4NO2', -1, 'N O', 'picolinato', '[O-]C(=O)c1ccccn1', 'acceptor', { synonyms: ['picolinato'] }),
   ligand('dipic', 'C7H3NO4', -2, 'O N O', 'dipicolinato', '[O-]C(=O)c1cccc(n1)C(=O)[O-]', 'acceptor', {
     synonyms: ['pdc'],
+    span: 'mer',
   }),
   ligand('q', 'C9H6NO', -1, 'N O', 'quinolin-8-olato', '[O-]c1cccc2cccnc12', 'acceptor', {
     synonyms: ['quin', 'oxine'],
@@ -179,6 +184,7 @@ export const nitrogenLigands: readonly Ligand[] = [
   ligand('Tp', 'C9H10BN6', -1, 'N N N', 'hydrotris(pyrazol-1-yl)borato', '[BH-](n1cccn1)(n1cccn1)n1cccn1', 'none', {
     synonyms: ['HBpz3', 'HB(pz)3'],
     bite: ring(3),
+    span: 'fac',
   }),
   ligand(
     'salen',
@@ -188,6 +194,7 @@ export const nitrogenLigands: readonly Ligand[] = [
     'N,N′-bis(salicylidene)ethylenediaminato',
     '[O-]c1ccccc1C=NCCN=Cc1ccccc1[O-]',
     'donor',
+    { planar: true },
   ),
   ligand(
     'salophen',
@@ -199,6 +206,7 @@ export const nitrogenLigands: readonly Ligand[] = [
     'donor',
     {
       synonyms: ['salphen'],
+      planar: true,
     },
   ),
   ligand('sal', 'C7H5O2', -1, 'O O', 'salicylaldehydato', '[O-]c1ccccc1C=O', 'donor'),
@@ -213,6 +221,7 @@ export const nitrogenLigands: readonly Ligand[] = [
     {
       synonyms: ['tpp'],
       bite: ring(4),
+      planar: true,
     },
   ),
   ligand(
@@ -226,6 +235,7 @@ export const nitrogenLigands: readonly Ligand[] = [
     {
       synonyms: ['oep'],
       bite: ring(4),
+      planar: true,
     },
   ),
   ligand(
@@ -239,6 +249,7 @@ export const nitrogenLigands: readonly Ligand[] = [
     {
       synonyms: ['Pc'],
       bite: ring(4),
+      planar: true,
     },
   ),
 ];

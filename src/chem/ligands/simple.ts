@@ -1,4 +1,4 @@
-import { type Ligand, ligand } from './ligand';
+import { type Ligand, ligand } from './ligand.ts';
 
 const JORGENSEN = 'f: C. K. Jørgensen, Modern Aspects of Ligand Field Theory, 1971, p. 347 (reprinted table)';
 const SERIES = 'series: common practice';

@@ -1,5 +1,5 @@
-import { DomainError } from '../errors';
-import type { YUnit } from './types';
+import { DomainError } from '../errors.ts';
+import type { YUnit } from './types.ts';
 
 /** What turns absorbance into a molar quantity: concentration in mol dm⁻³, path length in cm. */
 export interface CellConditions {

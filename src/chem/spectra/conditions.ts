@@ -1,6 +1,6 @@
-import { findSolvent } from './solvents';
-import type { YUnit } from './types';
-import { convertEnergy } from './units';
+import { findSolvent } from './solvents.ts';
+import type { YUnit } from './types.ts';
+import { convertEnergy } from './units.ts';
 
 /** A doubt about a measurement: a code for programs, a sentence for people. */
 export interface Flag {

@@ -1,5 +1,5 @@
-import { DomainError } from '../errors';
-import { limits } from './types';
+import { DomainError } from '../errors.ts';
+import { limits } from './types.ts';
 
 const SIGNATURES: readonly { bytes: readonly number[]; what: string }[] = [
   { bytes: [0x50, 0x4b, 0x03, 0x04], what: 'a workbook or a ZIP archive' },

@@ -1,4 +1,4 @@
-import { type LocalFit, smooth } from './smooth';
+import { type LocalFit, smooth } from './smooth.ts';
 
 /** A band as picked: position and full width in cm⁻¹, height in the units of y. */
 export interface PickedBand {

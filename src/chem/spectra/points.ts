@@ -1,4 +1,4 @@
-import { DomainError } from '../errors';
+import { DomainError } from '../errors.ts';
 
 /** A curve as two arrays of one length. */
 export interface Curve {

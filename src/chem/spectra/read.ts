@@ -1,8 +1,8 @@
-import { DomainError } from '../errors';
-import { decodeText, splitLines } from './decode-text';
-import { readDelimited } from './delimited/read';
-import { readJcamp } from './jcamp/read';
-import type { ReadOptions, SpectrumBlock } from './types';
+import { DomainError } from '../errors.ts';
+import { decodeText, splitLines } from './decode-text.ts';
+import { readDelimited } from './delimited/read.ts';
+import { readJcamp } from './jcamp/read.ts';
+import type { ReadOptions, SpectrumBlock } from './types.ts';
 
 /**
  * Spectra of a file in JCAMP-DX (4.24 to 5.01: every ordinate form, linked blocks, NTUPLES pages, peaks) or delimited

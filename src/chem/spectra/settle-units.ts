@@ -1,5 +1,5 @@
-import type { ReadOptions, SpectrumBlock, SpectrumWarning } from './types';
-import { rangeOf, suggestXUnit } from './unit-names';
+import type { ReadOptions, SpectrumBlock, SpectrumWarning } from './types.ts';
+import { rangeOf, suggestXUnit } from './unit-names.ts';
 
 /** Fractions of light above this are taken to be per cent written under the wrong name (scatter stays below it). */
 const LARGEST_FRACTION = 1.5;

@@ -1,4 +1,4 @@
-import type { XUnit, YUnit } from './types';
+import type { XUnit, YUnit } from './types.ts';
 
 /** Spellings of abscissa units, after `plain`. */
 const X_NAMES: Record<XUnit, readonly string[]> = {

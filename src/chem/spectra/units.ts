@@ -1,5 +1,5 @@
-import { DomainError } from '../errors';
-import type { XUnit } from './types';
+import { DomainError } from '../errors.ts';
+import type { XUnit } from './types.ts';
 
 // CODATA 2018 and 2022: exact since the SI of 2019.
 const PLANCK = 6.62607015e-34; // J s

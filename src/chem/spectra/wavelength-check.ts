@@ -1,4 +1,4 @@
-import { DomainError } from '../errors';
+import { DomainError } from '../errors.ts';
 
 /** A reference band and where an instrument found it, nm. */
 export interface ReferenceReading {

@@ -1,6 +1,6 @@
 import Papa from 'papaparse';
-import { requirePoints, type SpectrumToWrite } from './jcamp/write';
-import { xUnitNames, yUnitNames } from './unit-names';
+import { requirePoints, type SpectrumToWrite } from './jcamp/write.ts';
+import { xUnitNames, yUnitNames } from './unit-names.ts';
 
 /**
  * The points as CSV (RFC 4180): one line of column heads with their units, then x and y with a full stop as decimal

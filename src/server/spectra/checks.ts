@@ -27,6 +27,18 @@ export function flagsOf(curve: { x: Float64Array; value: Float64Array }, checked
   });
 }
 
+/** Highest visible absorbance below which a curve shows noise, not a colour. */
+const LEAST_VISIBLE = 0.005;
+
+/** Highest absorbance from 380 to 780 nm. */
+function visiblePeak({ x, value }: { x: Float64Array; value: Float64Array }): number {
+  let peak = 0;
+  x.forEach((wavenumber, i) => {
+    if (wavenumber >= 1e7 / 780 && wavenumber <= 1e7 / 380 && value[i]! > peak) peak = value[i]!;
+  });
+  return peak;
+}
+
 /** Colour of the solution at a highest visible absorbance of 1, "#rrggbb"; null where the curve gives none. */
 export function colourOf(
   curve: { x: Float64Array; value: Float64Array },
@@ -34,6 +46,7 @@ export function colourOf(
 ): string | null {
   if (technique !== 'solution') return null;
   const quantity = storedQuantity(technique, yUnit);
+  if (quantity === 'absorbance' && visiblePeak(curve) < LEAST_VISIBLE) return null;
   // At a dilution to absorbance 1 only the shape counts, so that absorbance serves where ε is not known.
   const shape = quantity === 'absorbance' ? curve.value : epsilonOf(curve.value, quantity, null);
   return shape && (colourOfSolution({ x: curve.x, epsilon: shape })?.hex ?? null);

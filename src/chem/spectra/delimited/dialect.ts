@@ -1,6 +1,6 @@
-import { DomainError } from '../../errors';
-import type { ReadOptions } from '../types';
-import { isStrong, type Notation, readDataLine } from './cells';
+import { DomainError } from '../../errors.ts';
+import type { ReadOptions } from '../types.ts';
+import { isStrong, type Notation, readDataLine } from './cells.ts';
 
 /** In the order in which one goes before another that reads as many lines. */
 const DELIMITERS = ['\t', ';', ',', '|', ' '] as const;

@@ -1,7 +1,7 @@
-import type { XUnit, YUnit } from '../types';
-import { isAbscissaLabel, xUnitFromText, yUnitFromText } from '../unit-names';
-import { cutLine, type Notation } from './cells';
-import type { FoundTable } from './table';
+import type { XUnit, YUnit } from '../types.ts';
+import { isAbscissaLabel, xUnitFromText, yUnitFromText } from '../unit-names.ts';
+import { cutLine, type Notation } from './cells.ts';
+import type { FoundTable } from './table.ts';
 
 /** Lines of a header that are kept, and characters of each. */
 const MOST_FACTS = 1000;

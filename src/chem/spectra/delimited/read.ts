@@ -1,11 +1,11 @@
-import { DomainError } from '../../errors';
-import { settleUnits } from '../settle-units';
-import { limits, type ReadOptions, type SpectrumBlock, type SpectrumWarning, type YUnit } from '../types';
-import { xUnitFromText, yUnitFromText } from '../unit-names';
-import type { DataLine, Notation } from './cells';
-import { findNotation } from './dialect';
-import { type Header, pairColumns, readHeader } from './header';
-import { type FoundTable, findTables } from './table';
+import { DomainError } from '../../errors.ts';
+import { settleUnits } from '../settle-units.ts';
+import { limits, type ReadOptions, type SpectrumBlock, type SpectrumWarning, type YUnit } from '../types.ts';
+import { xUnitFromText, yUnitFromText } from '../unit-names.ts';
+import type { DataLine, Notation } from './cells.ts';
+import { findNotation } from './dialect.ts';
+import { type Header, pairColumns, readHeader } from './header.ts';
+import { type FoundTable, findTables } from './table.ts';
 
 /**
  * Spectra of delimited text: each ordinate column of each table is one.

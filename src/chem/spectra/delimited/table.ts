@@ -1,6 +1,6 @@
-import { DomainError } from '../../errors';
-import { limits } from '../types';
-import { type DataLine, isPassedOver, isStrong, type Notation, readDataLine } from './cells';
+import { DomainError } from '../../errors.ts';
+import { limits } from '../types.ts';
+import { type DataLine, isPassedOver, isStrong, type Notation, readDataLine } from './cells.ts';
 
 /** A table of numbers within a text, and the lines above it. */
 export interface FoundTable {

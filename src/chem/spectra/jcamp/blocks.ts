@@ -1,6 +1,6 @@
-import { DomainError } from '../../errors';
-import { limits, type SpectrumWarning } from '../types';
-import { type JcampRecord, textOf } from './records';
+import { DomainError } from '../../errors.ts';
+import { limits, type SpectrumWarning } from '../types.ts';
+import { type JcampRecord, textOf } from './records.ts';
 
 /** Records of one block between TITLE and END. */
 export interface RecordBlock {

@@ -1,5 +1,5 @@
-import { DomainError } from '../../errors';
-import { type JcampRecord, textOf } from './records';
+import { DomainError } from '../../errors.ts';
+import { type JcampRecord, textOf } from './records.ts';
 
 /** A number of a record with the size of half a unit of its last digit, in which its writer may have rounded it. */
 export interface StatedNumber {

@@ -1,8 +1,8 @@
-import { DomainError } from '../../errors';
-import { limits, type SpectrumWarning } from '../types';
-import { halfUnit, type StatedNumber } from './fields';
-import { decodeOrdinates, type LineStart, type OrdinateTable } from './ordinates';
-import type { ValueLine } from './records';
+import { DomainError } from '../../errors.ts';
+import { limits, type SpectrumWarning } from '../types.ts';
+import { halfUnit, type StatedNumber } from './fields.ts';
+import { decodeOrdinates, type LineStart, type OrdinateTable } from './ordinates.ts';
+import type { ValueLine } from './records.ts';
 
 /** What the records round an `(X++(Y..Y))` table state; null where the file does not. */
 export interface GridHead {

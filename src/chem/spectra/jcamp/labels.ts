@@ -1,4 +1,4 @@
-import { type JcampRecord, normaliseLabel } from './records';
+import { type JcampRecord, normaliseLabel } from './records.ts';
 
 /** Standard spelling of the labels that a UV-vis-NIR file may hold (McDonald & Wilks 1988; Lampen et al. 1999). */
 const STANDARD = [

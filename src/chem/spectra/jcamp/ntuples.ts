@@ -1,9 +1,9 @@
-import { DomainError } from '../../errors';
-import type { SpectrumWarning } from '../types';
-import { numberOf, type StatedNumber } from './fields';
-import { type Points, readGridTable, statedNumber } from './grid-table';
-import { readPairTable } from './pair-table';
-import { type JcampRecord, textOf } from './records';
+import { DomainError } from '../../errors.ts';
+import type { SpectrumWarning } from '../types.ts';
+import { numberOf, type StatedNumber } from './fields.ts';
+import { type Points, readGridTable, statedNumber } from './grid-table.ts';
+import { readPairTable } from './pair-table.ts';
+import { type JcampRecord, textOf } from './records.ts';
 
 /** One page of an NTUPLES block. */
 export interface Page {

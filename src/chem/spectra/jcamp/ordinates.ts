@@ -1,7 +1,7 @@
-import { DomainError } from '../../errors';
-import { limits } from '../types';
-import { halfUnit } from './fields';
-import type { ValueLine } from './records';
+import { DomainError } from '../../errors.ts';
+import { limits } from '../types.ts';
+import { halfUnit } from './fields.ts';
+import type { ValueLine } from './records.ts';
 
 /** A line's abscissa as written, and which ordinate (counted from 0) stands at it. */
 export interface LineStart {

@@ -1,7 +1,7 @@
-import { DomainError } from '../../errors';
-import { limits, type SpectrumWarning } from '../types';
-import type { StatedNumber } from './fields';
-import type { ValueLine } from './records';
+import { DomainError } from '../../errors.ts';
+import { limits, type SpectrumWarning } from '../types.ts';
+import type { StatedNumber } from './fields.ts';
+import type { ValueLine } from './records.ts';
 
 /** Members of a table of groups, before factors: as many numbers a group as the form has letters. */
 export interface PairTable {

@@ -1,14 +1,14 @@
-import { DomainError } from '../../errors';
-import { settleUnits } from '../settle-units';
-import { limits, type ReadOptions, type SpectrumBlock, type SpectrumWarning } from '../types';
-import { rangeOf, xUnitFromText, yUnitFromText } from '../unit-names';
-import { gatherBlocks, isDataRecord, type RecordBlock } from './blocks';
-import { numberOf } from './fields';
-import { checkStated, type Points, readGridTable } from './grid-table';
-import { metadataName } from './labels';
-import { readNtuples } from './ntuples';
-import { readAssignments, readPairTable } from './pair-table';
-import { type JcampRecord, splitRecords, textOf } from './records';
+import { DomainError } from '../../errors.ts';
+import { settleUnits } from '../settle-units.ts';
+import { limits, type ReadOptions, type SpectrumBlock, type SpectrumWarning } from '../types.ts';
+import { rangeOf, xUnitFromText, yUnitFromText } from '../unit-names.ts';
+import { gatherBlocks, isDataRecord, type RecordBlock } from './blocks.ts';
+import { numberOf } from './fields.ts';
+import { checkStated, type Points, readGridTable } from './grid-table.ts';
+import { metadataName } from './labels.ts';
+import { readNtuples } from './ntuples.ts';
+import { readAssignments, readPairTable } from './pair-table.ts';
+import { type JcampRecord, splitRecords, textOf } from './records.ts';
 
 /**
  * Spectra of a JCAMP-DX file, 4.24 to 5.01.

@@ -1,4 +1,4 @@
-import type { SpectrumWarning } from '../types';
+import type { SpectrumWarning } from '../types.ts';
 
 /** One line of a record's value, comment removed; `line` is 1-based in the file. */
 export interface ValueLine {

@@ -1,7 +1,7 @@
-import { DomainError } from '../../errors';
-import { toAscii } from '../ascii';
-import type { XUnit, YUnit } from '../types';
-import { rangeOf, xUnitNames, yUnitNames } from '../unit-names';
+import { DomainError } from '../../errors.ts';
+import { toAscii } from '../ascii.ts';
+import type { XUnit, YUnit } from '../types.ts';
+import { rangeOf, xUnitNames, yUnitNames } from '../unit-names.ts';
 
 /**
  * A spectrum as our writers take it: points in the given units and order, NaN for a gap, and what is known of how it
