@@ -3,6 +3,7 @@ import * as z from 'zod';
 import { DomainError } from '../chem/errors.ts';
 import type { Problem, ProblemDetail } from '../contracts/problem.ts';
 import { log } from './log.ts';
+import { StoreError } from './store.ts';
 
 const TITLES: Record<number, string> = {
   400: 'The request cannot be read',
@@ -80,6 +81,8 @@ export function toProblem(error: unknown, requestId: string): Response {
     if (position !== undefined) detail.position = position;
     return problem(422, message, { errors: [detail] });
   }
+  if (error instanceof StoreError)
+    return problem(503, 'The object store cannot be reached: try again', { headers: { 'retry-after': '10' } });
   if (error instanceof z.ZodError)
     return problem(422, 'The request does not match its contract', { errors: contractErrors(error) });
   log.error(

@@ -24,8 +24,9 @@ const served = Object.entries(files)
 export const servedFiles = served.map(({ file, path }) => ({ file, path: path.replace(/\[(\w+)\]/g, '{$1}') }));
 
 /** A folder of its own with a migrated, empty database; call before anything of the server is imported. */
-export async function openRegistry(): Promise<{ folder: string; close: () => Promise<void> }> {
-  const folder = mkdtempSync(join(tmpdir(), 'zaffre-api-'));
+export async function openRegistry(
+  folder = mkdtempSync(join(tmpdir(), 'zaffre-api-')),
+): Promise<{ folder: string; close: (options?: { keep: boolean }) => Promise<void> }> {
   Object.assign(process.env, {
     ZAFFRE_MODE: 'demo',
     ZAFFRE_DATA: folder,
@@ -38,9 +39,9 @@ export async function openRegistry(): Promise<{ folder: string; close: () => Pro
   await migrateDatabase(await database());
   return {
     folder,
-    close: async () => {
+    close: async ({ keep } = { keep: false }) => {
       await closeDatabase();
-      rmSync(folder, { recursive: true, force: true });
+      if (!keep) rmSync(folder, { recursive: true, force: true });
     },
   };
 }

@@ -1,7 +1,12 @@
-import { readFormula } from '#src/chem/formula/index.ts';
 import { routes } from '#src/contracts/routes.ts';
 import { endpoint } from '#src/server/endpoint.ts';
+import { runInWorker } from '#src/server/worker-pool.ts';
 
 export const POST = endpoint(routes.deriveFormula, {
-  act: ({ body }) => readFormula(body.formula, body.answers ?? {}),
+  act: ({ body, context }) =>
+    runInWorker(
+      'formula',
+      { text: body.formula, answers: body.answers ?? {} },
+      { field: 'formula', signal: context.request.signal },
+    ),
 });

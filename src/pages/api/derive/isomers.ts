@@ -1,7 +1,7 @@
-import { enumerateIsomers } from '#src/chem/geometry/index.ts';
 import { routes } from '#src/contracts/routes.ts';
 import { endpoint } from '#src/server/endpoint.ts';
+import { runInWorker } from '#src/server/worker-pool.ts';
 
 export const POST = endpoint(routes.deriveIsomers, {
-  act: ({ body }) => enumerateIsomers(body),
+  act: ({ body, context }) => runInWorker('isomers', body, { field: 'ligands', signal: context.request.signal }),
 });
