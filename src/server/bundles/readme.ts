@@ -48,6 +48,9 @@ export function licenceText(licences: readonly string[]): string {
 export const citation = ({ creators, date, title, identifier }: Facts) =>
   `${creators.join('; ')} (${date.slice(0, 4)}): ${title}. Zaffre registry. Dataset. ${identifier}`;
 
+/** "1 spectrum", "2 spectra". */
+export const counted = (n: number, one: string, more: string) => `${n} ${n === 1 ? one : more}`;
+
 /** Text of people in a Markdown line: nothing in it becomes a link, a picture or markup. */
 const plain = (text: string) => text.replace(/\s+/g, ' ').replace(/[\\`*_{}[\]<>#|!]/g, '\\$&');
 
@@ -60,7 +63,7 @@ export function readmeText(content: Content, facts: Facts): string {
     '',
     plain(facts.description),
     '',
-    `${complexes.length} complexes, ${spectra.length} spectra, ${bands.length} bands. State of ${facts.date.slice(0, 10)}, written by ${facts.software}.`,
+    `${counted(complexes.length, 'complex', 'complexes')}, ${counted(spectra.length, 'spectrum', 'spectra')}, ${counted(bands.length, 'band', 'bands')}. State of ${facts.date.slice(0, 10)}, written by ${facts.software}.`,
     '',
     ...(synthetic.length > 0
       ? [

@@ -11,7 +11,7 @@ import { BagStream } from './bag.ts';
 import type { Content } from './content.ts';
 import { dataPackage, roCrate } from './metadata.ts';
 import { csvPath, jcampPath, originalPath } from './paths.ts';
-import { type Facts, licenceText, readmeText } from './readme.ts';
+import { counted, type Facts, licenceText, readmeText } from './readme.ts';
 import { csvOf, tablesOf } from './tables.ts';
 
 /** The same content by another release may be laid out otherwise, and is another bundle. */
@@ -70,7 +70,7 @@ export function writeBundle(
 
 function factsOf(content: Content, tables: string[]): Facts {
   const { folio, complexes, spectra, labs, licences } = content;
-  const title = folio?.name ?? `Selection of ${complexes.length} complexes`;
+  const title = folio?.name ?? `Selection of ${counted(complexes.length, 'complex', 'complexes')}`;
   const description =
     folio?.description ?? 'Transition-metal complexes and their electronic spectra from a Zaffre registry.';
   const dates = [...complexes, ...spectra].map((row) => row.updatedAt);
