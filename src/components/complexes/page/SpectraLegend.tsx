@@ -15,7 +15,7 @@ interface SpectraLegendProps {
 /** Every spectrum with its lab and medium; a tick shows or hides its curve, its title opens it. */
 export function SpectraLegend({ curves, shown, yUnit, onToggle }: SpectraLegendProps) {
   return (
-    <ul aria-label="Spectra shown" className="mt-3 grid gap-x-6 border-t border-faint pt-2 xl:grid-cols-2">
+    <ul aria-label="Spectra shown" className="mt-3 grid gap-x-6 border-t border-faint pt-2">
       {curves.map((one, place) => {
         const { spectrum, curve } = one;
         const { colour, dash } = looksAt(place);

@@ -1,4 +1,3 @@
-import { curveLabel } from '#src/components/spectra/page/curves.ts';
 import { SERIES_COLOURS, SERIES_DASHES } from '#src/components/spectra/plot/theme.ts';
 import type { PlotBand, PlotSeries } from '#src/components/spectra/plot/types.ts';
 import type { YUnit } from '#src/components/spectra/plot/units.ts';
@@ -27,7 +26,7 @@ const sameQuantity = (quantity: YUnit, shown: YUnit) =>
 export function overlaySeries(curves: readonly Curve[], shown: ReadonlySet<string>, yUnit: YUnit): PlotSeries[] {
   return curves.flatMap(({ spectrum, curve }, place) => {
     if (!curve || !shown.has(spectrum.id) || !sameQuantity(curve.quantity, yUnit)) return [];
-    return [{ id: spectrum.id, label: curveLabel(spectrum), x: curve.x, y: curve.y, ...looksAt(place) }];
+    return [{ id: spectrum.id, label: spectrum.title, x: curve.x, y: curve.y, ...looksAt(place) }];
   });
 }
 

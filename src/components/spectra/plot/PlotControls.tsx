@@ -1,9 +1,9 @@
 import { Unit } from '../../notation';
 import { Segmented } from '../../ui/Segmented';
-import type { XUnit, YUnit } from './units';
+import { type XUnit, Y_TITLES, type YUnit } from './units';
 
 const X_CHOICES = (['nm', 'cm-1', 'eV'] as const).map((value) => ({ value, label: <Unit unit={value} /> }));
-const Y_LABELS: Record<YUnit, string> = { epsilon: 'ε', 'log-epsilon': 'log ε', absorbance: 'A' };
+const Y_LABELS: Partial<Record<YUnit, string>> = { epsilon: 'ε', 'log-epsilon': 'log ε', absorbance: 'A' };
 
 interface PlotControlsProps {
   xUnit: XUnit;
@@ -28,7 +28,7 @@ export function PlotControls({
       {yUnits.length > 1 && (
         <Segmented
           label="Vertical axis"
-          options={yUnits.map((value) => ({ value, label: Y_LABELS[value] }))}
+          options={yUnits.map((value) => ({ value, label: Y_LABELS[value] ?? Y_TITLES[value].name }))}
           value={yUnit}
           onChange={onYUnit}
         />

@@ -1,7 +1,18 @@
 /** Units of the horizontal axis. */
 export type XUnit = 'nm' | 'cm-1' | 'eV';
-/** Quantities of the vertical axis. */
-export type YUnit = 'epsilon' | 'absorbance' | 'log-epsilon';
+/** Quantities of the vertical axis: those that can be chosen, and those of techniques that give neither ε nor A. */
+export type YUnit =
+  | 'epsilon'
+  | 'absorbance'
+  | 'log-epsilon'
+  | 'transmittance'
+  | 'percent-transmittance'
+  | 'kubelka-munk'
+  | 'reflectance'
+  | 'percent-reflectance'
+  | 'delta-epsilon'
+  | 'emission'
+  | 'arbitrary';
 
 /** Wavenumber in cm⁻¹ of one electronvolt, e/(hc). @see CODATA 2018 (exact by the SI of 2019) */
 export const PER_CM_OF_EV = 8065.543937;
@@ -34,6 +45,14 @@ export const Y_TITLES: Record<YUnit, AxisTitle> = {
   epsilon: { name: 'ε', unit: 'dm3 mol-1 cm-1' },
   absorbance: { name: 'A', unit: '' },
   'log-epsilon': { name: 'log ε', unit: 'dm3 mol-1 cm-1' },
+  transmittance: { name: 'T', unit: '' },
+  'percent-transmittance': { name: 'T', unit: '%' },
+  'kubelka-munk': { name: 'F(R)', unit: '' },
+  reflectance: { name: 'R', unit: '' },
+  'percent-reflectance': { name: 'R', unit: '%' },
+  'delta-epsilon': { name: 'Δε', unit: 'dm3 mol-1 cm-1' },
+  emission: { name: 'emission intensity', unit: '' },
+  arbitrary: { name: 'ordinate, no unit', unit: '' },
 };
 
 /** Figures with which a place on the axis is told. */
