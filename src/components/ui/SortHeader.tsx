@@ -27,7 +27,7 @@ export function SortHeader({ children, sorted, onSort, className = '' }: SortHea
           </span>
         </button>
       ) : (
-        children
+        <span className="inline-flex min-h-6 items-center whitespace-pre">{children}</span>
       )}
     </th>
   );

@@ -35,17 +35,14 @@ export function IsomerChoice({ list, geometry, ligands, pick, onPick, draw }: Is
       <legend className="mb-2 flex flex-wrap items-baseline gap-x-3">
         <span className="text-base font-semibold">Isomer</span>
         <span className="text-xs text-ink-soft">{countSentence(list)}, ring pucker and substituents left out</span>
-      </legend>
-      <div className="grid grid-cols-[repeat(auto-fill,minmax(248px,1fr))] gap-3">
         {mayBeOpen && (
-          <label className={`${CARD} flex-col items-start justify-center gap-0.5 px-4 py-3`}>
+          <label className={PILL}>
             <input type="radio" name={name} className="sr-only" checked={pick === null} onChange={() => onPick(null)} />
-            <b className="text-base font-semibold">not stated</b>
-            <span className="text-xs text-ink-soft">
-              A record of its own. No point group is given, and no selection rule follows from one.
-            </span>
+            not stated
           </label>
         )}
+      </legend>
+      <div className="grid grid-cols-[repeat(auto-fill,minmax(248px,1fr))] gap-3">
         {shown.map((card) => (
           <Card
             key={card.value}
@@ -55,6 +52,11 @@ export function IsomerChoice({ list, geometry, ligands, pick, onPick, draw }: Is
           />
         ))}
       </div>
+      {mayBeOpen && pick === null && (
+        <p className="mt-2 text-xs text-ink-soft">
+          Not stated makes a record of its own: no point group is given, and no selection rule follows from one.
+        </p>
+      )}
       {key.length > 0 && (
         <p className="mt-2 flex flex-wrap gap-x-4 text-xs text-ink-soft">
           {key.map(({ letter, ligand }) => (
@@ -73,6 +75,8 @@ export function IsomerChoice({ list, geometry, ligands, pick, onPick, draw }: Is
   );
 }
 
+const PILL =
+  'flex min-h-7 cursor-pointer items-center rounded border border-hairline bg-glaze px-2.5 text-xs hover:border-zaffre has-checked:border-zaffre has-checked:bg-zaffre-wash has-checked:font-semibold has-checked:text-zaffre has-focus-visible:outline-2 has-focus-visible:outline-zaffre';
 const CARD =
   'flex min-h-[128px] cursor-pointer rounded border border-hairline bg-glaze outline-offset-2 hover:border-zaffre has-checked:border-zaffre has-checked:bg-zaffre-wash has-checked:shadow-[inset_0_0_0_1px_var(--color-zaffre)] has-focus-visible:outline-2 has-focus-visible:outline-zaffre';
 

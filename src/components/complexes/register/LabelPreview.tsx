@@ -82,7 +82,7 @@ function Relatives({ found, isAsking, failed }: LabelPreviewProps['relatives']) 
 }
 
 const Accession = ({ accession }: { accession: string }) => (
-  <a href={`/complexes/${accession}`} className="link num">
+  <a href={`/complexes/${accession}`} className="link num whitespace-nowrap">
     {accession}
   </a>
 );

@@ -54,17 +54,20 @@ export function ComplexesTable({ first, all, geometryNames, labNames, may }: Com
           )}
         </div>
       </div>
-      <Console view={view} facets={facets} names={geometryNames} onChange={setView} />
-      <div className="flex flex-wrap items-center gap-2">
-        <ChosenFilters view={view} names={geometryNames} labNames={labNames} onChange={setView} />
-        <div className="ml-auto">
+      <Console
+        view={view}
+        facets={facets}
+        names={geometryNames}
+        onChange={setView}
+        aside={
           <ColumnMenu
             columns={columns}
             onToggle={(id, isVisible) => setLooks({ columns: { ...looks.columns, [id]: isVisible } })}
             compact={{ value: looks.compact, onChange: (compact) => setLooks({ compact }) }}
           />
-        </div>
-      </div>
+        }
+      />
+      <ChosenFilters view={view} names={geometryNames} labNames={labNames} onChange={setView} />
       <Problem problem={problem} onRetry={retry} />
       {page.items.length > 0 ? (
         <DataTable

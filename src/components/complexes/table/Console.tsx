@@ -1,4 +1,4 @@
-import { useEffect, useId, useRef, useState } from 'react';
+import { type ReactNode, useEffect, useId, useRef, useState } from 'react';
 import { DBlock } from '#src/components/marks/DBlock.tsx';
 import { DCount, Formula, PointGroup } from '#src/components/notation/index.tsx';
 import { buttonClass } from '#src/components/ui/Button.tsx';
@@ -14,18 +14,22 @@ interface ConsoleProps {
   facets: Record<string, FacetCount[]>;
   names: GeometryNames;
   onChange: (view: ComplexView) => void;
+  /** Stands at the right of the last row. */
+  aside?: ReactNode;
 }
+
+const rising = (facet: readonly FacetCount[]) => [...facet].sort((a, b) => Number(a.value) - Number(b.value));
 
 const MORE: readonly ListFilter[] = ['oxidationState', 'spinState', 'ligand', 'lab', 'bandClass', 'state'];
 const CLASSES = ['d-d', 'LMCT', 'MLCT', 'intraligand', 'interligand', 'intervalence', 'metal-metal', 'unassigned'];
 
 /** Everything one can filter by; what is asked most is always in sight. */
-export function Console({ view, facets, names, onChange }: ConsoleProps) {
+export function Console({ view, facets, names, onChange, aside }: ConsoleProps) {
   const hidden = MORE.filter((name) => view.lists[name].length > 0).length;
   const [showsMore, setShowsMore] = useState(hidden > 0);
   const moreId = useId();
   const facet = (name: ListFilter) => ({
-    facet: facets[name] ?? [],
+    facet: name === 'dCount' || name === 'oxidationState' ? rising(facets[name] ?? []) : (facets[name] ?? []),
     chosen: view.lists[name],
     onToggle: (value: string) => onChange(toggleValue(view, name, value)),
   });
@@ -72,6 +76,7 @@ export function Console({ view, facets, names, onChange }: ConsoleProps) {
           {showsMore ? 'Fewer filters' : 'More filters'}
           {!showsMore && hidden > 0 && ` (${hidden} in use)`}
         </button>
+        <div className="ml-auto">{aside}</div>
       </div>
     </section>
   );

@@ -3,8 +3,9 @@ import { Button } from '#src/components/ui/Button.tsx';
 import { Dialog } from '#src/components/ui/Dialog.tsx';
 import { Problem } from '#src/components/ui/Problem.tsx';
 import { Progress } from '#src/components/ui/Progress.tsx';
+import { saveText } from '#src/components/ui/save-text.ts';
 import { allPages } from './pages.ts';
-import { csvHeads, csvRows, saveText, toCsv } from './table-csv.ts';
+import { csvColumns } from './table-csv.ts';
 import { fetchComplexes } from './useComplexes.ts';
 import { useTask } from './useTask.ts';
 import { type ComplexView, filterSearch } from './view.ts';
@@ -18,9 +19,10 @@ export function DownloadTable({ view, names }: { view: ComplexView; names: Geome
       const search = filterSearch(view);
       search.set('sort', view.sort);
       const all = await allPages(fetchComplexes(search, signal), (done, total) => onProgress(done / total));
-      const text = await toCsv(csvHeads(), csvRows(all, names));
+      const { tableCsv } = await import('#src/components/ui/table-csv.ts');
       signal.throwIfAborted();
-      saveText(text, 'complexes.csv');
+      // The byte order mark tells a spreadsheet that the file is UTF-8.
+      saveText('complexes.csv', `\uFEFF${tableCsv(csvColumns(names), all)}`, 'text/csv;charset=utf-8');
       setIsOpen(false);
     },
     [view, names],

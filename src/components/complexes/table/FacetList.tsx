@@ -50,7 +50,7 @@ export function FacetList({
         />
       )}
       {rows.length === 0 && <p className="text-xs text-ink-soft">none</p>}
-      <ul className="-mx-1.5 max-h-[108px] overflow-y-auto">
+      <ul className="-mx-1.5 max-h-[134px] overflow-y-auto">
         {rows.map(({ value, count, label }) => {
           const isChosen = chosen.includes(value);
           return (
@@ -65,10 +65,10 @@ export function FacetList({
                   checked={isChosen}
                   onChange={() => onToggle(value)}
                 />
-                <span aria-hidden="true" className="w-2.5 text-xs">
-                  {isChosen ? '✓' : ''}
+                <span className="min-w-0 flex-1 truncate">
+                  {show(value, label)}
+                  {isChosen && <span aria-hidden="true"> ✓</span>}
                 </span>
-                <span className="min-w-0 flex-1 truncate">{show(value, label)}</span>
                 <span className="num text-xs text-ink-soft">{count === 0 ? '–' : count}</span>
               </label>
             </li>

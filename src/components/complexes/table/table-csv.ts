@@ -1,3 +1,4 @@
+import type { DataColumn } from '#src/components/ui/table-csv.ts';
 import type { ComplexSummary } from '#src/contracts/complexes.ts';
 import type { GeometryNames } from './words.ts';
 
@@ -37,27 +38,10 @@ function each<T>(items: readonly T[], cellOf: (item: T) => Cell | null): Cell | 
   return items.map((item) => cellOf(item) ?? '').join('; ');
 }
 
-export const csvHeads = (): string[] => Object.keys(COLUMNS);
-
-/** One row a complex, in the order of the heads; what is not there is an empty cell. */
-export const csvRows = (complexes: readonly ComplexSummary[], names: GeometryNames): Cell[][] =>
-  complexes.map((complex) => Object.values(COLUMNS).map((cellOf) => cellOf(complex, names) ?? ''));
-
-/**
- * The table as CSV (RFC 4180). A text that a spreadsheet would run as a formula gets an apostrophe before it; numbers
- * stay numbers.
- */
-export async function toCsv(heads: readonly string[], rows: readonly Cell[][]): Promise<string> {
-  const { default: Papa } = await import('papaparse');
-  return `${Papa.unparse({ fields: [...heads], data: [...rows] }, { escapeFormulae: true, newline: '\r\n' })}\r\n`;
-}
-
-/** Hands a text to the browser as a file. The byte order mark tells a spreadsheet that it is UTF-8. */
-export function saveText(text: string, fileName: string): void {
-  const url = URL.createObjectURL(new Blob(['\uFEFF', text], { type: 'text/csv;charset=utf-8' }));
-  const link = document.createElement('a');
-  link.href = url;
-  link.download = fileName;
-  link.click();
-  setTimeout(() => URL.revokeObjectURL(url), 10_000);
-}
+/** The columns of the file, whatever the screen shows; what is not there is an empty cell. */
+export const csvColumns = (names: GeometryNames): DataColumn<ComplexSummary>[] =>
+  Object.entries(COLUMNS).map(([header, cellOf]) => ({
+    id: header,
+    header,
+    value: (complex) => cellOf(complex, names),
+  }));
