@@ -32,7 +32,7 @@ export interface SolutionColour {
 const NEEDED = { from: 400, to: 700 } as const;
 /** The ends may be missing, and points may lie apart, by so much; nm. */
 const END_SLACK = 5;
-const WIDEST_GAP = 20;
+const WIDEST_GAP = 50;
 
 /**
  * Colour of a solution by its spectrum: T = 10^(−ε·c·l), CIE 1931 2° observer, D65, sRGB.
@@ -40,7 +40,7 @@ const WIDEST_GAP = 20;
  * Between points ε goes by straight lines in wavenumber; outside them, to 380 and 780 nm, the last value is held.
  * Holds where Beer and Lambert's law does. Where nothing absorbs in the visible, the concentration is taken as 1.
  *
- * @returns null when the points leave out part of 400–700 nm (5 nm at the ends, gaps of 20 nm are borne)
+ * @returns null when the points leave out part of 400–700 nm (5 nm at the ends, gaps of 50 nm are borne)
  * @throws {DomainError} `out-of-range` when concentration or path is not above zero, or x is not ascending
  * @see CIE 015:2018; IEC 61966-2-1:1999
  */

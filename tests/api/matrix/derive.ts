@@ -1,5 +1,7 @@
 import { type MatrixRow, statuses } from './fixture.ts';
 
+/** 700 to 400 nm and beyond, in steps of 500 cm⁻¹. */
+const wavenumbers = Array.from({ length: 35 }, (_, i) => 12_000 + 500 * i);
 const anybody = statuses({ others: 200 });
 
 export const rows: Record<string, MatrixRow> = {
@@ -12,7 +14,10 @@ export const rows: Record<string, MatrixRow> = {
     expect: anybody,
   },
   deriveColour: {
-    send: () => ({ path: '/api/derive/colour', json: { x: [12_000, 20_000, 28_000], epsilon: [1, 50, 1] } }),
+    send: () => ({
+      path: '/api/derive/colour',
+      json: { x: wavenumbers, epsilon: wavenumbers.map((x) => 50 * Math.exp(-(((x - 20_000) / 2500) ** 2))) },
+    }),
     expect: anybody,
   },
   listGeometries: { send: () => ({ path: '/api/geometries' }), expect: anybody },
