@@ -48,8 +48,8 @@ describe('dilution and range', () => {
       colourOfSolution({ x, epsilon: epsilon.map((value, i) => (keep(NM[i]!) ? value : Number.NaN)) });
     expect(part((nm) => nm > 410)).toBeNull();
     expect(part((nm) => nm < 690)).toBeNull();
-    expect(part((nm) => nm < 500 || nm > 530)).toBeNull();
-    expect(part((nm) => nm < 500 || nm > 510)).not.toBeNull();
+    expect(part((nm) => nm < 500 || nm > 570)).toBeNull();
+    expect(part((nm) => nm < 500 || nm > 540)).not.toBeNull();
     expect(part((nm) => nm >= 400 && nm <= 700)).not.toBeNull();
     expect(colourOfSolution({ x: [], epsilon: [] })).toBeNull();
   });
