@@ -32,7 +32,7 @@ export async function bandsToAttest(asker: Asker): Promise<DaySheet['toAttest']>
     bandSight(asker),
   );
   const led = labsWith(asker, 'lead');
-  const ofOwnLab = led.length > 0 ? inArray(spectra.labId, led) : sql`0`;
+  const ofOwnLab = sql`(${led.length > 0 ? inArray(spectra.labId, led) : sql`null`})`;
   const [rows, [counted]] = await Promise.all([
     db
       .select({
