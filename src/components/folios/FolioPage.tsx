@@ -50,7 +50,10 @@ function Label({ folio, now, state }: { folio: FolioRecord; now: string; state: 
           facts={[
             ['Lab', folio.lab.name],
             ['Licence', licence?.label ?? folio.licence],
-            ['Guests see', folio.shows === 'attested' ? 'attested bands only' : 'attested and proposed bands'],
+            [
+              folio.level === null ? 'Guests see' : 'You see',
+              folio.shows === 'attested' ? 'attested bands only' : 'attested and proposed bands',
+            ],
             folio.edition === null
               ? null
               : [
@@ -59,7 +62,7 @@ function Label({ folio, now, state }: { folio: FolioRecord; now: string; state: 
                     {folio.edition}
                   </span>,
                 ],
-            ['You', ownAccess(folio)],
+            [folio.level === null ? 'You' : 'You may', ownAccess(folio)],
           ]}
         />
       </div>

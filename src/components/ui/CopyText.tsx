@@ -14,7 +14,7 @@ export function CopyText({ label, text }: { label: string; text: string }) {
     <div>
       <p className="mb-1 text-ink-soft">{label}</p>
       <div className="flex items-start gap-2">
-        <code className="num min-w-0 flex-1 rounded border border-hairline bg-porcelain px-2 py-1 break-all select-all">
+        <code className="num min-w-0 flex-1 rounded border border-hairline bg-porcelain px-2 py-1 break-all whitespace-pre-wrap select-all">
           {text}
         </code>
         <button
