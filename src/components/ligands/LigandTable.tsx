@@ -44,7 +44,11 @@ const COLUMNS: readonly DataColumn<LigandRow>[] = [
     id: 'source',
     header: 'Source',
     value: ({ source }) => source,
-    cell: ({ source }) => <span className="block max-w-64 text-xs whitespace-normal">{source ?? '–'}</span>,
+    cell: ({ source }) => (
+      <span className="line-clamp-2 min-w-56 max-w-72 text-xs whitespace-normal" title={source ?? undefined}>
+        {source ?? '–'}
+      </span>
+    ),
   },
 ];
 

@@ -47,7 +47,9 @@ export function ActionsPanel({ form, labs }: ActionsPanelProps) {
           Save as draft
         </Button>
       )}
-      <StatusLine kind="busy">{isSending ? 'Sending' : obstacle}</StatusLine>
+      <div className="-mb-3">
+        <StatusLine kind="busy">{isSending ? 'Sending' : obstacle}</StatusLine>
+      </div>
     </div>
   );
 }
