@@ -63,7 +63,10 @@ export function compressResponse(request: IncomingMessage, response: ServerRespo
       if (!write.call(response, chunk, 'utf8')) stream?.pause();
     });
     stream.on('end', () => end.call(response, undefined, 'utf8'));
+    // Two buffers stand one behind the other: the compressor goes on when the socket has room, and whoever writes to
+    // the response when the compressor has.
     response.on('drain', () => stream?.resume());
+    stream.on('drain', () => response.emit('drain'));
     response.on('close', () => stream?.destroy());
   };
 

@@ -1,5 +1,6 @@
 import { get, type IncomingHttpHeaders, type RequestListener, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
+import { Readable } from 'node:stream';
 import { buffer } from 'node:stream/consumers';
 import { brotliDecompressSync, gunzipSync } from 'node:zlib';
 import { afterEach, expect, test } from 'vitest';
@@ -129,6 +130,20 @@ test('a large answer arrives whole', async () => {
   });
   const { body } = await ask(port, { 'accept-encoding': 'gzip' });
   expect(gunzipSync(body).equals(large)).toBe(true);
+});
+
+test.each(['br', 'gzip'])('a file that is piped, as static files are, arrives whole by %s', async (coding) => {
+  // Text that does not compress well, in pieces larger than every buffer on the way.
+  const pieces = Array.from({ length: 40 }, (_, k) =>
+    Array.from({ length: 16_384 }, (_, i) => ((i * 7919 + k * 104_729) % 9973).toString(36)).join(''),
+  );
+  const port = await serve((_, response) => {
+    response.writeHead(200, { 'content-type': 'text/css' });
+    Readable.from(pieces).pipe(response);
+  });
+  const { body } = await ask(port, { 'accept-encoding': coding });
+  const unpacked = coding === 'br' ? brotliDecompressSync(body) : gunzipSync(body);
+  expect(unpacked.toString() === pieces.join('')).toBe(true);
 });
 
 test('what only a proxy may say is taken away unless there is one', async () => {
