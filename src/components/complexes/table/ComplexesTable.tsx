@@ -24,7 +24,8 @@ interface ComplexesTableProps {
   all: number;
   geometryNames: GeometryNames;
   labNames: Record<string, string>;
-  may: { register: boolean; bundle: boolean };
+  /** Registering is for members; taking files away for them and for guests granted it. */
+  may: { register: boolean; download: boolean };
 }
 
 /** The table of complexes with everything one can filter it by. */
@@ -45,8 +46,12 @@ export function ComplexesTable({ first, all, geometryNames, labNames, may }: Com
             : `${formatNumber(page.total)} of ${formatNumber(Math.max(all, page.total))} shown`}
         </p>
         <div className="ml-auto flex flex-wrap gap-2">
-          <DownloadTable view={view} names={geometryNames} />
-          {may.bundle && <MakeBundle view={view} total={page.total} />}
+          {may.download && (
+            <>
+              <DownloadTable view={view} names={geometryNames} />
+              <MakeBundle view={view} total={page.total} />
+            </>
+          )}
           {may.register && (
             <ButtonLink kind="primary" href="/complexes/new">
               Register a complex
