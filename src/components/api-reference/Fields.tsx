@@ -2,7 +2,7 @@ import type { SchemaRow } from './schema-rows.ts';
 import { TypeText } from './TypeText.tsx';
 
 const INSET = ['', 'pl-5', 'pl-10', 'pl-15', 'pl-20'];
-const CELL = 'h-auto! py-1.5! align-baseline! border-faint!';
+const CELL = 'h-auto! border-0! py-1.5! align-baseline!';
 
 /** Fields of a body, an answer or a schema. `name` says of what; it names the region that scrolls. */
 export function Fields({ name, rows }: { name: string; rows: readonly SchemaRow[] }) {
@@ -19,7 +19,7 @@ export function Fields({ name, rows }: { name: string; rows: readonly SchemaRow[
         </thead>
         <tbody>
           {rows.map((row, i) => (
-            <tr key={i}>
+            <tr key={i} className="border-b border-faint last:border-0">
               <th scope="row" className={`${CELL} text-sm! text-ink!`}>
                 <span className={`num ${INSET[Math.min(row.depth, INSET.length - 1)]}`}>{row.name}</span>
                 {row.required && <span className="ml-2 text-xs text-ink-soft">needed</span>}
@@ -28,7 +28,7 @@ export function Fields({ name, rows }: { name: string; rows: readonly SchemaRow[
                 <TypeText type={row.type} />
               </td>
               <td className={`${CELL} min-w-48 text-ink-soft whitespace-normal!`}>
-                {[row.description, row.limits].filter(Boolean).join('; ')}
+                {[row.description.replace(/\.$/, ''), row.limits].filter(Boolean).join('; ')}
               </td>
             </tr>
           ))}

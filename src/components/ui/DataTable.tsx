@@ -133,7 +133,7 @@ export function DataTable<T>(props: DataTableProps<T>) {
                     {column.cell ? column.cell(row.original as T) : (column.value(row.original as T) ?? '–')}
                   </td>
                 ))}
-                {actions && <td className="text-right!">{actions(row.original as T)}</td>}
+                {actions && <td className="sticky right-0 bg-glaze text-right!">{actions(row.original as T)}</td>}
               </tr>
             ))}
             {visibleRows.length === 0 && (
