@@ -50,7 +50,10 @@ test('one row a complex: names of geometries, bands in one cell, texts that a sp
 });
 
 test('a value for each of several centres', () => {
-  const two = { ...complex, centres: [centre({}), centre({ element: 'Cr', dCount: null })] } as unknown as ComplexSummary;
+  const two = {
+    ...complex,
+    centres: [centre({}), centre({ element: 'Cr', dCount: null })],
+  } as unknown as ComplexSummary;
   const [element, dCount] = ['element', 'd-count'].map((id) => csvColumns({}).find((column) => column.id === id)!);
   expect([element!.value(two), dCount!.value(two)]).toEqual(['Co; Cr', '6; ']);
 });
