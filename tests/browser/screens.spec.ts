@@ -1,0 +1,59 @@
+import AxeBuilder from '@axe-core/playwright';
+import { expect, signIn, test } from './people.ts';
+
+// The main screens as each of their people, light and dark, wide and on a tablet: no serious fault of accessibility
+// (axe, WCAG 2.2 AA rules), no sideways scrolling of the page, no complaint in the console.
+
+const MEMBER = ['/', '/complexes', '/complexes/new', '/spectra', '/ligands', '/folios', '/labs', '/api-reference'];
+const GUEST = ['/', '/complexes', '/folios'];
+
+const people = [
+  { who: 'nobody', email: null, paths: ['/signin', '/outbox', '/join'] },
+  { who: 'contributor', email: 'contributor@demo.example', paths: [...MEMBER, '/tokens'] },
+  { who: 'lead', email: 'lead@demo.example', paths: ['/', '/folios', '/labs'] },
+  { who: 'steward', email: 'steward@demo.example', paths: ['/', '/complexes', '/labs'] },
+  { who: 'guest', email: 'guest@demo.example', paths: GUEST },
+] as const;
+
+for (const { who, email, paths } of people)
+  for (const theme of ['light', 'dark'] as const)
+    test(`${who}, ${theme}`, async ({ page, context, baseURL }) => {
+      test.setTimeout(180_000);
+      await context.addCookies([{ name: 'zaffre-theme', value: theme, url: baseURL! }]);
+      if (email) await signIn(page, email);
+      const records = email ? await firstRecords(page) : [];
+      for (const path of [...paths, ...records])
+        await test.step(path, async () => {
+          for (const width of [1440, 820]) {
+            await page.setViewportSize({ width, height: 900 });
+            await page.goto(path);
+            await page.waitForLoadState('networkidle');
+            const overflow = await page.evaluate(
+              () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
+            );
+            expect(overflow, `${path} at ${width} px scrolls sideways`).toBeLessThanOrEqual(0);
+          }
+          const { violations } = await new AxeBuilder({ page })
+            .withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'])
+            .analyze();
+          const serious = violations.filter(({ impact }) => impact === 'serious' || impact === 'critical');
+          expect(
+            serious.map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html.slice(0, 160)).join(' | ')}`),
+            path,
+          ).toEqual([]);
+        });
+    });
+
+/** The pages of one complex, one spectrum and one folio that this person sees. */
+async function firstRecords(page: import('@playwright/test').Page): Promise<string[]> {
+  const first = async (path: string) =>
+    ((await (await page.request.get(path)).json()) as { items: { id?: string; accession?: string }[] }).items[0];
+  const complex = await first('/api/complexes?metal=Co&sort=-spectra&limit=1');
+  const spectrum = await first('/api/spectra?limit=1');
+  const folio = await first('/api/folios?limit=1');
+  return [
+    complex && `/complexes/${complex.accession}`,
+    spectrum && `/spectra/${spectrum.id}`,
+    folio && `/folios/${folio.id}`,
+  ].filter((path) => path !== undefined);
+}
