@@ -54,7 +54,9 @@ export function Conflict<T>({ saving, differences, onTakePresent, onSendMine }: 
             <tbody>
               {rows.map(({ name, present: now, mine }) => (
                 <tr key={name}>
-                  <th scope="row">{name}</th>
+                  <th scope="row" className="align-middle!">
+                    {name}
+                  </th>
                   <td className="whitespace-normal!">{now || '–'}</td>
                   <td className="whitespace-normal!">{mine || '–'}</td>
                 </tr>

@@ -31,7 +31,9 @@ export function ComplexPage({ first, ligands, answers, labs, sentences }: Comple
   const [open, setOpen] = useState<'edit' | StateChange | null>(null);
   const [said, setSaid] = useState<string | null>(null);
   const addAt =
-    complex.may.addSpectrum && labs !== null && labs.length > 0 ? `/spectra/new?complex=${complex.accession}` : null;
+    complex.may.addSpectrum && !complex.mergedInto && labs !== null && labs.length > 0
+      ? `/spectra/new?complex=${complex.accession}`
+      : null;
   const saved = (what: string) => () => {
     setSaid(what);
     void reload();

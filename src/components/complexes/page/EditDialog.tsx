@@ -6,11 +6,11 @@ import { Dialog } from '#src/components/ui/Dialog.tsx';
 import { Problem } from '#src/components/ui/Problem.tsx';
 import { Notice } from '#src/components/ui/StatusLine.tsx';
 import { useConditionalSave } from '#src/components/ui/useConditionalSave.ts';
-import { useDraft } from '#src/components/ui/useDraft.ts';
+import { useRecordDraft } from '#src/components/ui/useRecordDraft.ts';
 import type { ComplexRecord } from '#src/contracts/complexes.ts';
 import { soleEntity } from '../register/reading.ts';
 import { settle, subjectOf } from '../register/settle.ts';
-import { editDifferences, editDraft, editPatch, presentPick, touchesIdentity } from './edit-form.ts';
+import { type EditDraft, editDifferences, editDraft, editPatch, presentPick, touchesIdentity } from './edit-form.ts';
 import { IdentityChoices } from './IdentityChoices.tsx';
 
 type Chemistry = typeof import('../register/chemistry.ts');
@@ -26,16 +26,16 @@ interface EditDialogProps {
 
 /** Change what a person decides about a complex: isomer, geometry, spin state, notes, who sees it and from when. */
 export function EditDialog({ complex, etag, answers, onSaved, onClose }: EditDialogProps) {
-  const initial = useMemo(() => editDraft(complex), [complex]);
-  const { draft, change, clear } = useDraft(`complex-edit:${complex.accession}`, initial);
+  const { touched, base, change, clear } = useRecordDraft<EditDraft>(`complex-edit:${complex.accession}`, etag);
   const [chemistry, setChemistry] = useState<Chemistry | null>(null);
   const [fault, setFault] = useState<unknown>(null);
-  const saving = useConditionalSave<ComplexRecord>(`/api/complexes/${complex.accession}`, etag, () => {
+  const saving = useConditionalSave<ComplexRecord>(`/api/complexes/${complex.accession}`, base, () => {
     clear();
     onSaved();
     onClose();
   });
-  const base = saving.present ?? complex;
+  const record = saving.present ?? complex;
+  const draft: EditDraft = { ...editDraft(record), ...touched };
 
   useEffect(() => {
     import('../register/chemistry.ts').then(setChemistry, setFault);
@@ -47,14 +47,14 @@ export function EditDialog({ complex, etag, answers, onSaved, onClose }: EditDia
   const settled = useMemo(() => {
     if (!chemistry || !entity) return null;
     const of = subjectOf(entity);
-    const geometry = base.centres[0]?.geometry ?? null;
+    const geometry = record.centres[0]?.geometry ?? null;
     const list = chemistry.isomersOf(entity, geometry)?.list;
-    const isomer = list ? presentPick(base, list) : null;
-    const present = { of, geometry, isomer, spinState: base.centres[0]?.spinState ?? null };
+    const isomer = list ? presentPick(record, list) : null;
+    const present = { of, geometry, isomer, spinState: record.centres[0]?.spinState ?? null };
     return settle(chemistry, entity, draft.choices ?? present);
-  }, [chemistry, entity, base, draft.choices]);
+  }, [chemistry, entity, record, draft.choices]);
 
-  const patch = editPatch(base, draft, settled);
+  const patch = editPatch(record, draft, settled);
   const isSame = Object.keys(patch).length === 0;
   const giveUp = () => {
     clear();

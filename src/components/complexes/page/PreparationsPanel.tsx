@@ -16,6 +16,7 @@ interface PreparationsPanelProps {
 export function PreparationsPanel({ complex, labs, onAdded }: PreparationsPanelProps) {
   const [isAdding, setIsAdding] = useState(false);
   const { preparations } = complex;
+  const known = new Set(complex.cautions.map(({ id, detail }) => `${id} ${detail}`));
   const mayAdd = complex.may.addSpectrum && labs.length > 0;
   return (
     <Panel
@@ -34,7 +35,7 @@ export function PreparationsPanel({ complex, labs, onAdded }: PreparationsPanelP
       <ul className="flex flex-col divide-y divide-faint">
         {preparations.map((preparation) => (
           <li key={preparation.id} className="py-2 first:pt-0 last:pb-0">
-            <Preparation preparation={preparation} />
+            <Preparation preparation={preparation} known={known} />
           </li>
         ))}
       </ul>
@@ -45,7 +46,9 @@ export function PreparationsPanel({ complex, labs, onAdded }: PreparationsPanelP
   );
 }
 
-function Preparation({ preparation }: { preparation: PreparationRecord }) {
+/** A preparation with the cautions that its counter-ions and solvates add to those of the complex. */
+function Preparation({ preparation, known }: { preparation: PreparationRecord; known: ReadonlySet<string> }) {
+  const added = preparation.cautions.filter(({ id, detail }) => !known.has(`${id} ${detail}`));
   const { label, lab, formula, molarMass, form, preparedOn, storage, atmosphere, notes, visibility } = preparation;
   const facts = [
     form,
@@ -67,6 +70,12 @@ function Preparation({ preparation }: { preparation: PreparationRecord }) {
         <span className="text-xs text-ink-soft">{lab.name}</span>
       </p>
       {facts.length > 0 && <p className="text-xs text-ink-soft">{facts.join(' · ')}</p>}
+      {added.map(({ id, detail }) => (
+        <p key={`${id} ${detail}`} className="mt-1 flex gap-1.5 text-xs text-alert">
+          <span aria-hidden="true">▲</span>
+          {detail}
+        </p>
+      ))}
       {notes && <p className="text-xs whitespace-pre-line text-ink-soft">{notes}</p>}
     </>
   );

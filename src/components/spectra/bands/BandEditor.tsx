@@ -45,7 +45,7 @@ export function BandEditor({ editing, choices, standing, onClose, heightAt }: Ba
           <Undo2 aria-hidden="true" size={14} />
           Undo
         </Button>
-        <StatusLine>{editing.said}</StatusLine>
+        <StatusLine kind="busy">{editing.said}</StatusLine>
       </div>
       {list.length > 0 && <DraftTable {...{ editing, choices, standing }} />}
       {quantity && <AddBand quantity={quantity} heightAt={heightAt} onAdd={editing.add} />}

@@ -38,7 +38,7 @@ export function BandRowFields({ band, choices, onEdit }: BandRowFieldsProps) {
       ...(kind === 'd-d' && band.from === '' && choices.groundTerm ? { from: choices.groundTerm } : {}),
     });
   return (
-    <div className="grid grid-cols-[repeat(auto-fit,minmax(140px,1fr))] items-start gap-3 bg-porcelain px-3 py-3">
+    <div className="grid grid-cols-2 items-start gap-3 md:grid-cols-4 bg-porcelain px-3 py-3">
       <NumberInput
         label={
           <>
@@ -108,17 +108,18 @@ export function BandRowFields({ band, choices, onEdit }: BandRowFieldsProps) {
           onChange={({ currentTarget: { value } }) => onEdit({ centre: value === '' ? undefined : Number(value) })}
         />
       )}
+      <Checkbox
+        label="shoulder"
+        className="md:mt-6"
+        checked={band.shoulder}
+        onChange={(event) => onEdit({ shoulder: event.currentTarget.checked })}
+      />
       <TextInput
         label="Reason"
         className="col-span-full"
         maxLength={2000}
         value={band.reason}
         onChange={(event) => onEdit({ reason: event.currentTarget.value })}
-      />
-      <Checkbox
-        label="shoulder"
-        checked={band.shoulder}
-        onChange={(event) => onEdit({ shoulder: event.currentTarget.checked })}
       />
     </div>
   );

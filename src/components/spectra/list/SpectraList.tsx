@@ -12,11 +12,9 @@ import { useStoredSetting } from '#src/components/ui/useStoredSetting.ts';
 import type { FacetCount, Page } from '#src/contracts/common.ts';
 import type { SpectrumSummary } from '#src/contracts/spectra.ts';
 import { FLAGS, TECHNIQUES } from '../words.ts';
-import { COLUMNS } from './columns.tsx';
+import { COLUMNS, HIDDEN_AT_FIRST } from './columns.tsx';
 import { hasFilter, type ListFilter, narrowed, orderOf, PAGE_SIZE, sortedBy, toggled } from './spectra-query.ts';
 import { useSpectra } from './useSpectra.ts';
-
-const ALL_COLUMNS: Record<string, boolean> = {};
 
 const WORDS: Partial<Record<ListFilter, Record<string, string>>> = { technique: TECHNIQUES, flag: FLAGS };
 
@@ -24,7 +22,7 @@ const WORDS: Partial<Record<ListFilter, Record<string, string>>> = { technique: 
 export function SpectraList({ first }: { first: { search: string; page: Page<SpectrumSummary> } }) {
   const spectra = useSpectra(first);
   const { query, setQuery, page, isLate } = spectra;
-  const [hidden, setHidden] = useStoredSetting('spectra-columns-hidden', ALL_COLUMNS);
+  const [hidden, setHidden] = useStoredSetting('spectra-columns-hidden', HIDDEN_AT_FIRST);
   const shown = COLUMNS.filter(({ id }) => !hidden[id]);
   const facet = (name: ListFilter) => page.facets?.[name] ?? [];
   const csv = () =>

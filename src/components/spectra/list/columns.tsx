@@ -6,6 +6,9 @@ import type { SpectrumSummary } from '#src/contracts/spectra.ts';
 import { FLAGS, solventText, TECHNIQUES } from '../words.ts';
 import { rangeNm } from './spectra-query.ts';
 
+/** Columns that are there for who asks for them: the title tells the same. */
+export const HIDDEN_AT_FIRST: Record<string, boolean> = { synthetic: true };
+
 /** A column of the list. */
 export interface SpectrumColumn {
   id: string;
@@ -42,16 +45,17 @@ export const COLUMNS: readonly SpectrumColumn[] = [
     name: 'Title',
     sort: 'title',
     value: ({ title }) => title,
-    cell: ({ id, title, state }) => (
+    cell: ({ id, title, state, synthetic }) => (
       <>
         {/* The link covers its row, so that a click anywhere opens the spectrum. */}
         <a
           href={`/spectra/${id}`}
-          className="block max-w-72 truncate no-underline after:absolute after:inset-0"
+          className="block max-w-60 truncate no-underline after:absolute after:inset-0"
           title={title}
         >
           {title}
         </a>
+        {synthetic && <span className="mr-2 text-xs text-ink-soft">SYNTHETIC</span>}
         {state !== 'registered' && <span className="text-xs text-alert">{state}</span>}
       </>
     ),
@@ -99,14 +103,12 @@ export const COLUMNS: readonly SpectrumColumn[] = [
       spectrum.flags.length === 0 ? (
         <span className="text-ink-soft">none</span>
       ) : (
-        <span
-          className="block max-w-52 text-xs whitespace-normal"
-          title={spectrum.flags.map(({ detail }) => detail).join('; ')}
-        >
+        <span className="text-xs" title={spectrum.flags.map(({ detail }) => detail).join('; ')}>
           <span aria-hidden="true" className="text-alert">
             ▲{' '}
           </span>
-          {flagsText(spectrum)}
+          {spectrum.flags.length === 1 ? flagsText(spectrum) : `${spectrum.flags.length} flags`}
+          {spectrum.flags.length > 1 && <span className="sr-only">: {flagsText(spectrum)}</span>}
         </span>
       ),
   },

@@ -14,7 +14,9 @@ interface ConditionsPanelProps {
 export function ConditionsPanel({ spectrum, preparation }: ConditionsPanelProps) {
   const { medium, flags, warnings, species } = spectrum;
   const number = (value: number | null | undefined, unit: string, uncertainty?: number | null) =>
-    value === null || value === undefined ? null : <Quantity value={value} uncertainty={uncertainty} unit={unit} />;
+    value === null || value === undefined ? null : (
+      <Quantity value={value} uncertainty={uncertainty} unit={unit} className="whitespace-normal!" />
+    );
   const checked = [...flags, ...warnings];
   return (
     <Panel title="Conditions">

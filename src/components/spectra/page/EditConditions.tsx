@@ -1,14 +1,13 @@
-import { useMemo } from 'react';
 import { Button } from '#src/components/ui/Button.tsx';
 import { Conflict } from '#src/components/ui/Conflict.tsx';
 import { TextInput } from '#src/components/ui/controls.tsx';
 import { Dialog } from '#src/components/ui/Dialog.tsx';
 import { Problem } from '#src/components/ui/Problem.tsx';
 import { useConditionalSave } from '#src/components/ui/useConditionalSave.ts';
-import { useDraft } from '#src/components/ui/useDraft.ts';
+import { useRecordDraft } from '#src/components/ui/useRecordDraft.ts';
 import type { SpectrumRecord } from '#src/contracts/spectra.ts';
 import { ConditionFields } from '../upload/ConditionFields.tsx';
-import { conditionErrors, conditionsOf } from '../upload/conditions-draft.ts';
+import { type ConditionsDraft, conditionErrors, conditionsOf } from '../upload/conditions-draft.ts';
 import { conditionDifferences, conditionsPatch } from '../upload/conditions-patch.ts';
 
 interface EditConditionsProps {
@@ -20,20 +19,21 @@ interface EditConditionsProps {
 
 /** Mend the conditions; what follows from them (ε, flags, colour) follows again. */
 export function EditConditions({ spectrum, etag, onSaved, onClose }: EditConditionsProps) {
-  const initial = useMemo(() => conditionsOf(spectrum), [spectrum]);
-  const { draft, change, clear } = useDraft(`spectrum-conditions:${spectrum.id}`, initial);
-  const saving = useConditionalSave<SpectrumRecord>(`/api/spectra/${spectrum.id}`, etag, () => {
+  const { touched, base, change, clear } = useRecordDraft<ConditionsDraft>(`spectrum-conditions:${spectrum.id}`, etag);
+  const saving = useConditionalSave<SpectrumRecord>(`/api/spectra/${spectrum.id}`, base, () => {
     clear();
     onSaved();
     onClose();
   });
+  const record = saving.present ?? spectrum;
+  const draft: ConditionsDraft = { ...conditionsOf(record), ...touched };
   const giveUp = () => {
     clear();
     onClose();
   };
   const errors = conditionErrors(draft);
   const isFaulty = Object.keys(errors).length > 0;
-  const patch = isFaulty ? {} : conditionsPatch(saving.present ?? spectrum, draft);
+  const patch = isFaulty ? {} : conditionsPatch(record, draft);
   const isSame = Object.keys(patch).length === 0;
   return (
     <Dialog

@@ -82,7 +82,7 @@ export function SpectrumPage({ first, choices, preparation, sentences }: Spectru
           </>
         )}
       </SpectrumHead>
-      <div className="grid items-start gap-6 lg:grid-cols-[minmax(0,1fr)_320px]">
+      <div className="grid items-start gap-6 lg:grid-cols-[minmax(0,1fr)_360px]">
         <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] gap-5">
           <Problem problem={curve.error} onRetry={() => void curve.refetch()} />
           <CurvePanel

@@ -5,7 +5,13 @@ import { Button } from '#src/components/ui/Button.tsx';
 import { Select, TextArea, TextInput } from '#src/components/ui/controls.tsx';
 import { CONTROL } from '#src/components/ui/Field.tsx';
 import { PHASES, TECHNIQUES } from '../words.ts';
-import { type ConditionErrors, type ConditionsDraft, epsilonNeeds, UNIT_TEXT } from './conditions-draft.ts';
+import {
+  type ConditionErrors,
+  type ConditionsDraft,
+  epsilonNeeds,
+  givesEpsilon,
+  UNIT_TEXT,
+} from './conditions-draft.ts';
 
 export interface ConditionFieldsProps {
   draft: ConditionsDraft;
@@ -43,7 +49,7 @@ export function ConditionFields({ draft, change, errors, yUnit, labName }: Condi
       </div>
       <Solvents parts={draft.solvents} error={errors.solvents} onChange={(parts) => change({ solvents: parts })} />
       <div className="grid grid-cols-[repeat(auto-fit,minmax(150px,1fr))] items-start gap-3">
-        <TextInput label="Concentration of the entity" {...figures} {...text('concentration')} />
+        <TextInput label="Entity concentration" {...figures} {...text('concentration')} />
         <TextInput label="Its uncertainty ±" {...figures} {...text('concentrationUncertainty')} />
         <Select label="Unit of both" options={options(UNIT_TEXT)} {...text('concentrationUnit')} />
         <TextInput label="Path length / cm" {...figures} {...text('pathLength')} />
@@ -59,7 +65,7 @@ export function ConditionFields({ draft, change, errors, yUnit, labName }: Condi
         />
       </div>
       <p role="status" className={`min-h-5 ${needs ? 'text-alert' : 'text-attest'}`}>
-        {needs ?? (yUnit === null ? '' : 'Nothing is missing for the quantity that is shown.')}
+        {needs ?? (yUnit !== null && givesEpsilon(draft.technique) ? 'ε is given, per mole of the entity.' : '')}
       </p>
       <details>
         <summary className="min-h-6 w-fit text-zaffre">Medium, instrument settings and notes</summary>

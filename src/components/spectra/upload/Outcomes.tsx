@@ -11,7 +11,7 @@ interface OutcomesProps {
 /** What was stored so far, and what was there already. */
 export function Outcomes({ outcomes, accession, isOver }: OutcomesProps) {
   return (
-    <div role="status">
+    <div role="status" className={outcomes.length === 0 ? 'sr-only' : ''}>
       {outcomes.length > 0 && (
         <div className="border border-hairline bg-zaffre-wash px-4 py-3">
           <ul className="flex flex-col gap-1">

@@ -127,7 +127,9 @@ function ReadAs({ block, draft }: { block: ReadBlock; draft: ConditionsDraft }) 
             className="link min-h-6 text-xs"
             onClick={() => setShowsHead(!showsHead)}
           >
-            {showsHead ? 'Hide the head of the file' : `Head of the file, ${head.length} lines`}
+            {showsHead
+              ? 'Hide the head of the file'
+              : `Head of the file, ${head.length === 1 ? '1 line' : `${head.length} lines`}`}
           </button>
           {showsHead && (
             <dl className="mt-1 grid max-h-56 grid-cols-[auto_minmax(0,1fr)] gap-x-3 overflow-y-auto border border-faint p-2 text-xs">

@@ -203,10 +203,13 @@ export function conditionsOf(spectrum: SpectrumRecord): ConditionsDraft {
   };
 }
 
+/** Techniques whose ordinate becomes a molar absorption coefficient. */
+export const givesEpsilon = (technique: Technique): boolean => technique === 'solution' || technique === 'transmission';
+
 /** What still bars a molar absorption coefficient, in a sentence; null where nothing does. */
 export function epsilonNeeds(draft: ConditionsDraft, yUnit: string | null): string | null {
   if (yUnit === 'epsilon' || yUnit === 'log-epsilon') return null;
-  if (draft.technique !== 'solution' && draft.technique !== 'transmission') return null;
+  if (!givesEpsilon(draft.technique)) return null;
   const known = (text: string) => (readNumber(text) ?? 0) > 0;
   const missing = [
     known(draft.concentration) ? null : 'concentration',
