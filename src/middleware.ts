@@ -58,6 +58,8 @@ function withHeaders(answer: Response, isApi: boolean, requestId: string): Respo
   if (settings().publicOrigin.startsWith('https:'))
     response.headers.set('strict-transport-security', 'max-age=31536000; includeSubDomains');
   const policy = response.headers.get('content-security-policy');
+  // A rewrite to the not-found page passes here twice.
+  if (policy?.includes('frame-ancestors')) return response;
   if (policy)
     response.headers.set('content-security-policy', `${policy} style-src-attr 'unsafe-inline'; frame-ancestors 'none'`);
   else if (isApi) response.headers.set('content-security-policy', API_POLICY);
