@@ -91,10 +91,18 @@ export const newBand = (
 
 type Measured = Pick<BandDraft, 'wavenumber' | 'height' | 'fwhm' | 'shoulder' | 'found'>;
 
+/** A place on a curve to what picking bears: whole cm⁻¹, five figures of the height. */
+const rounded = <T extends Pick<Measured, 'wavenumber' | 'height' | 'fwhm'>>(band: T): T => ({
+  ...band,
+  wavenumber: Math.round(band.wavenumber),
+  height: Number(band.height.toPrecision(5)),
+  fwhm: band.fwhm === null ? null : Math.round(band.fwhm),
+});
+
 /** What the picker finds on a curve: positions in cm⁻¹, heights in the curve's quantity. */
 export function pickable({ x, y }: FetchedCurve): Measured[] {
   const values = y.map((value) => value ?? Number.NaN);
-  return pickBands(x, values).map((band) => ({ ...band, found: 'picked' as const }));
+  return pickBands(x, values).map((band) => rounded({ ...band, found: 'picked' as const }));
 }
 
 /** Share of the range of a curve within which a click means the maximum beside it. */
@@ -123,7 +131,9 @@ export function bandAt(curve: FetchedCurve, candidates: readonly Measured[], wav
     return { wavenumber: at, height, fwhm, shoulder, found: 'picked' };
   }
   const height = heightAt(curve, wavenumber);
-  return height === null ? null : { wavenumber, height, fwhm: null, shoulder: true, found: 'picked' };
+  return height === null
+    ? null
+    : rounded<Measured>({ wavenumber, height, fwhm: null, shoulder: true, found: 'picked' });
 }
 
 /** Height of the curve at a place, between its points linearly; null outside it or beside a gap. */

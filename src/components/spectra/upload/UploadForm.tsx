@@ -186,7 +186,8 @@ function Cautions({
   }, [composition, preparation, solvent, technique, electrolyte, temperature]);
   const stop = cautions.find(({ id }) => id === 'GRIND');
   return (
-    <>
+    // On a narrow screen they stand before the button that stores, as they stand beside it on a wide one.
+    <div className="flex flex-col gap-5 max-lg:order-first">
       {stop && (
         <div role="alert">
           <Notice title="Stop before the sample is ground.">
@@ -202,6 +203,6 @@ function Cautions({
           STANDING_SENTENCE,
         }}
       />
-    </>
+    </div>
   );
 }
