@@ -3,6 +3,7 @@ import { Button } from '#src/components/ui/Button.tsx';
 import { Conflict } from '#src/components/ui/Conflict.tsx';
 import { Select, TextArea, TextInput } from '#src/components/ui/controls.tsx';
 import { Dialog } from '#src/components/ui/Dialog.tsx';
+import { ProblemError } from '#src/components/ui/http.ts';
 import { Problem } from '#src/components/ui/Problem.tsx';
 import { Notice } from '#src/components/ui/StatusLine.tsx';
 import { useConditionalSave } from '#src/components/ui/useConditionalSave.ts';
@@ -22,6 +23,12 @@ interface EditDialogProps {
   answers: Record<string, string>;
   onSaved: () => void;
   onClose: () => void;
+}
+
+/** Accession of the record that a change would make this one equal to. */
+function twinOf(problem: unknown): string | null {
+  const accession = problem instanceof ProblemError && problem.status === 409 ? problem.members.accession : null;
+  return typeof accession === 'string' ? accession : null;
 }
 
 /** Change what a person decides about a complex: isomer, geometry, spin state, notes, who sees it and from when. */
@@ -56,6 +63,7 @@ export function EditDialog({ complex, etag, answers, onSaved, onClose }: EditDia
 
   const patch = editPatch(record, draft, settled);
   const isSame = Object.keys(patch).length === 0;
+  const twin = twinOf(saving.problem);
   const giveUp = () => {
     clear();
     onClose();
@@ -114,6 +122,13 @@ export function EditDialog({ complex, etag, answers, onSaved, onClose }: EditDia
           />
         </div>
         <Problem problem={saving.problem ?? fault} />
+        {twin && (
+          <p>
+            <a href={`/complexes/${twin}`} className="link">
+              Open <span className="num">{twin}</span>
+            </a>
+          </p>
+        )}
         <Conflict
           saving={saving}
           differences={(present) => editDifferences(present, draft, settled)}

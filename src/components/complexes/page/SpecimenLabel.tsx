@@ -139,7 +139,7 @@ function Identity({ complex }: { complex: ComplexRecord }) {
         complex.extent === 'discrete' ? null : ['Extent', `${complex.extent}; values are of a repeat unit`],
         ['Home lab', complex.lab.name],
         ['State', complex.state],
-        ['Seen by', visibilityText(complex)],
+        [complex.state === 'draft' ? 'Once registered' : 'Seen by', visibilityText(complex)],
         siblings.length > 0 ? ['Siblings', <Siblings key="s" siblings={siblings} own={isomer} />] : null,
         complex.notes
           ? [
