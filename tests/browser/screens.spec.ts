@@ -4,6 +4,7 @@ import { expect, signIn, test } from './people.ts';
 // The main screens as each of their people, light and dark, wide and on a tablet: no serious fault of accessibility
 // (axe, WCAG 2.2 AA rules), no sideways scrolling of the page, no complaint in the console.
 
+const RULES = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
 const MEMBER = ['/', '/complexes', '/complexes/new', '/spectra', '/ligands', '/folios', '/labs', '/api-reference'];
 const GUEST = ['/', '/complexes', '/folios'];
 
@@ -22,26 +23,24 @@ for (const { who, email, paths } of people)
       await context.addCookies([{ name: 'zaffre-theme', value: theme, url: baseURL! }]);
       if (email) await signIn(page, email);
       const records = email ? await firstRecords(page) : [];
+      const faults: string[] = [];
       for (const path of [...paths, ...records])
         await test.step(path, async () => {
-          for (const width of [1440, 820]) {
+          for (const width of theme === 'light' ? [1440, 820] : [820]) {
             await page.setViewportSize({ width, height: 900 });
             await page.goto(path);
             await page.waitForLoadState('networkidle');
             const overflow = await page.evaluate(
               () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
             );
-            expect(overflow, `${path} at ${width} px scrolls sideways`).toBeLessThanOrEqual(0);
+            if (overflow > 0) faults.push(`${path} at ${width} px scrolls sideways by ${overflow} px`);
           }
-          const { violations } = await new AxeBuilder({ page })
-            .withTags(['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'])
-            .analyze();
-          const serious = violations.filter(({ impact }) => impact === 'serious' || impact === 'critical');
-          expect(
-            serious.map(({ id, nodes }) => `${id}: ${nodes.map(({ html }) => html.slice(0, 160)).join(' | ')}`),
-            path,
-          ).toEqual([]);
+          const { violations } = await new AxeBuilder({ page }).withTags(RULES).analyze();
+          for (const { id, impact, nodes } of violations)
+            if (impact === 'serious' || impact === 'critical')
+              faults.push(`${path}: ${id}: ${nodes.map(({ html }) => html.slice(0, 160)).join(' | ')}`);
         });
+      expect(faults).toEqual([]);
     });
 
 /** The pages of one complex, one spectrum and one folio that this person sees. */
