@@ -9,7 +9,7 @@ import {
   tristimulus,
   whiteD65,
   xyzToSrgb,
-} from '../../src/chem/colour';
+} from '../../src/chem/colour/index.ts';
 import file from './colour.json';
 
 // biome-ignore lint/suspicious/noExplicitAny: the records of a kind share fields that the file as a whole does not

@@ -12,7 +12,7 @@ import {
   specificAbsorbance,
   toAbsorbance,
   wavenumberInterval,
-} from '../../src/chem/spectra';
+} from '../../src/chem/spectra/index.ts';
 import file from './spectra.json';
 
 // Not tested here: kind "bands" gives maxima of single complexes, which no program computes from a spectrum it has not

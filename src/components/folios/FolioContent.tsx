@@ -3,6 +3,7 @@ import { useMemo } from 'react';
 import type { Page } from '../../contracts/common.ts';
 import type { ComplexSummary } from '../../contracts/complexes.ts';
 import type { FolioRecord } from '../../contracts/sharing.ts';
+import { prefixedFormula } from '../complexes/prefixed-formula.ts';
 import { BandStrip } from '../marks/BandStrip.tsx';
 import { Cuvette } from '../marks/Cuvette.tsx';
 import { Formula, OxidationState, PointGroup } from '../notation/index.tsx';
@@ -43,7 +44,12 @@ function columns(items: FolioRecord['items']): DataColumn<ComplexSummary>[] {
         </a>
       ),
     },
-    { id: 'formula', header: 'Formula', value: (row) => row.formula, cell: (row) => <Formula formula={row.formula} /> },
+    {
+      id: 'formula',
+      header: 'Formula',
+      value: (row) => row.formula,
+      cell: (row) => <Formula formula={prefixedFormula(row.formula, row.isomer)} />,
+    },
     {
       id: 'metal',
       header: 'Metal',

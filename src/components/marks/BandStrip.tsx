@@ -1,7 +1,7 @@
-import { formatNumber } from '../notation/quantity';
-import { type BandStyle, bandStyle } from './band-classes';
-import { placeOnStrip, STRIP_VISIBLE, tickHeight } from './band-strip';
-import { VisibleLight } from './VisibleLight';
+import { formatNumber } from '../notation/quantity.ts';
+import { type BandStyle, bandStyle } from './band-classes.ts';
+import { placeOnStrip, STRIP_VISIBLE, tickHeight } from './band-strip.ts';
+import { VisibleLight } from './VisibleLight.tsx';
 
 export interface StripBand {
   /** cm⁻¹ */

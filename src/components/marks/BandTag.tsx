@@ -1,4 +1,4 @@
-import { bandStyle } from './band-classes';
+import { bandStyle } from './band-classes.ts';
 
 /** The letter tile of a class of band. The name stands beside it, or is read aloud and shown as a tooltip. */
 export function BandTag({ bandClass, withName = false }: { bandClass: string | null; withName?: boolean }) {

@@ -1,6 +1,6 @@
 import { useId } from 'react';
-import { VisibleLight } from './VisibleLight';
-import { visibleRule } from './visible-light';
+import { VisibleLight } from './VisibleLight.tsx';
+import { visibleRule } from './visible-light.ts';
 
 interface BandWindowProps {
   /** Bands in bins of equal width over `range`, shortest wavelength first. */

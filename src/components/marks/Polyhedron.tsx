@@ -1,5 +1,5 @@
 import type { PolyhedronDrawing } from '#src/chem/geometry/projection.ts';
-import { donorColours } from './donor-colours';
+import { donorColours } from './donor-colours.ts';
 
 interface PolyhedronProps {
   /** What `drawPolyhedron` made of a geometry and its chelate rings. */

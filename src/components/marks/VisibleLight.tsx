@@ -1,4 +1,4 @@
-import type { VisibleRule } from './visible-light';
+import type { VisibleRule } from './visible-light.ts';
 
 /** The rule of visible light as a thin strip; its parent is positioned and as wide as the axis. */
 export function VisibleLight({ rule, top, height = 2 }: { rule: VisibleRule | null; top: number; height?: number }) {

@@ -1,4 +1,4 @@
-import { type VisibleRule, visibleRule } from './visible-light';
+import { type VisibleRule, visibleRule } from './visible-light.ts';
 
 /** Ends of the strip in cm⁻¹, left and right. */
 export const STRIP_ENDS = [50_000, 4_000] as const;

@@ -1,5 +1,5 @@
 import { Fragment } from 'react';
-import type { Run } from './runs';
+import type { Run } from './runs.ts';
 
 const ELEMENT = { sub: 'sub', sup: 'sup', italic: 'i' } as const;
 

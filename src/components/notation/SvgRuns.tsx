@@ -1,5 +1,5 @@
-import { placeRuns } from './place-runs';
-import type { Run } from './runs';
+import { placeRuns } from './place-runs.ts';
+import type { Run } from './runs.ts';
 
 /** U+200B: carries the way back to the baseline, which an empty tspan would not. */
 const ZERO_WIDTH_SPACE = '\u200b';

@@ -1,4 +1,4 @@
-import { lowerRaised, MINUS, type Run, RunBuilder } from './runs';
+import { lowerRaised, MINUS, type Run, RunBuilder } from './runs.ts';
 
 /**
  * Structural and geometrical prefixes are italic, each joined by a hyphen; Greek letters (Δ, Λ, η, μ, κ) stay upright.

@@ -1,8 +1,8 @@
-import { formulaLabel, parseFormula } from './formula';
-import { ABSENT, oxidationStateText, parseQuantity, parseUnit, type QuantityInput, unitLabel } from './quantity';
-import { Runs } from './Runs';
-import { runsToText } from './runs';
-import { parseConfiguration, parseDCount, parsePointGroup, parseTerm, parseTransition, termLabel } from './term';
+import { formulaLabel, parseFormula } from './formula.ts';
+import { ABSENT, oxidationStateText, parseQuantity, parseUnit, type QuantityInput, unitLabel } from './quantity.ts';
+import { Runs } from './Runs.tsx';
+import { runsToText } from './runs.ts';
+import { parseConfiguration, parseDCount, parsePointGroup, parseTerm, parseTransition, termLabel } from './term.ts';
 
 interface Styled {
   className?: string | undefined;

@@ -1,4 +1,4 @@
-import type { Run } from './runs';
+import type { Run } from './runs.ts';
 
 /** Size of a raised or lowered run, as a share of the size of the line. */
 const SMALL = 0.72;

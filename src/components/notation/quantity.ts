@@ -1,4 +1,4 @@
-import { DIGIT_SPACE, lowerRaised, MINUS, type Run, RunBuilder } from './runs';
+import { DIGIT_SPACE, lowerRaised, MINUS, type Run, RunBuilder } from './runs.ts';
 
 /** A number to be set: its standard uncertainty, its unit in plain text, and how many figures to show. */
 export interface QuantityInput {

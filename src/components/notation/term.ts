@@ -1,4 +1,4 @@
-import { MINUS, type Run, RunBuilder, toPrimes } from './runs';
+import { MINUS, type Run, RunBuilder, toPrimes } from './runs.ts';
 
 const GREEK: Record<string, string> = { Sigma: 'Σ', Pi: 'Π', Delta: 'Δ', Phi: 'Φ', Gamma: 'Γ' };
 

@@ -2,7 +2,7 @@ import { CSPProvider } from '@base-ui/react/csp-provider';
 import { Menu as Base } from '@base-ui/react/menu';
 import { ChevronDown } from 'lucide-react';
 import type { ReactNode } from 'react';
-import { type ButtonKind, buttonClass } from './Button';
+import { type ButtonKind, buttonClass } from './Button.tsx';
 
 export interface MenuItem {
   label: ReactNode;

@@ -1,4 +1,4 @@
-import { toProblemError } from './problem-error';
+import { toProblemError } from './problem-error.ts';
 
 /** `#/bands/0/height` as people read it: "bands 1, height". */
 export function readPointer(pointer: string): string {

@@ -5,7 +5,7 @@ import {
   type TextareaHTMLAttributes,
   useId,
 } from 'react';
-import { CONTROL, Field, type FieldTexts } from './Field';
+import { CONTROL, Field, type FieldTexts } from './Field.tsx';
 
 type WithField<T> = FieldTexts & Omit<T, 'className'> & { className?: string; figures?: boolean };
 

@@ -1,6 +1,6 @@
-import { readProblem, unreachable } from './problem-error';
+import { readProblem, unreachable } from './problem-error.ts';
 
-export { ProblemError } from './problem-error';
+export { ProblemError } from './problem-error.ts';
 
 type Method = 'POST' | 'PUT' | 'PATCH' | 'DELETE';
 

@@ -1,5 +1,5 @@
-import { type Query, QueryCache, QueryClient } from '@tanstack/react-query';
-import { ProblemError } from './problem-error';
+import { QueryCache, QueryClient } from '@tanstack/react-query';
+import { ProblemError } from './problem-error.ts';
 
 /** Answers that another try cannot change. */
 const isFinal = (error: Error) => error instanceof ProblemError && error.status >= 400 && error.status < 500;
@@ -9,7 +9,7 @@ const isFinal = (error: Error) => error instanceof ProblemError && error.status 
  * by the page of another.
  */
 class ForgetfulCache extends QueryCache {
-  override get<Q extends Query = Query>(): Q | undefined {
+  override get(): undefined {
     return undefined;
   }
   override add(): void {}

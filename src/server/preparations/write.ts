@@ -92,18 +92,16 @@ export async function createPreparation({ asker, complex }: ComplexAccess, input
     const { lab, answers, formula, ...rest } = input;
     const { components, ...unit } = await formulaUnit(tx, asker, complex, formula, answers ?? {});
     const now = nowIso();
-    await tx
-      .insert(preparations)
-      .values({
-        id,
-        complexId: complex.id,
-        labId: lab,
-        makerId: asker.accountId,
-        ...rest,
-        ...unit,
-        createdAt: now,
-        updatedAt: now,
-      });
+    await tx.insert(preparations).values({
+      id,
+      complexId: complex.id,
+      labId: lab,
+      makerId: asker.accountId,
+      ...rest,
+      ...unit,
+      createdAt: now,
+      updatedAt: now,
+    });
     await storeComponents(tx, id, { ...unit, components });
     await record(tx, asker, {
       action: 'add-preparation',

@@ -83,18 +83,16 @@ async function grant(
   const { newId, nowIso } = await import('#src/server/ids.ts');
   const { grants } = await import('#src/db/schema/index.ts');
   await (await database()).write((tx) =>
-    tx
-      .insert(grants)
-      .values({
-        id: newId(),
-        folioId,
-        accountId,
-        level,
-        expiresAt,
-        grantedBy,
-        termsAcceptedAt: nowIso(),
-        createdAt: nowIso(),
-      }),
+    tx.insert(grants).values({
+      id: newId(),
+      folioId,
+      accountId,
+      level,
+      expiresAt,
+      grantedBy,
+      termsAcceptedAt: nowIso(),
+      createdAt: nowIso(),
+    }),
   );
 }
 

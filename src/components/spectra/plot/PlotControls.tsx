@@ -1,6 +1,6 @@
-import { Unit } from '../../notation';
-import { Segmented } from '../../ui/Segmented';
-import { type XUnit, Y_TITLES, type YUnit } from './units';
+import { Unit } from '../../notation/index.tsx';
+import { Segmented } from '../../ui/Segmented.tsx';
+import { type XUnit, Y_TITLES, type YUnit } from './units.ts';
 
 const X_CHOICES = (['nm', 'cm-1', 'eV'] as const).map((value) => ({ value, label: <Unit unit={value} /> }));
 const Y_LABELS: Partial<Record<YUnit, string>> = { epsilon: 'ε', 'log-epsilon': 'log ε', absorbance: 'A' };

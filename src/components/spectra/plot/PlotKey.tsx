@@ -1,7 +1,7 @@
-import { formatNumber } from '../../notation/quantity';
-import type { JoinedSeries } from './join-series';
-import type { PlotSeries } from './types';
-import { seriesLooks } from './uplot-options';
+import { formatNumber } from '../../notation/quantity.ts';
+import type { JoinedSeries } from './join-series.ts';
+import type { PlotSeries } from './types.ts';
+import { seriesLooks } from './uplot-options.ts';
 
 interface PlotKeyProps {
   series: readonly PlotSeries[];

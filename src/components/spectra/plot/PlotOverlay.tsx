@@ -1,12 +1,12 @@
-import { bandStyle } from '../../marks/band-classes';
-import { VisibleLight } from '../../marks/VisibleLight';
-import { visibleRule } from '../../marks/visible-light';
-import { runsToText } from '../../notation/runs';
-import { SvgRuns } from '../../notation/SvgRuns';
-import { parseTransition } from '../../notation/term';
-import { placeLabels } from './place-labels';
-import type { PlotArea, PlotBand } from './types';
-import { fromWavenumber, type XUnit, type YUnit } from './units';
+import { bandStyle } from '../../marks/band-classes.ts';
+import { VisibleLight } from '../../marks/VisibleLight.tsx';
+import { visibleRule } from '../../marks/visible-light.ts';
+import { runsToText } from '../../notation/runs.ts';
+import { SvgRuns } from '../../notation/SvgRuns.tsx';
+import { parseTransition } from '../../notation/term.ts';
+import { placeLabels } from './place-labels.ts';
+import type { PlotArea, PlotBand } from './types.ts';
+import { fromWavenumber, type XUnit, type YUnit } from './units.ts';
 
 const TICK = 11;
 const LINE = 17;

@@ -1,9 +1,9 @@
-import { Unit } from '../../notation';
-import { formatNumber } from '../../notation/quantity';
-import { type JoinedSeries, spreadIndices } from './join-series';
-import type { PlotSeries } from './types';
-import { X_FIGURES, X_TITLES, type XUnit, Y_TITLES, type YUnit } from './units';
-import type { ViewWindow } from './view-window';
+import { Unit } from '../../notation/index.tsx';
+import { formatNumber } from '../../notation/quantity.ts';
+import { type JoinedSeries, spreadIndices } from './join-series.ts';
+import type { PlotSeries } from './types.ts';
+import { X_FIGURES, X_TITLES, type XUnit, Y_TITLES, type YUnit } from './units.ts';
+import type { ViewWindow } from './view-window.ts';
 
 /** Rows at most; all points are in the CSV of the spectrum. */
 const ROWS = 200;

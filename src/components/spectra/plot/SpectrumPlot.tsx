@@ -2,19 +2,19 @@ import 'uplot/dist/uPlot.min.css';
 import './spectrum-plot.css';
 import { Minus, Plus, RotateCcw, Table2 } from 'lucide-react';
 import { type KeyboardEvent, type ReactNode, useMemo, useRef, useState } from 'react';
-import { Unit } from '../../notation';
-import { formatNumber } from '../../notation/quantity';
-import { joinSeries, nearestIndex } from './join-series';
-import { PlotKey } from './PlotKey';
-import { PlotOverlay } from './PlotOverlay';
-import { PlotTable } from './PlotTable';
-import type { PlotBand, PlotSeries } from './types';
-import { fromWavenumber, toWavenumber, X_FIGURES, X_TITLES, type XUnit, Y_TITLES, type YUnit } from './units';
-import { useSpectrumPlot } from './useSpectrumPlot';
-import { panned, type ViewWindow, zoomed } from './view-window';
+import { Unit } from '../../notation/index.tsx';
+import { formatNumber } from '../../notation/quantity.ts';
+import { joinSeries, nearestIndex } from './join-series.ts';
+import { PlotKey } from './PlotKey.tsx';
+import { PlotOverlay } from './PlotOverlay.tsx';
+import { PlotTable } from './PlotTable.tsx';
+import type { PlotBand, PlotSeries } from './types.ts';
+import { fromWavenumber, toWavenumber, X_FIGURES, X_TITLES, type XUnit, Y_TITLES, type YUnit } from './units.ts';
+import { useSpectrumPlot } from './useSpectrumPlot.ts';
+import { panned, type ViewWindow, zoomed } from './view-window.ts';
 
-export type { PlotBand, PlotSeries } from './types';
-export type { XUnit, YUnit } from './units';
+export type { PlotBand, PlotSeries } from './types.ts';
+export type { XUnit, YUnit } from './units.ts';
 
 export interface SpectrumPlotProps {
   series: readonly PlotSeries[];

@@ -1,4 +1,4 @@
-import { fromWavenumber, type XUnit, type YUnit } from './units';
+import { fromWavenumber, type XUnit, type YUnit } from './units.ts';
 
 /** A trace as it comes from the server: x ascending in cm⁻¹, null in y for a gap. */
 export interface Trace {

@@ -1,4 +1,4 @@
-import type { Trace } from './join-series';
+import type { Trace } from './join-series.ts';
 
 /** One curve: x ascending in cm⁻¹, y in the quantity of the plot (ε also for log ε), null for a gap. */
 export interface PlotSeries extends Trace {

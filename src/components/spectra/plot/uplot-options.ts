@@ -1,8 +1,8 @@
 import type uPlot from 'uplot';
-import { groupDigits } from '../../notation/quantity';
-import { DIGIT_SPACE } from '../../notation/runs';
-import { type PlotTheme, SERIES_COLOURS, SERIES_DASHES } from './theme';
-import type { PlotSeries } from './types';
+import { groupDigits } from '../../notation/quantity.ts';
+import { DIGIT_SPACE } from '../../notation/runs.ts';
+import { type PlotTheme, SERIES_COLOURS, SERIES_DASHES } from './theme.ts';
+import type { PlotSeries } from './types.ts';
 
 /** What the drawing depends on, apart from the data. */
 interface OptionsInput {

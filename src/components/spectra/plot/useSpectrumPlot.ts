@@ -1,10 +1,10 @@
 import { type RefObject, useEffect, useRef, useState } from 'react';
 import uPlot from 'uplot';
-import type { JoinedSeries } from './join-series';
-import { readTheme, watchTheme } from './theme';
-import type { PlotArea, PlotSeries } from './types';
-import { uplotOptions } from './uplot-options';
-import type { ViewWindow } from './view-window';
+import type { JoinedSeries } from './join-series.ts';
+import { readTheme, watchTheme } from './theme.ts';
+import type { PlotArea, PlotSeries } from './types.ts';
+import { uplotOptions } from './uplot-options.ts';
+import type { ViewWindow } from './view-window.ts';
 
 interface Drawing {
   joined: JoinedSeries;

@@ -1,5 +1,11 @@
 import { describe, expect, test } from 'vitest';
-import { colourOfSolution, complementaryColour, nameColour, srgbDecode, srgbEncode } from '../../../../src/chem/colour';
+import {
+  colourOfSolution,
+  complementaryColour,
+  nameColour,
+  srgbDecode,
+  srgbEncode,
+} from '../../../../src/chem/colour/index.ts';
 
 const NM = Array.from({ length: 401 }, (_, i) => 780 - i);
 const x = NM.map((nm) => 1e7 / nm);

@@ -1,5 +1,5 @@
-import { DomainError } from '../../../../src/chem/errors';
-import { type ReadOptions, readSpectrumFile, type SpectrumBlock } from '../../../../src/chem/spectra';
+import { DomainError } from '../../../../src/chem/errors.ts';
+import { type ReadOptions, readSpectrumFile, type SpectrumBlock } from '../../../../src/chem/spectra/index.ts';
 
 /** Spectra of a text, as a UTF-8 file. */
 export function readText(text: string, options?: ReadOptions): SpectrumBlock[] {

@@ -1,8 +1,8 @@
 import { expect, test } from 'vitest';
-import { DomainError } from '../../../../src/chem/errors';
-import { readSpectrumFile, writeJcamp } from '../../../../src/chem/spectra';
-import { jcamp } from './bytes';
-import { random } from './random';
+import { DomainError } from '../../../../src/chem/errors.ts';
+import { readSpectrumFile, writeJcamp } from '../../../../src/chem/spectra/index.ts';
+import { jcamp } from './bytes.ts';
+import { random } from './random.ts';
 
 const x = Array.from({ length: 120 }, (_, i) => 800 - i * 2);
 const y = x.map((nm) => Math.exp(-(((nm - 650) / 60) ** 2)));

@@ -19,9 +19,9 @@ import {
   toAbsorbance,
   toWavenumber,
   writeCsv,
-} from '../../../../src/chem/spectra';
-import { readText } from './bytes';
-import { random } from './random';
+} from '../../../../src/chem/spectra/index.ts';
+import { readText } from './bytes.ts';
+import { random } from './random.ts';
 
 describe('abscissae', () => {
   test('there and back over every unit', () => {

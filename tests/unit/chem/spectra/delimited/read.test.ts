@@ -1,6 +1,6 @@
 import { describe, expect, test } from 'vitest';
-import { readSpectrumFile } from '../../../../../src/chem/spectra';
-import { codes, readText, refusal } from '../bytes';
+import { readSpectrumFile } from '../../../../../src/chem/spectra/index.ts';
+import { codes, readText, refusal } from '../bytes.ts';
 
 const X = [400, 401, 402];
 const Y = [0.123, 0.234, 0.345];

@@ -1,5 +1,5 @@
 import { describe, expect, test } from 'vitest';
-import { codes, jcamp, readText, refusal } from '../bytes';
+import { codes, jcamp, readText, refusal } from '../bytes.ts';
 
 // The worked example of section 1.5 of our notes on McDonald & Wilks 1988 (own numbers, decoded alike by two programs).
 const X = [400, 405, 410, 415, 420, 425, 430, 435];

@@ -5,9 +5,9 @@ import {
   writeJcamp,
   type XUnit,
   type YUnit,
-} from '../../../../../src/chem/spectra';
-import { readText } from '../bytes';
-import { random } from '../random';
+} from '../../../../../src/chem/spectra/index.ts';
+import { readText } from '../bytes.ts';
+import { random } from '../random.ts';
 
 const spectrum: SpectrumToWrite = {
   title: '[Ni(H2O)6]2+ in water, invented',
