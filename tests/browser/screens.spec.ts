@@ -11,8 +11,8 @@ const GUEST = ['/', '/complexes', '/folios'];
 const people = [
   { who: 'nobody', email: null, paths: ['/signin', '/outbox', '/join'] },
   { who: 'contributor', email: 'contributor@demo.example', paths: [...MEMBER, '/tokens'] },
-  { who: 'lead', email: 'lead@demo.example', paths: ['/', '/folios', '/labs'] },
-  { who: 'steward', email: 'steward@demo.example', paths: ['/', '/complexes', '/labs'] },
+  { who: 'lead', email: 'lead@demo.example', paths: ['/', '/folios'] },
+  { who: 'steward', email: 'steward@demo.example', paths: ['/', '/labs'] },
   { who: 'guest', email: 'guest@demo.example', paths: GUEST },
 ] as const;
 
@@ -22,7 +22,8 @@ for (const { who, email, paths } of people)
       test.setTimeout(180_000);
       await context.addCookies([{ name: 'zaffre-theme', value: theme, url: baseURL! }]);
       if (email) await signIn(page, email);
-      const records = email ? await firstRecords(page) : [];
+      // The records look alike to every member; a guest's have fewer parts.
+      const records = who === 'contributor' || who === 'guest' ? await firstRecords(page) : [];
       const faults: string[] = [];
       for (const path of [...paths, ...records])
         await test.step(path, async () => {
