@@ -2,7 +2,7 @@ import { defineMiddleware } from 'astro:middleware';
 import { randomUUID } from 'node:crypto';
 import { getSession } from 'auth-astro/server';
 import { type Asker, askerOfSession, askerOfToken } from './server/access/asker.ts';
-import { problem, toProblem } from './server/http.ts';
+import { problem, tooLarge, toProblem } from './server/http.ts';
 import { log } from './server/log.ts';
 import { isLoopback, settings } from './server/settings.ts';
 import { startBackground } from './server/start.ts';
@@ -68,18 +68,38 @@ function withHeaders(answer: Response, isApi: boolean, requestId: string): Respo
   return response;
 }
 
-/** What the framework itself refuses under /api (an unknown path, a method that is not served) is a problem, too. */
-function asProblem(response: Response, isApi: boolean, path: string): Response {
-  const ours = !isApi || path.startsWith('/api/auth/') || response.status < 400 || response.status === 412;
-  if (ours || response.headers.get('content-type')?.startsWith('application/problem+json')) return response;
-  return problem(response.status, 'There is no such endpoint or method; /api/openapi.json lists what is served');
+const NO_ENDPOINT = 'There is no such endpoint or method; /api/openapi.json lists what is served';
+
+/**
+ * What the framework or the sign-in library itself refuses under /api (an unknown path, a method that is not served, a
+ * form that cannot be read) is a problem, too.
+ */
+function asProblem(response: Response): Response {
+  const { status } = response;
+  if (status < 400 || response.headers.get('content-type')?.startsWith('application/problem+json')) return response;
+  return problem(status, status === 404 || status === 405 ? NO_ENDPOINT : 'The request could not be served');
+}
+
+const AUTH = '/api/auth/';
+/** Of the sign-in library, what our pages use: it has pages of its own, too. */
+const AUTH_ENDPOINT = /^(?:GET csrf|GET session|GET providers|GET signin|POST callback\/credentials|POST signout)$/;
+/** A sign-in form is short; the library reads it whole, however long it is. */
+const AUTH_LIMIT = 10_000;
+
+/** Why a request to the sign-in library does not reach it, or null. */
+function refuseAuth({ method, headers }: Request, path: string): Response | null {
+  if (!AUTH_ENDPOINT.test(`${method === 'HEAD' ? 'GET' : method} ${path}`)) return problem(404, NO_ENDPOINT);
+  if (method !== 'POST') return null;
+  const length = headers.get('content-length');
+  if (length === null) return problem(411, 'Send the length of the form', { title: 'Length required' });
+  return Number(length) > AUTH_LIMIT ? toProblem(tooLarge(AUTH_LIMIT), '') : null;
 }
 
 export const onRequest = defineMiddleware(async (context, next) => {
   const { request, url, locals, cookies } = context;
   const started = performance.now();
   const requestId = randomUUID();
-  const isApi = url.pathname.startsWith('/api/');
+  const isApi = /^\/api(?:\/|$)/.test(url.pathname);
   locals.requestId = requestId;
   locals.asker = null as Asker | null;
   locals.theme = cookies.get('zaffre-theme')?.value === 'dark' ? 'dark' : 'light';
@@ -94,10 +114,16 @@ export const onRequest = defineMiddleware(async (context, next) => {
     const byCookie = !request.headers.has('authorization') && SESSION_COOKIE.test(request.headers.get('cookie') ?? '');
     if (UNSAFE.has(request.method) && byCookie && (locals.asker || !isApi) && !fromOwnPage(request))
       return problem(403, 'A write by cookie must come from a page of this registry');
-    return next();
+    if (!isApi) return next();
+    const refused = url.pathname.startsWith(AUTH) ? refuseAuth(request, url.pathname.slice(AUTH.length)) : null;
+    try {
+      return refused ?? asProblem(await next());
+    } catch (error) {
+      return toProblem(error, requestId);
+    }
   };
 
-  const response = withHeaders(asProblem(await answer(), isApi, url.pathname), isApi, requestId);
+  const response = withHeaders(await answer(), isApi, requestId);
   log.info({
     requestId,
     method: request.method,

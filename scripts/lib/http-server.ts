@@ -1,4 +1,4 @@
-import { createServer, type IncomingMessage, type Server, type ServerResponse } from 'node:http';
+import { createServer, type IncomingMessage, type Server, type ServerResponse, STATUS_CODES } from 'node:http';
 import { compressResponse } from './compression.ts';
 import { portError } from './ports.mjs';
 
@@ -8,6 +8,8 @@ export type Handler = (request: IncomingMessage, response: ServerResponse) => vo
 const HEADERS_TIMEOUT_MS = 20_000;
 const REQUEST_TIMEOUT_MS = 600_000;
 const HEADER_BYTES = 16_384;
+/** What a program behind the standard request object can be asked with (it refuses TRACE and CONNECT). */
+const METHODS = new Set(['GET', 'HEAD', 'POST', 'PUT', 'PATCH', 'DELETE', 'OPTIONS']);
 
 /**
  * The server around the built program. It compresses, bounds headers and times, and takes away what only a proxy in
@@ -26,10 +28,47 @@ export function createAppServer(handler: Handler, { trustProxy }: { trustProxy: 
     if (!trustProxy)
       for (const name of Object.keys(request.headers))
         if (name === 'forwarded' || name.startsWith('x-forwarded-')) delete request.headers[name];
+    if (!normaliseTarget(request)) return refuse(response, 400, 'The address of the request cannot be read');
+    if (!METHODS.has(request.method ?? '')) return refuse(response, 501, 'This method is served nowhere');
     compressResponse(request, response);
     handler(request, response);
   });
   return server;
+}
+
+/**
+ * Bring the absolute form of a request target (RFC 9112 §3.2.2), whose host goes before the Host header, to the usual
+ * one.
+ *
+ * @returns whether the target can be read
+ */
+function normaliseTarget(request: IncomingMessage): boolean {
+  const target = request.url ?? '';
+  if (/^https?:\/\//i.test(target)) {
+    if (!URL.canParse(target)) return false;
+    const { host, pathname, search } = new URL(target);
+    request.url = `${pathname}${search}`;
+    request.headers.host = host;
+  }
+  try {
+    decodeURI(request.url?.split('?')[0] ?? '');
+    return request.url?.startsWith('/') ?? false;
+  } catch {
+    return false;
+  }
+}
+
+/** What does not get as far as the program is refused in its form (RFC 9457). */
+function refuse(response: ServerResponse, status: number, detail: string): void {
+  const title = STATUS_CODES[status];
+  response
+    .writeHead(status, {
+      'content-type': 'application/problem+json',
+      'cache-control': 'private, no-store',
+      'content-security-policy': "default-src 'none'; frame-ancestors 'none'; sandbox",
+      'x-content-type-options': 'nosniff',
+    })
+    .end(JSON.stringify({ type: 'about:blank', title, status, detail }));
 }
 
 /** @throws {UsageError} when the port cannot be had */

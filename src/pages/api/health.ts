@@ -8,6 +8,6 @@ export const GET = endpoint(routes.health, {
     // Mail that waits is no reason to send people away.
     const ok = parts.database === 'ok' && parts.store === 'ok';
     const body = { status: ok ? 'ok' : 'unavailable', ...(asker?.steward ? { parts } : {}) };
-    return new Answer(body, { status: ok ? 200 : 503 });
+    return new Answer(body, ok ? {} : { status: 503, headers: { 'retry-after': '10' } });
   },
 });
