@@ -6,9 +6,11 @@ import { closeDatabase, database } from '#src/server/database.ts';
 import { DEMO_ACCOUNTS } from '#src/server/demo-accounts.ts';
 import { createFolio } from '#src/server/folios/change.ts';
 import { newId, nowIso } from '#src/server/ids.ts';
-import { firstRow, heavier } from './demo/complexes.ts';
+import { cobaltToZinc } from './demo/cobalt-to-zinc.ts';
+import { heavierMetals } from './demo/heavier-metals.ts';
 import { loadComplex } from './demo/load-complex.ts';
 import { type DemoPeople, loadPeople } from './demo/load-people.ts';
+import { titaniumToIron } from './demo/titanium-to-iron.ts';
 import { readOptions, run } from './lib/command.ts';
 
 /** A folio of one lab, and the guest who reads it. */
@@ -68,7 +70,8 @@ async function shareFolio(
 export async function loadDemo(): Promise<void> {
   const people = await loadPeople();
   const accession = new Map<string, string>();
-  for (const demo of [...firstRow, ...heavier]) accession.set(demo.formula, await loadComplex(demo, people));
+  for (const demo of [...titaniumToIron, ...cobaltToZinc, ...heavierMetals])
+    accession.set(demo.formula, await loadComplex(demo, people));
   const pick = (...formulas: string[]) => formulas.map((formula) => accession.get(formula)!);
 
   const contributor = await people.asker(DEMO_ACCOUNTS[2].email);

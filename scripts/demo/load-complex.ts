@@ -12,7 +12,7 @@ import { replaceBands } from '#src/server/spectra/bands.ts';
 import { judgeBand } from '#src/server/spectra/judge.ts';
 import { resolveTarget } from '#src/server/spectra/target.ts';
 import { createSpectrum } from '#src/server/spectra/upload.ts';
-import type { DemoBand, DemoComplex } from './complexes.ts';
+import type { DemoBand, DemoComplex } from './demo-complex.ts';
 import type { DemoPeople } from './load-people.ts';
 import { type LabKey, labs, staff } from './people.ts';
 import { asFile, type FileForm, hash, syntheticCurve, usefulConcentration } from './synthetic-spectrum.ts';

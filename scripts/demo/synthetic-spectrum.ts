@@ -1,5 +1,5 @@
 import { writeCsv, writeJcamp } from '#src/chem/spectra/index.ts';
-import type { DemoBand } from './complexes.ts';
+import type { DemoBand } from './demo-complex.ts';
 
 /** Uniform numbers 0 … 1 from a seed (mulberry32), so that the demo data are the same on every machine. */
 export function seeded(seed: number): () => number {

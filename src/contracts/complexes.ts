@@ -1,22 +1,10 @@
 import * as z from 'zod';
+import { bandClasses } from '../chem/assignment/band-classes.ts';
 import { Caution, Instant, LabRef, listOf, Paging, pageOf, RecordState, Visibility } from './common.ts';
-import { route } from './route.ts';
 
 export const SpinState = z.enum(['low', 'intermediate', 'high', 'crossover']);
 export const Chirality = z.enum(['Δ', 'Λ', 'C', 'A', 'rac']);
-export const BandClass = z.enum([
-  'd-d',
-  'LMCT',
-  'MLCT',
-  'intraligand',
-  'interligand',
-  'intervalence',
-  'metal-metal',
-  'metal-centred-other',
-  'ion-pair',
-  'other',
-  'unassigned',
-]);
+export const BandClass = z.enum(bandClasses);
 
 export const Centre = z
   .object({
@@ -230,119 +218,3 @@ export const PreparationPatch = PreparationInput.omit({ lab: true })
   .extend({ state: RecordState.optional(), withdrawnReason: z.string().trim().min(3).max(2000).optional() })
   .meta({ id: 'PreparationPatch' });
 export type PreparationPatch = z.infer<typeof PreparationPatch>;
-
-const tag = 'Complexes';
-
-export const complexRoutes = {
-  listComplexes: route({
-    method: 'GET',
-    path: '/api/complexes',
-    summary: 'Complexes in sight, filtered and sorted',
-    tag,
-    who: 'signed-in',
-    scope: 'read',
-    query: ComplexQuery,
-    status: 200,
-    answers: pageOf(ComplexSummary),
-  }),
-  createComplex: route({
-    method: 'POST',
-    path: '/api/complexes',
-    summary: 'Register a complex',
-    tag,
-    who: 'member',
-    scope: 'write',
-    body: ComplexInput,
-    status: 201,
-    answers: ComplexRecord,
-    refusals: { 409: 'The identity is registered: `accession` tells where' },
-  }),
-  readComplex: route({
-    method: 'GET',
-    path: '/api/complexes/{accession}',
-    summary: 'A complex',
-    tag,
-    who: 'signed-in',
-    scope: 'read',
-    status: 200,
-    answers: ComplexRecord,
-  }),
-  changeComplex: route({
-    method: 'PATCH',
-    path: '/api/complexes/{accession}',
-    summary: 'Change a complex: identity, state, notes',
-    tag,
-    who: 'member',
-    scope: 'write',
-    body: ComplexPatch,
-    status: 200,
-    answers: ComplexRecord,
-    conditional: true,
-  }),
-  deleteComplex: route({
-    method: 'DELETE',
-    path: '/api/complexes/{accession}',
-    summary: 'Delete a draft (a registered complex is withdrawn instead)',
-    tag,
-    who: 'member',
-    scope: 'write',
-    status: 204,
-    answers: null,
-    conditional: true,
-  }),
-  listPreparations: route({
-    method: 'GET',
-    path: '/api/complexes/{accession}/preparations',
-    summary: 'Preparations of a complex',
-    tag,
-    who: 'signed-in',
-    scope: 'read',
-    query: Paging,
-    status: 200,
-    answers: pageOf(PreparationRecord),
-  }),
-  createPreparation: route({
-    method: 'POST',
-    path: '/api/complexes/{accession}/preparations',
-    summary: 'Add a preparation',
-    tag,
-    who: 'member',
-    scope: 'write',
-    body: PreparationInput,
-    status: 201,
-    answers: PreparationRecord,
-  }),
-  readPreparation: route({
-    method: 'GET',
-    path: '/api/preparations/{id}',
-    summary: 'A preparation',
-    tag,
-    who: 'signed-in',
-    scope: 'read',
-    status: 200,
-    answers: PreparationRecord,
-  }),
-  changePreparation: route({
-    method: 'PATCH',
-    path: '/api/preparations/{id}',
-    summary: 'Change or withdraw a preparation',
-    tag,
-    who: 'member',
-    scope: 'write',
-    body: PreparationPatch,
-    status: 200,
-    answers: PreparationRecord,
-    conditional: true,
-  }),
-  deletePreparation: route({
-    method: 'DELETE',
-    path: '/api/preparations/{id}',
-    summary: 'Delete a preparation that no spectrum uses',
-    tag,
-    who: 'member',
-    scope: 'write',
-    status: 204,
-    answers: null,
-    conditional: true,
-  }),
-};

@@ -1,7 +1,7 @@
-import { complexRoutes } from './complexes.ts';
+import { complexRoutes } from './complex-routes.ts';
 import { deriveRoutes } from './derive.ts';
 import { sharingRoutes } from './sharing-routes.ts';
-import { spectrumRoutes } from './spectra.ts';
+import { spectrumRoutes } from './spectrum-routes.ts';
 
 /**
  * Every endpoint of the program: who may call it, what enters and what leaves. Requests are checked by it, the OpenAPI

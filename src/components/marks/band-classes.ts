@@ -1,16 +1,6 @@
-/** Classes of band, as the contract names them. */
-export type BandClass =
-  | 'd-d'
-  | 'LMCT'
-  | 'MLCT'
-  | 'intraligand'
-  | 'interligand'
-  | 'intervalence'
-  | 'metal-metal'
-  | 'metal-centred-other'
-  | 'ion-pair'
-  | 'other'
-  | 'unassigned';
+import type { BandClass } from '#src/chem/assignment/band-classes.ts';
+
+export type { BandClass };
 
 /** How a stroke of a class is drawn: dashed, as two thin lines, or as an outline with nothing in it. */
 export type Stroke = { kind: 'dashed'; dash: string } | { kind: 'double' } | { kind: 'hollow' };

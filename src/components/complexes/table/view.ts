@@ -1,3 +1,5 @@
+import { bandClasses } from '#src/chem/assignment/band-classes.ts';
+
 /**
  * What the table of complexes shows: filters, order, page. It stands in the address under the names of the API, so that
  * an address can be sent to a colleague; there `page` takes the place of the cursor, which is good for one asker only.
@@ -39,19 +41,7 @@ const NUMERIC: readonly ListFilter[] = ['dCount', 'oxidationState'];
 const AMONG: Partial<Record<ListFilter, readonly string[]>> = {
   spinState: ['low', 'intermediate', 'high', 'crossover'],
   state: ['draft', 'registered', 'withdrawn'],
-  bandClass: [
-    'd-d',
-    'LMCT',
-    'MLCT',
-    'intraligand',
-    'interligand',
-    'intervalence',
-    'metal-metal',
-    'metal-centred-other',
-    'ion-pair',
-    'other',
-    'unassigned',
-  ],
+  bandClass: bandClasses,
 };
 
 const fitsList = (name: ListFilter, value: string): boolean => {
