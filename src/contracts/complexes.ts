@@ -1,6 +1,6 @@
 import * as z from 'zod';
 import { bandClasses } from '../chem/assignment/band-classes.ts';
-import { Caution, Instant, LabRef, listOf, Paging, pageOf, RecordState, Visibility } from './common.ts';
+import { Caution, Instant, LabRef, listOf, Paging, RecordState, Visibility } from './common.ts';
 
 export const SpinState = z.enum(['low', 'intermediate', 'high', 'crossover']);
 export const Chirality = z.enum(['Δ', 'Λ', 'C', 'A', 'rac']);

@@ -1,5 +1,5 @@
 import * as z from 'zod';
-import { Caution, Instant, LabRef, listOf, Paging, pageOf, RecordState, Visibility } from './common.ts';
+import { Caution, Instant, LabRef, listOf, Paging, RecordState, Visibility } from './common.ts';
 import { BandClass } from './complexes.ts';
 
 export const Technique = z.enum(['solution', 'reflectance', 'transmission', 'emission', 'circular-dichroism']);

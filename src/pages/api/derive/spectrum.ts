@@ -1,4 +1,5 @@
-import { PreviewOptions, spectrumRoutes as routes } from '#src/contracts/spectra.ts';
+import { routes } from '#src/contracts/routes.ts';
+import { PreviewOptions } from '#src/contracts/spectra.ts';
 import { endpoint } from '#src/server/endpoint.ts';
 import { readUpload } from '#src/server/spectra/multipart.ts';
 import { previewFile } from '#src/server/spectra/preview.ts';

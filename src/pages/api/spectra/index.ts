@@ -1,4 +1,5 @@
-import { spectrumRoutes as routes, SpectrumMetadata } from '#src/contracts/spectra.ts';
+import { routes } from '#src/contracts/routes.ts';
+import { SpectrumMetadata } from '#src/contracts/spectra.ts';
 import { Answer, endpoint, respond } from '#src/server/endpoint.ts';
 import { replayOrRun } from '#src/server/idempotency.ts';
 import { linkHeader } from '#src/server/paging.ts';

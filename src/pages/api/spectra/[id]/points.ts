@@ -1,4 +1,4 @@
-import { spectrumRoutes as routes } from '#src/contracts/spectra.ts';
+import { routes } from '#src/contracts/routes.ts';
 import { seeSpectrum } from '#src/server/access/records.ts';
 import { endpoint } from '#src/server/endpoint.ts';
 import { readPoints } from '#src/server/spectra/points.ts';
