@@ -100,7 +100,7 @@ async function measure(
     cell: 'quartz, 10 mm',
     operator: maker.name,
     measuredAt: `2026-0${1 + (seed % 9)}-${String(1 + (seed % 28)).padStart(2, '0')}`,
-    title: `${labName.split(' ')[0]} ${labName.split(' ')[1]}, ${solvent}, synthetic`,
+    title: `${lab.toUpperCase()} run ${100 + (seed % 900)}, synthetic`,
     notes: 'Synthetic: computed from band parameters for the demo, not measured.',
     synthetic: true,
   };
