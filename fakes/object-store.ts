@@ -126,7 +126,10 @@ function segments(key: string | undefined): string[] {
 const keyPart = (name: string) => (name === '%' ? '' : decodeURIComponent(name));
 
 async function keysUnder(folder: string): Promise<string[]> {
-  const entries = await readdir(folder, { withFileTypes: true }).catch(() => []);
+  const entries = await readdir(folder, { withFileTypes: true }).catch((error: NodeJS.ErrnoException) => {
+    if (error.code === 'ENOENT') return [];
+    throw error;
+  });
   const lists = entries.map(async (entry) => {
     if (entry.isFile()) return entry.name.endsWith(OBJECT) ? [keyPart(entry.name.slice(0, -OBJECT.length))] : [];
     const below = await keysUnder(join(folder, entry.name));

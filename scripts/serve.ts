@@ -29,12 +29,11 @@ export async function serve({ data, demo }: { data: string; demo: boolean }): Pr
   const hasDemo = await prepareDatabase(settings, demo && settings.mode === 'demo');
 
   const entry = (await import(pathToFileURL(join(ROOT, 'dist', 'server', 'entry.mjs')).href)) as { handler: Handler };
-  const server = createAppServer(entry.handler, { trustProxy: settings.trustProxy });
-  await listen(server, settings.host, settings.port);
-  // The program loads with its first request; asking here starts its job loop and spares the first visitor the wait.
-  await fetch(`http://${hostInUrl(settings.host)}:${settings.port}/api/health`).catch(() => undefined);
-  greet(settings, hasDemo);
-
+  const server = createAppServer(entry.handler, {
+    trustProxy: settings.trustProxy,
+    https: settings.publicOrigin.startsWith('https:'),
+  });
+  // Before it listens: whoever sees it answer may end it.
   let stopping = false;
   const stop = (signal: NodeJS.Signals) => {
     if (stopping) process.exit(1);
@@ -43,6 +42,10 @@ export async function serve({ data, demo }: { data: string; demo: boolean }): Pr
     void shutDown(server).then((code) => process.exit(code));
   };
   process.on('SIGTERM', stop).on('SIGINT', stop);
+  await listen(server, settings.host, settings.port);
+  // The program loads with its first request; asking here starts its job loop and spares the first visitor the wait.
+  await fetch(`http://${hostInUrl(settings.host)}:${settings.port}/api/health`).catch(() => undefined);
+  greet(settings, hasDemo);
 }
 
 /** An address that means every interface is reached at this machine's own. */

@@ -6,7 +6,7 @@ import { closeDatabase, database } from '#src/server/database.ts';
 import { newId, nowIso } from '#src/server/ids.ts';
 import { hashPassword } from '#src/server/passwords.ts';
 import { record } from '#src/server/trail.ts';
-import { accountOf, readOptions, run, UsageError } from './lib/command.ts';
+import { accountOf, makeDataFolder, readOptions, run, UsageError } from './lib/command.ts';
 import { isHalfLoaded } from './lib/demo-data.ts';
 import { migrateDatabase } from './migrate.ts';
 
@@ -22,6 +22,7 @@ run(async () => {
   const email = options.email?.trim().toLowerCase();
   if (!email || !/^[^\s@]+@[^\s@]+$/.test(email))
     throw new UsageError('npm run steward: say who, with --email <address>.');
+  makeDataFolder();
   const open = await database();
   await migrateDatabase(open);
   if (await isHalfLoaded(open))

@@ -16,7 +16,8 @@ const SESSION_COOKIE = /(?:^|;\s*)(?:__Secure-)?authjs\.session-token(?:\.\d+)?=
 function ownOrigin(url: URL): boolean {
   const { mode, publicOrigin } = settings();
   if (url.origin === publicOrigin) return true;
-  return mode === 'demo' && isLoopback(url.hostname) && url.port === new URL(publicOrigin).port;
+  const { protocol, port } = new URL(publicOrigin);
+  return mode === 'demo' && isLoopback(url.hostname) && url.protocol === protocol && url.port === port;
 }
 
 /**
@@ -68,19 +69,21 @@ function withHeaders(answer: Response, isApi: boolean, requestId: string): Respo
   return response;
 }
 
+const AUTH = '/api/auth/';
 const NO_ENDPOINT = 'There is no such endpoint or method; /api/openapi.json lists what is served';
 
 /**
  * What the framework or the sign-in library itself refuses under /api (an unknown path, a method that is not served, a
  * form that cannot be read) is a problem, too.
  */
-function asProblem(response: Response): Response {
-  const { status } = response;
-  if (status < 400 || response.headers.get('content-type')?.startsWith('application/problem+json')) return response;
+function asProblem(response: Response, path: string): Response {
+  const { status, headers } = response;
+  // JSON of our own stays: health that is bad is no problem but an answer.
+  const ours = path.startsWith(AUTH) ? /^application\/problem\+json/ : /^application\/(?:problem\+)?json/;
+  if (status < 400 || ours.test(headers.get('content-type') ?? '')) return response;
   return problem(status, status === 404 || status === 405 ? NO_ENDPOINT : 'The request could not be served');
 }
 
-const AUTH = '/api/auth/';
 /** Of the sign-in library, what our pages use: it has pages of its own, too. */
 const AUTH_ENDPOINT = /^(?:GET csrf|GET session|GET providers|GET signin|POST callback\/credentials|POST signout)$/;
 /** A sign-in form is short; the library reads it whole, however long it is. */
@@ -117,7 +120,7 @@ export const onRequest = defineMiddleware(async (context, next) => {
     if (!isApi) return next();
     const refused = url.pathname.startsWith(AUTH) ? refuseAuth(request, url.pathname.slice(AUTH.length)) : null;
     try {
-      return refused ?? asProblem(await next());
+      return refused ?? asProblem(await next(), url.pathname);
     } catch (error) {
       return toProblem(error, requestId);
     }

@@ -1,4 +1,4 @@
-import { existsSync } from 'node:fs';
+import { existsSync, mkdirSync } from 'node:fs';
 import { join } from 'node:path';
 import { eq } from 'drizzle-orm';
 import type { Database } from '#src/db/client.ts';
@@ -40,6 +40,11 @@ export function requireDatabase(): void {
   const folder = process.env.ZAFFRE_DATA ?? '';
   if (!process.env.DATABASE_URL && !existsSync(join(folder, 'zaffre.db')))
     throw new UsageError(`There is no database in ${folder}; start the program once, or name its folder with --data.`);
+}
+
+/** Make the data folder where a script may be the first to use it. */
+export function makeDataFolder(): void {
+  mkdirSync(process.env.ZAFFRE_DATA ?? '', { recursive: true });
 }
 
 /** The account of an address, however it is capitalised. */

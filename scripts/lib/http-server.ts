@@ -7,6 +7,8 @@ export type Handler = (request: IncomingMessage, response: ServerResponse) => vo
 /** Longest time a client may take for its headers and for a whole request, an upload on a slow line among them, in milliseconds. */
 const HEADERS_TIMEOUT_MS = 20_000;
 const REQUEST_TIMEOUT_MS = 600_000;
+/** How long a client that was answered already may take to see it and to stop sending, in milliseconds. */
+const LINGER_MS = 1_000;
 const HEADER_BYTES = 16_384;
 /** What a program behind the standard request object can be asked with (it refuses TRACE and CONNECT). */
 const METHODS = new Set(['GET', 'HEAD', 'POST', 'PUT', 'PATCH', 'DELETE', 'OPTIONS']);
@@ -16,8 +18,12 @@ const METHODS = new Set(['GET', 'HEAD', 'POST', 'PUT', 'PATCH', 'DELETE', 'OPTIO
  * front may say.
  *
  * @param trustProxy - whether there is a proxy, whose `X-Forwarded-…` headers are believed
+ * @param https - whether people reach it by https, and shall from then on
  */
-export function createAppServer(handler: Handler, { trustProxy }: { trustProxy: boolean }): Server {
+export function createAppServer(
+  handler: Handler,
+  { trustProxy, https = false }: { trustProxy: boolean; https?: boolean },
+): Server {
   const server = createServer({
     maxHeaderSize: HEADER_BYTES,
     headersTimeout: HEADERS_TIMEOUT_MS,
@@ -28,6 +34,17 @@ export function createAppServer(handler: Handler, { trustProxy }: { trustProxy: 
     if (!trustProxy)
       for (const name of Object.keys(request.headers))
         if (name === 'forwarded' || name.startsWith('x-forwarded-')) delete request.headers[name];
+    const { socket } = request;
+    // Here, since the files of the build do not pass the program's own middleware.
+    response.setHeader('x-content-type-options', 'nosniff');
+    if (https) response.setHeader('strict-transport-security', 'max-age=31536000; includeSubDomains');
+    // An answer that came before the end of the body, a refusal, would be lost if the connection were cut under a client
+    // that still sends: our side is closed first, the other one after a while.
+    response.prependOnceListener('finish', () => {
+      if (request.complete) return;
+      socket.destroySoon = () => socket.end();
+      setTimeout(() => socket.destroy(), LINGER_MS).unref();
+    });
     if (!normaliseTarget(request)) return refuse(response, 400, 'The address of the request cannot be read');
     if (!METHODS.has(request.method ?? '')) return refuse(response, 501, 'This method is served nowhere');
     compressResponse(request, response);

@@ -61,6 +61,8 @@ export class SettingsError extends Error {
   override readonly name = 'SettingsError';
 }
 
+const ORIGIN_EXAMPLE = 'https://zaffre.example';
+
 const LOOPBACK = new Set(['localhost', '127.0.0.1', '[::1]', '::1']);
 
 /** Whether a host name, without its port, is this machine only. */
@@ -78,8 +80,10 @@ export function readSettings(environment: NodeJS.ProcessEnv): Settings {
   if (!parsed.success)
     throw new SettingsError(parsed.error.issues.map((i) => `${i.path.join('.')}: ${i.message}`).join('\n'));
   const env = parsed.data;
-  const publicOrigin = (env.PUBLIC_ORIGIN ?? `http://localhost:${env.PORT}`).replace(/\/$/, '');
-  const faults = [...modeFaults(env, publicOrigin), ...storeFaults(env)];
+  const givenOrigin = env.PUBLIC_ORIGIN ?? `http://localhost:${env.PORT}`;
+  // As a browser writes it: without the port that its scheme has anyway, its host in small letters.
+  const publicOrigin = new URL(givenOrigin).origin;
+  const faults = [...originFaults(givenOrigin), ...modeFaults(env, publicOrigin), ...storeFaults(env)];
   if (faults.length > 0) throw new SettingsError(faults.join('\n'));
 
   const dataFolder = resolve(env.ZAFFRE_DATA);
@@ -109,6 +113,13 @@ export function readSettings(environment: NodeJS.ProcessEnv): Settings {
     logLevel: env.LOG_LEVEL,
     maxUploadBytes: env.MAX_UPLOAD_BYTES,
   };
+}
+
+/** Every request's origin is compared with it, so that it must be one: with a path it would fit none. */
+function originFaults(given: string): string[] {
+  const { protocol, pathname, search, hash, username } = new URL(given);
+  if (/^https?:$/.test(protocol) && `${pathname}${search}${hash}${username}` === '/') return [];
+  return [`PUBLIC_ORIGIN: give scheme, host and port alone, such as ${ORIGIN_EXAMPLE}, not "${given}"`];
 }
 
 function modeFaults(env: z.infer<typeof Environment>, publicOrigin: string): string[] {

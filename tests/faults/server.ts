@@ -58,7 +58,8 @@ export async function startServer(
       said += chunk;
     });
   for (let tries = 0; ; tries++) {
-    if (child.exitCode !== null) throw new Error(`the server ended with ${child.exitCode}: ${said}`);
+    const over = child.exitCode ?? child.signalCode;
+    if (over !== null) throw new Error(`the server ended with ${over}: ${said}`);
     const answer = await ask(port, '/api/health', { headers }).catch(() => null);
     if (answer?.status === 200) break;
     if (tries === 600) throw new Error(`the server does not answer: ${said}`);
@@ -153,6 +154,8 @@ export function ask(
         },
       },
       async (response) => {
+        // What fails from here on is the sending of a body that was refused.
+        sent.off('error', reject).on('error', () => undefined);
         const chunks: Buffer[] = [];
         try {
           for await (const chunk of response) chunks.push(chunk as Buffer);
@@ -170,13 +173,17 @@ export function ask(
 }
 
 async function sendSlowly(sent: ReturnType<typeof request>, body: AsyncIterable<Buffer>): Promise<void> {
-  let answered = false;
-  sent.once('response', () => {
-    answered = true;
+  let over = false;
+  const ended = new Promise<void>((resolve) => {
+    const end = () => {
+      over = true;
+      resolve();
+    };
+    sent.once('response', end).once('close', end);
   });
   for await (const chunk of body) {
-    if (sent.destroyed || answered) return;
-    if (!sent.write(chunk)) await Promise.race([once(sent, 'drain'), once(sent, 'close'), once(sent, 'response')]);
+    if (over) return;
+    if (!sent.write(chunk)) await Promise.race([ended, new Promise((resolve) => sent.once('drain', resolve))]);
   }
   sent.end();
 }
