@@ -12,7 +12,7 @@ const x = NM.map((nm) => 1e7 / nm);
 const band = (height: number, centre: number, fwhm: number): number[] =>
   NM.map((nm) => height * Math.exp(-4 * Math.LN2 * ((nm - centre) / fwhm) ** 2));
 
-// Section 9 of our notes on CIE 015 and IEC 61966-2-1: computed with the exact tables at 1 nm.
+// CIE 015 and IEC 61966-2-1, computed with the exact tables at 1 nm.
 test.each([
   [1, 510, 90, [64.98, 43.56, 51.1], [255, 126, 185]],
   [1, 600, 120, [29.78, 30.5, 101.24], [0, 155, 255]],
