@@ -4,6 +4,7 @@ import { getSession } from 'auth-astro/server';
 import { type Asker, askerOfSession, askerOfToken } from './server/access/asker.ts';
 import { problem, tooLarge, toProblem } from './server/http.ts';
 import { log } from './server/log.ts';
+import { servedMethods } from './server/served-methods.ts';
 import { isLoopback, settings } from './server/settings.ts';
 import { startBackground } from './server/start.ts';
 
@@ -81,6 +82,9 @@ function asProblem(response: Response, path: string): Response {
   // JSON of our own stays: health that is bad is no problem but an answer.
   const ours = path.startsWith(AUTH) ? /^application\/problem\+json/ : /^application\/(?:problem\+)?json/;
   if (status < 400 || ours.test(headers.get('content-type') ?? '')) return response;
+  const methods = servedMethods(path);
+  if (methods.length > 0 && (status === 404 || status === 405))
+    return problem(405, `Served here: ${methods.join(', ')}`, { headers: { allow: methods.join(', ') } });
   return problem(status, status === 404 || status === 405 ? NO_ENDPOINT : 'The request could not be served');
 }
 

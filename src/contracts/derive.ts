@@ -50,8 +50,8 @@ export const IsomerInput = z
     ligands: z
       .array(
         z.strictObject({
-          label: z.string().min(1).max(40),
-          donors: z.number().int().min(1).max(9).default(1),
+          label: z.string().min(1).max(40).optional().describe('Needed without a pattern'),
+          donors: z.number().int().min(1).max(9).optional().describe('Denticity; 1, or as many as the pattern names'),
           count: z.number().int().min(1).max(9),
           symmetric: z.boolean().optional(),
           span: z.enum(['fac', 'mer', 'either']).optional(),
