@@ -83,11 +83,18 @@ export function refusals(door: Door): void {
       ['GET', '/api/auth/signout'],
       ['GET', '/api/auth/verify-request'],
       ['POST', '/api/auth/session'],
-      ['DELETE', '/api/health'],
-      ['PUT', '/api/complexes'],
-      ['GET', '/api/derive/formula'],
     ])('%s %s is not there', async (method, path) => {
       expectProblem(await send(path, { ...json(undefined), method }), 404);
+    });
+
+    test.each([
+      ['DELETE', '/api/health', 'GET'],
+      ['PUT', '/api/complexes', 'GET, POST'],
+      ['GET', '/api/derive/formula', 'POST'],
+    ])('%s %s is not served there, and Allow tells what is', async (method, path, allow) => {
+      const answer = await send(path, { ...json(undefined), method });
+      expectProblem(answer, 405);
+      expect(answer.headers.allow).toBe(allow);
     });
 
     test.each(['/%', '/api/%ff', '/api/complexes/%c3%28'])('the address %s cannot be read', async (path) => {
