@@ -290,6 +290,8 @@ describe('bands', () => {
     const colourless = await upload(zinc.accession);
     const [band] = await json<Band[]>(put([{ ...first, assignment: { class: 'd-d' } }], { id: colourless.id }));
     expect(band!.verdict).toBe('A d10 ion has no d–d band.');
+    const record = await json<{ doubts: number }>(call('GET', `/api/complexes/${zinc.accession}`, { as: ada.token }));
+    expect(record.doubts).toBe(1);
     const [quartet] = await json<Band[]>(put([{ ...first, assignment: { class: 'd-d', to: '4T2g' } }]));
     expect(quartet!.verdict).toBe('A d8 ion has no term of multiplicity 4.');
     await json(patch({ solvent: 'acetone' }));

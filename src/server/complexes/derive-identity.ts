@@ -25,6 +25,9 @@ export interface Identity {
   key: string;
 }
 
+/** The part of an identity key that stereoisomers share: composition, charge, ligands and their linkage. */
+export const connectivityOf = (identityKey: string): string => identityKey.split(' / ')[0] ?? '';
+
 const refuse = (pointer: string, detail: string, more: Record<string, unknown> = {}) =>
   new HttpError(422, detail, { errors: [{ pointer, detail }], members: more });
 

@@ -1,5 +1,4 @@
 import { and, asc, desc, eq, isNull, ne } from 'drizzle-orm';
-import { readFormula } from '../../chem/formula/index.ts';
 import type { ComplexRecord } from '../../contracts/complexes.ts';
 import { accounts, complexes, preparations, trail } from '../../db/schema/index.ts';
 import { isMember } from '../access/asker.ts';
@@ -7,21 +6,16 @@ import { type ComplexAccess, canChangeComplex } from '../access/records.ts';
 import { complexDownload, complexSight, preparationSight } from '../access/sight.ts';
 import { database } from '../database.ts';
 import { preparationRecords } from '../preparations/record.ts';
+import { connectivityOf } from './derive-identity.ts';
+import { countDoubts } from './doubts.ts';
+import { formulaCautions } from './formula-cautions.ts';
 import { summaries } from './summary.ts';
-
-const SKELETON = (key: string) => key.split(' / ')[0] ?? key;
-
-/** Usual cautions for the composition alone; a formula that can no longer be read has none computed, which is told. */
-function cautions(formula: string, answers: Record<string, string>): ComplexRecord['cautions'] {
-  const reading = readFormula(formula, answers);
-  return reading.cautions;
-}
 
 /** A complex in full, as this asker gets it. */
 export async function complexRecord(access: ComplexAccess): Promise<ComplexRecord> {
   const { asker, complex } = access;
   const { db } = await database();
-  const [[summary], prepared, siblings, history, [downloadable]] = await Promise.all([
+  const [[summary], prepared, siblings, history, [downloadable], doubts] = await Promise.all([
     summaries(asker, [complex]),
     db
       .select({ preparation: preparations })
@@ -35,14 +29,15 @@ export async function complexRecord(access: ComplexAccess): Promise<ComplexRecor
       .select({ id: complexes.id })
       .from(complexes)
       .where(and(eq(complexes.id, complex.id), complexDownload(asker))),
+    countDoubts(access),
   ]);
   const member = isMember(asker);
   return {
     ...summary!,
     notes: member ? complex.notes : null,
     withdrawnReason: complex.withdrawnReason,
-    cautions: cautions(complex.formula, complex.answers),
-    doubts: 0,
+    cautions: formulaCautions(complex.formula, complex.answers),
+    doubts,
     evidence: [],
     preparations: await preparationRecords(prepared.map(({ preparation }) => preparation)),
     history,
@@ -78,7 +73,7 @@ async function siblingsOf({ asker, complex }: ComplexAccess): Promise<ComplexRec
     .orderBy(asc(complexes.accession))
     .limit(20);
   return rows
-    .filter((row) => SKELETON(row.identityKey) === SKELETON(complex.identityKey))
+    .filter((row) => connectivityOf(row.identityKey) === connectivityOf(complex.identityKey))
     .map(({ accession, descriptor, chirality }) => ({ accession, descriptor, chirality }));
 }
 

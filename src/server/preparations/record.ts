@@ -1,7 +1,7 @@
 import { eq, inArray } from 'drizzle-orm';
-import { readFormula } from '../../chem/formula/index.ts';
 import type { PreparationRecord } from '../../contracts/complexes.ts';
 import { complexes, labs, preparationComponents, type preparations } from '../../db/schema/index.ts';
+import { formulaCautions } from '../complexes/formula-cautions.ts';
 import { database } from '../database.ts';
 
 type Row = typeof preparations.$inferSelect;
@@ -61,6 +61,6 @@ export async function preparationRecords(rows: readonly Row[]): Promise<Preparat
     notes: row.notes,
     visibility: row.visibility,
     state: row.state,
-    cautions: row.formula ? readFormula(row.formula).cautions : [],
+    cautions: row.formula ? formulaCautions(row.formula) : [],
   }));
 }

@@ -6,6 +6,7 @@ import { complexes, preparationComponents, preparations, spectra } from '../../d
 import type { Asker } from '../access/asker.ts';
 import { type ComplexAccess, type PreparationChange, requireLab } from '../access/records.ts';
 import { complexSight } from '../access/sight.ts';
+import { connectivityOf } from '../complexes/derive-identity.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { newId, nowIso } from '../ids.ts';
@@ -18,8 +19,6 @@ interface FormulaUnit {
   molarMass: number | null;
   components: { complexId: string; perFormulaUnit: number }[];
 }
-
-const skeleton = (key: string) => key.split(' / ')[0];
 
 /**
  * What a formula unit holds: the complex itself, perhaps a second complex (a double salt), counter-ions and solvates.
@@ -42,7 +41,7 @@ async function formulaUnit(
       components: [{ complexId: complex.id, perFormulaUnit: 1 }],
     };
   const reading = readFormula(formula, { ...complex.answers, ...answers });
-  const own = reading.entities.find((entity) => entity.identity === skeleton(complex.identityKey));
+  const own = reading.entities.find((entity) => entity.identity === connectivityOf(complex.identityKey));
   if (!own) {
     const detail = `This formula holds ${reading.entities.map((e) => e.entity).join(' and ')}, not ${complex.formula}`;
     throw new HttpError(422, detail, { errors: [{ pointer: '#/formula', detail }] });
