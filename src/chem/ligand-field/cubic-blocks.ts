@@ -1,0 +1,139 @@
+import { type ConfigurationSpace, configurationSpace, oneElectron } from './configuration-space.ts';
+import { CUBIC_IRREPS, CUBIC_ROTATIONS, type CubicIrrep, IRREP_DIMENSION } from './cubic-group.ts';
+import { combine, fromRows, type Matrix, within, zeros } from './matrix.ts';
+import { quantumNumber, rangeOf, splitBy } from './subspaces.ts';
+import { symmetricEigen, symmetricEigenvalues } from './symmetric-eigen.ts';
+
+/**
+ * All levels of one spin and one irrep of a cubic field. Its matrix is Δ·field + B·B + C·C, each eigenvalue one level
+ * of `dimension` orbital and `multiplicity` spin components.
+ */
+export interface CubicBlock {
+  multiplicity: number;
+  /** Irrep of O, or of Td: no `g`. */
+  irrep: CubicIrrep;
+  dimension: number;
+  /** Field per unit of Δ, e above t2, centre of gravity of the orbitals at 0. */
+  field: Matrix;
+  B: Matrix;
+  C: Matrix;
+  /** Square of the total orbital angular momentum, by which roots are traced to free-ion terms. */
+  orbitalSquared: Matrix;
+}
+
+/** Strengths of the field and of the repulsion in one unit of energy. `delta` < 0: t2 above e. */
+export interface Strengths {
+  delta: number;
+  B: number;
+  C: number;
+}
+
+/** e at 3Δ/5, t2 at −2Δ/5, in the order of the orbitals. */
+const CUBIC_FIELD = fromRows(
+  [0.6, 0.6, -0.4, -0.4, -0.4].map((energy, i, all) => all.map((_, j) => (i === j ? energy : 0))),
+);
+
+const known = new Map<number, readonly CubicBlock[]>();
+
+/**
+ * The dⁿ problem of a cubic field in blocks of one spin and irrep, at most ten rows each; built once for each n.
+ *
+ * Of every irrep one row is kept, by projection with the 24 rotations acting on the determinants.
+ *
+ * @param n - whole number 1 to 9
+ * @throws DomainError `out-of-range` (field `n`)
+ * @see Y. Tanabe, S. Sugano, J. Phys. Soc. Jpn. 9 (1954) 753, for the matrices of d² to d⁸ (another basis, same eigenvalues)
+ */
+export function cubicBlocks(n: number): readonly CubicBlock[] {
+  const blocks = known.get(n) ?? build(configurationSpace(n));
+  known.set(n, blocks);
+  return blocks;
+}
+
+/** Energies of a block's levels, ascending. */
+export function blockEnergies(block: CubicBlock, strengths: Strengths): number[] {
+  return symmetricEigenvalues(blockMatrix(block, strengths));
+}
+
+function blockMatrix(block: CubicBlock, { delta, B, C }: Strengths): Matrix {
+  return combine([
+    [delta, block.field],
+    [B, block.B],
+    [C, block.C],
+  ]);
+}
+
+/**
+ * L of the free-ion terms from which the levels of a block rise, in the order of its levels: roots of one spin and
+ * irrep never cross. Null where terms of different L coincide in the free ion.
+ */
+export function blockParents(block: CubicBlock, B: number, C: number): (number | null)[] {
+  const { values, vectors } = symmetricEigen(blockMatrix(block, { delta: 0, B, C }));
+  const tolerance = 1e-9 * (B + C);
+  const momenta = within(vectors, block.orbitalSquared);
+  return values.map((value) => {
+    // Within a group of coincident terms the eigenvectors are arbitrary: L counts only if all of it shares one.
+    const group = [...values.keys()].filter((i) => Math.abs(values[i]! - value) <= tolerance);
+    const squares = group.map((i) => momenta.data[i * momenta.columns + i]!);
+    const angular = quantumNumber(squares[0]!);
+    return squares.every((square) => Math.abs(square - angular * (angular + 1)) < 1e-6) ? angular : null;
+  });
+}
+
+function build(space: ConfigurationSpace): CubicBlock[] {
+  const field = oneElectron(CUBIC_FIELD, space.substitutions);
+  const blocks = CUBIC_IRREPS.flatMap((irrep) =>
+    splitBy(space.spinSquared, rangeOf(rowProjector(space, irrep))).map(({ value, basis }) => ({
+      multiplicity: Math.round(2 * quantumNumber(value)) + 1,
+      irrep,
+      dimension: IRREP_DIMENSION[irrep],
+      field: within(basis, field),
+      B: within(basis, space.B),
+      C: within(basis, space.C),
+      orbitalSquared: within(basis, space.orbitalSquared),
+    })),
+  );
+  return blocks.sort((a, b) => b.multiplicity - a.multiplicity);
+}
+
+/** (d/24) Σ_R D(R)₁₁ R over the rotations R: the states that transform as the chosen row of the irrep. */
+function rowProjector(space: ConfigurationSpace, irrep: CubicIrrep): Matrix {
+  const projector = zeros(space.size);
+  const d = space.downs.length;
+  for (const { orbitals, row } of CUBIC_ROTATIONS) {
+    const weight = (row[irrep] * IRREP_DIMENSION[irrep]) / CUBIC_ROTATIONS.length;
+    if (weight === 0) continue;
+    const up = minors(orbitals, space.ups);
+    const down = minors(orbitals, space.downs);
+    for (let i = 0; i < space.size; i++) {
+      const [iu, id] = [Math.floor(i / d), i % d];
+      for (let j = 0; j < space.size; j++) {
+        projector.data[i * space.size + j]! += weight * up[iu]![Math.floor(j / d)]! * down[id]![j % d]!;
+      }
+    }
+  }
+  return projector;
+}
+
+/** How a transformation of the orbitals acts on products of them that are antisymmetric: its minors. */
+function minors(orbitals: Matrix, sets: readonly number[][]): number[][] {
+  return sets.map((rows) => sets.map((columns) => minor(orbitals, rows, columns)));
+}
+
+function minor(m: Matrix, rows: readonly number[], columns: readonly number[]): number {
+  const [first, ...rest] = rows;
+  if (first === undefined) return 1;
+  return columns.reduce((sum, column, k) => {
+    const entry = m.data[first * m.columns + column]!;
+    if (entry === 0) return sum;
+    return (
+      sum +
+      (k % 2 === 0 ? entry : -entry) *
+        minor(
+          m,
+          rest,
+          columns.filter((c) => c !== column),
+        )
+    );
+  }, 0);
+}
