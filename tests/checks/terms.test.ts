@@ -1,4 +1,5 @@
 import { expect, test } from 'vitest';
+import { diagram } from '#src/chem/ligand-field/diagram.ts';
 import { freeIonTerms, hundGround } from '#src/chem/ligand-field/free-ion.ts';
 import file from './terms.json';
 
@@ -45,4 +46,11 @@ test.each(ofKind('freeIonTermEnergies'))('energies $id', ({ dCount, relativeTo, 
     const nearest = Math.min(...terms.filter((t) => t.label === label).map((t) => Math.abs(t.energy - energy)));
     expect(nearest, `${label}: ${source}`).toBeLessThan(1e-6);
   }
+});
+
+test.each(ofKind('spinCrossover'))('crossover $id', ({ dCount, geometry, C_over_B, expect: wanted, tolerance, source }) => {
+  const { ground, crossings } = diagram({ n: dCount, geometry: geometry === 'Oh' ? 'OC-6' : 'T-4', ratioCB: C_over_B });
+  expect(ground.map(({ label }) => label), source).toEqual([wanted.highSpinGround, wanted.lowSpinGround]);
+  expect(crossings).toHaveLength(1);
+  expect(Math.abs(crossings[0]!.x - wanted.Delta_over_B)).toBeLessThanOrEqual(tolerance.Delta_over_B);
 });
