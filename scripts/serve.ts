@@ -35,17 +35,32 @@ export async function serve({ data, demo }: { data: string; demo: boolean }): Pr
   });
   // Before it listens: whoever sees it answer may end it.
   let stopping = false;
-  const stop = (signal: NodeJS.Signals) => {
+  const stop = (signal: string) => {
     if (stopping) process.exit(1);
     stopping = true;
     console.log(`${signal}: stopping.`);
     void shutDown(server).then((code) => process.exit(code));
   };
   process.on('SIGTERM', stop).on('SIGINT', stop);
+  if (process.env.npm_lifecycle_event) followParent(stop);
   await listen(server, settings.host, settings.port);
   // The program loads with its first request; asking here starts its job loop and spares the first visitor the wait.
   await fetch(`http://${hostInUrl(settings.host)}:${settings.port}/api/health`).catch(() => undefined);
   greet(settings, hasDemo);
+}
+
+/**
+ * End when `npm start` ends. npm hands a signal to the shell that it started us from, and that shell dies of it without
+ * handing it on: the program would serve on, with nobody left who could stop it.
+ */
+function followParent(stop: (reason: string) => void): void {
+  const parent = process.ppid;
+  const watch = setInterval(() => {
+    if (process.ppid === parent) return;
+    clearInterval(watch);
+    stop('npm start ended');
+  }, 500);
+  watch.unref();
 }
 
 /** An address that means every interface is reached at this machine's own. */
