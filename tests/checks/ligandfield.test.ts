@@ -1,8 +1,10 @@
 import { describe, expect, test } from 'vitest';
 import { D_ORBITALS } from '#src/chem/ligand-field/d-orbitals.ts';
 import { blockEnergies, cubicBlocks } from '#src/chem/ligand-field/cubic-blocks.ts';
+import { estimateBeta, estimateDelta, ionFactors, ligandFactors } from '#src/chem/ligand-field/jorgensen.ts';
 import { type CubicGeometry, type Level, levels } from '#src/chem/ligand-field/levels.ts';
 import { type OverlapLigand, orbitalEnergies, overlapField } from '#src/chem/ligand-field/overlap.ts';
+import { freeIonRacah } from '#src/chem/ligand-field/racah-b.ts';
 import { tetragonalField } from '#src/chem/ligand-field/tetragonal.ts';
 import { evaluate } from './expression.ts';
 import file from './ligandfield.json';
@@ -153,4 +155,55 @@ describe('tetragonal', () => {
     sorted.sort((a, b) => a - b);
     orbitalEnergies(field).forEach(({ energy }, i) => expect(Math.abs(energy - sorted[i]!)).toBeLessThanOrEqual(tolerance));
   });
+});
+
+/** `Cr3+` in its parts. */
+function readIon(text: string): [element: string, charge: number] {
+  const [, element, charge] = /^([A-Z][a-z]?)(\d)\+$/.exec(text)!;
+  return [element!, Number(charge)];
+}
+
+test.each(ofKind('freeIonRacahB'))('free ion $ion', ({ ion, expect: wanted, tolerance, source }) => {
+  const found = freeIonRacah(...readIon(ion));
+  expect(Math.abs((found?.B ?? Number.NaN) - wanted.B_cm1), source).toBeLessThanOrEqual(tolerance.B_cm1);
+  expect(source).toContain(found!.source);
+});
+
+/** Abbreviations of the register for the ligands as the table writes them. */
+const ABBREVIATION: Record<string, string> = {
+  'SCN- (S-bonded)': 'SCN',
+  'NCS- (N-bonded)': 'NCS',
+  'C2O4 2-': 'ox',
+  CH3CN: 'MeCN',
+};
+const abbreviate = (text: string): string => ABBREVIATION[text] ?? text.replace(/-$/, '');
+
+test.each(ofKind('jorgensenTable'))('factors $id', ({ expect: wanted, tolerance, source }) => {
+  for (const [ligand, f] of Object.entries<number>(wanted.f ?? {})) {
+    expect(Math.abs((ligandFactors(abbreviate(ligand))?.f ?? Number.NaN) - f), `${ligand}: ${source}`).toBeLessThanOrEqual(tolerance.f);
+  }
+  for (const [ligand, h] of Object.entries<number>(wanted.h ?? {})) {
+    expect(Math.abs((ligandFactors(abbreviate(ligand))?.h ?? Number.NaN) - h), `${ligand}: ${source}`).toBeLessThanOrEqual(tolerance.h);
+  }
+  for (const [ion, g] of Object.entries<number>(wanted.g_cm1 ?? {})) {
+    expect(Math.abs((ionFactors(...readIon(ion))?.g ?? Number.NaN) / g - 1), `${ion}: ${source}`).toBeLessThanOrEqual(tolerance.g_relative);
+  }
+  for (const [ion, k] of Object.entries<number>(wanted.k ?? {})) {
+    expect(Math.abs((ionFactors(...readIon(ion))?.k ?? Number.NaN) - k), `${ion}: ${source}`).toBeLessThanOrEqual(tolerance.k);
+  }
+});
+
+const complexOf = (metal: string, ligand: string, count: number) => {
+  const [element, oxidationState] = readIon(metal);
+  return { element, oxidationState, donors: [{ abbreviation: abbreviate(ligand), count }] };
+};
+
+test.each(ofKind('deltaEstimate'))('estimate of Δ $id', ({ metal, ligand, count, expect: wanted, tolerance, source }) => {
+  const delta = estimateDelta(complexOf(metal, ligand, count)) ?? Number.NaN;
+  expect(Math.abs(delta / wanted.Delta_cm1 - 1), source).toBeLessThanOrEqual(tolerance.Delta_relative);
+});
+
+test.each(ofKind('nephelauxeticEstimate'))('estimate of β $id', ({ metal, ligand, expect: wanted, tolerance, source }) => {
+  const beta = estimateBeta(complexOf(metal, ligand, 6)) ?? Number.NaN;
+  expect(Math.abs(beta - wanted.beta), source).toBeLessThanOrEqual(tolerance.beta);
 });

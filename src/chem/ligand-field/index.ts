@@ -1,0 +1,26 @@
+export { D_ORBITALS, type DOrbital } from './d-orbitals.ts';
+export { type Diagram, type DiagramRequest, diagram } from './diagram.ts';
+export { type FreeIonTerm, freeIonTerms, hundGround, termLetter } from './free-ion.ts';
+export {
+  estimateBeta,
+  estimateDelta,
+  type IonFactors,
+  ionFactors,
+  JORGENSEN_SOURCE,
+  type LigandFactors,
+  ligandFactors,
+  type OctahedralComplex,
+} from './jorgensen.ts';
+export {
+  CUBIC_GEOMETRIES,
+  type CubicGeometry,
+  type Field,
+  fieldLevels,
+  type Level,
+  type Levels,
+  type LevelsRequest,
+  levels,
+} from './levels.ts';
+export { type OrbitalEnergy, type OverlapLigand, orbitalEnergies, overlapField } from './overlap.ts';
+export { type FreeIonRacah, freeIonRacah } from './racah-b.ts';
+export { tetragonalField } from './tetragonal.ts';
