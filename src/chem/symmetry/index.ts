@@ -1,3 +1,6 @@
+export { type Descent, descend } from './descent.ts';
 export { findGroup, groups, type Irrep, type IrrepCount, type PointGroup } from './groups.ts';
 export { antisymmetricPower, directProduct, symmetricPower } from './products.ts';
+export { type SelectionAnalysis, type SelectionRequest, selectionAnalysis } from './selection.ts';
 export { dOrbitals, splitMomentum, splitTerm } from './splitting.ts';
+export { type Skeleton, type SkeletonVibrations, type Vibration, vibrations } from './vibrations.ts';
