@@ -1,8 +1,9 @@
 import { describe, expect, test } from 'vitest';
 import { D_ORBITALS } from '#src/chem/ligand-field/d-orbitals.ts';
 import { blockEnergies, cubicBlocks } from '#src/chem/ligand-field/cubic-blocks.ts';
+import type { Level } from '#src/chem/ligand-field/field-levels.ts';
 import { estimateBeta, estimateDelta, ionFactors, ligandFactors } from '#src/chem/ligand-field/jorgensen.ts';
-import { type CubicGeometry, type Level, levels } from '#src/chem/ligand-field/levels.ts';
+import { type CubicGeometry, levels } from '#src/chem/ligand-field/levels.ts';
 import { type OverlapLigand, orbitalEnergies, overlapField } from '#src/chem/ligand-field/overlap.ts';
 import { freeIonRacah } from '#src/chem/ligand-field/racah-b.ts';
 import { tetragonalField } from '#src/chem/ligand-field/tetragonal.ts';

@@ -1,8 +1,9 @@
 import { type ConfigurationSpace, configurationSpace, oneElectron } from './configuration-space.ts';
 import { CUBIC_IRREPS, CUBIC_ROTATIONS, type CubicIrrep, IRREP_DIMENSION } from './cubic-group.ts';
-import { combine, fromRows, type Matrix, within, zeros } from './matrix.ts';
+import { combine, fromRows, type Matrix, within } from './matrix.ts';
 import { quantumNumber, rangeOf, splitBy } from './subspaces.ts';
 import { symmetricEigen, symmetricEigenvalues } from './symmetric-eigen.ts';
+import { turnOfSpace } from './turns.ts';
 
 /**
  * All levels of one spin and one irrep of a cubic field. Its matrix is Δ·field + B·B + C·C, each eigenvalue one level
@@ -82,8 +83,9 @@ export function blockParents(block: CubicBlock, B: number, C: number): (number |
 
 function build(space: ConfigurationSpace): CubicBlock[] {
   const field = oneElectron(CUBIC_FIELD, space.substitutions);
+  const turns = CUBIC_ROTATIONS.map(({ orbitals }) => turnOfSpace(space, orbitals));
   const blocks = CUBIC_IRREPS.flatMap((irrep) =>
-    splitBy(space.spinSquared, rangeOf(rowProjector(space, irrep))).map(({ value, basis }) => ({
+    splitBy(space.spinSquared, rangeOf(rowProjector(turns, irrep))).map(({ value, basis }) => ({
       multiplicity: Math.round(2 * quantumNumber(value)) + 1,
       irrep,
       dimension: IRREP_DIMENSION[irrep],
@@ -97,43 +99,7 @@ function build(space: ConfigurationSpace): CubicBlock[] {
 }
 
 /** (d/24) Σ_R D(R)₁₁ R over the rotations R: the states that transform as the chosen row of the irrep. */
-function rowProjector(space: ConfigurationSpace, irrep: CubicIrrep): Matrix {
-  const projector = zeros(space.size);
-  const d = space.downs.length;
-  for (const { orbitals, row } of CUBIC_ROTATIONS) {
-    const weight = (row[irrep] * IRREP_DIMENSION[irrep]) / CUBIC_ROTATIONS.length;
-    if (weight === 0) continue;
-    const up = minors(orbitals, space.ups);
-    const down = minors(orbitals, space.downs);
-    for (let i = 0; i < space.size; i++) {
-      const [iu, id] = [Math.floor(i / d), i % d];
-      for (let j = 0; j < space.size; j++) {
-        projector.data[i * space.size + j]! += weight * up[iu]![Math.floor(j / d)]! * down[id]![j % d]!;
-      }
-    }
-  }
-  return projector;
-}
-
-/** How a transformation of the orbitals acts on products of them that are antisymmetric: its minors. */
-function minors(orbitals: Matrix, sets: readonly number[][]): number[][] {
-  return sets.map((rows) => sets.map((columns) => minor(orbitals, rows, columns)));
-}
-
-function minor(m: Matrix, rows: readonly number[], columns: readonly number[]): number {
-  const [first, ...rest] = rows;
-  if (first === undefined) return 1;
-  return columns.reduce((sum, column, k) => {
-    const entry = m.data[first * m.columns + column]!;
-    if (entry === 0) return sum;
-    return (
-      sum +
-      (k % 2 === 0 ? entry : -entry) *
-        minor(
-          m,
-          rest,
-          columns.filter((c) => c !== column),
-        )
-    );
-  }, 0);
+function rowProjector(turns: readonly Matrix[], irrep: CubicIrrep): Matrix {
+  const weight = IRREP_DIMENSION[irrep] / turns.length;
+  return combine(turns.map((turn, r) => [weight * CUBIC_ROTATIONS[r]!.row[irrep], turn] as const));
 }

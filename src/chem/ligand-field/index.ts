@@ -1,5 +1,6 @@
 export { D_ORBITALS, type DOrbital } from './d-orbitals.ts';
 export { type Diagram, type DiagramRequest, diagram } from './diagram.ts';
+export { fieldLevels, type Level } from './field-levels.ts';
 export { type FreeIonTerm, freeIonTerms, hundGround, termLetter } from './free-ion.ts';
 export {
   estimateBeta,
@@ -15,8 +16,6 @@ export {
   CUBIC_GEOMETRIES,
   type CubicGeometry,
   type Field,
-  fieldLevels,
-  type Level,
   type Levels,
   type LevelsRequest,
   levels,

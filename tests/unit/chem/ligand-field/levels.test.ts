@@ -1,5 +1,6 @@
 import { describe, expect, test } from 'vitest';
-import { fieldLevels, type Level, levels } from '#src/chem/ligand-field/levels.ts';
+import { fieldLevels, type Level } from '#src/chem/ligand-field/field-levels.ts';
+import { levels } from '#src/chem/ligand-field/levels.ts';
 import { zeros } from '#src/chem/ligand-field/matrix.ts';
 import { type OverlapLigand, overlapField } from '#src/chem/ligand-field/overlap.ts';
 
@@ -107,14 +108,66 @@ describe('overlap fields', () => {
   ].map(([theta, phi]) => ({ theta: theta!, phi: phi!, eSigma, ePi }));
 
   // Δo = 3 eσ − 4 eπ: Larsen and La Mar, J. Chem. Educ. 51 (1974) 633 (from memory).
-  test.each(COUNTS)('six equal ligands are the cubic field for d%i', (n) => {
-    const merged = new Map<string, number>();
-    const key = (l: Level): string => `${l.multiplicity} ${l.energy.toFixed(2).replace('-0.00', '0.00')}`;
-    for (const l of cubic(n, 'OC-6', 3 * eSigma - 4 * ePi).levels)
-      merged.set(key(l), (merged.get(key(l)) ?? 0) + l.degeneracy);
+  test.each(COUNTS)('six equal ligands are the cubic field for d%i, labels and all', (n) => {
+    const key = (l: Level): string => `${l.label} ${l.degeneracy} ${l.energy.toFixed(2).replace('-0.00', '0.00')}`;
     const { group, levels: all } = levels({ n, field: { kind: 'overlap', ligands: octahedron }, B, C });
+    expect(group).toBe('Oh');
+    expect(all.map(key).sort()).toEqual(
+      cubic(n, 'OC-6', 3 * eSigma - 4 * ePi)
+        .levels.map(key)
+        .sort(),
+    );
+  });
+
+  // Angles as a person types them: 54.7356° is arccos(1/√3) to four decimals.
+  test('four ligands on corners of a cube are the tetrahedron, in Td', () => {
+    const corners: [number, number][] = [
+      [54.7356, 45],
+      [54.7356, 225],
+      [125.2644, 135],
+      [125.2644, 315],
+    ];
+    const ligands = corners.map(([theta, phi]) => ({ theta, phi, eSigma, ePi }));
+    const { group, levels: all } = levels({ n: 7, field: { kind: 'overlap', ligands }, B, C });
+    const tetrahedron = cubic(7, 'T-4', (4 / 9) * (3 * eSigma - 4 * ePi)).levels;
+    expect(group).toBe('Td');
+    const key = (l: Level): string => `${l.label} ${l.energy.toFixed(0).replace('-0', '0')}`;
+    expect(all.map(key).sort()).toEqual(tetrahedron.map(key).sort());
+  });
+
+  // Order and labels of one electron in a square plane: x²−y² b1g, z² a1g, xy b2g, xz and yz eg (standard tables).
+  test('labels the orbitals of a square plane in D4h', () => {
+    const ligands = octahedron.slice(2);
+    const { group, levels: all } = levels({ n: 1, field: { kind: 'overlap', ligands }, B, C });
+    expect(group).toBe('D4h');
+    expect(all.map((l) => l.label)).toEqual(['2Eg', '2B2g', '2A1g', '2B1g']);
+  });
+
+  // 4T2g of Oh is 4B2g + 4Eg in D4h, 4A2g is 4B1g: correlation tables (from memory), ligands on x and y.
+  test('two weaker ligands on z split the quartets of d3 as the descent to D4h tells', () => {
+    const ligands = octahedron.map((l) => (l.theta === 90 ? l : { ...l, eSigma: 5000, ePi: 300 }));
+    const { group, levels: all } = levels({ n: 3, field: { kind: 'overlap', ligands }, B, C });
+    expect(group).toBe('D4h');
+    const quartets = all.filter((l) => l.multiplicity === 4).slice(0, 3);
+    expect(quartets[0]!.label).toBe('4B1g');
+    expect(
+      quartets
+        .slice(1)
+        .map((l) => l.label)
+        .sort(),
+    ).toEqual(['4B2g', '4Eg']);
+  });
+
+  test('π that differs in two directions lowers the group', () => {
+    const flat = octahedron.map((l) => (l.theta === 90 ? l : { theta: l.theta, phi: 0, eSigma, ePiX: 900, ePiY: 100 }));
+    expect(levels({ n: 1, field: { kind: 'overlap', ligands: flat }, B, C }).group).toBe('D2h');
+  });
+
+  test('ligands on one line have levels without labels', () => {
+    const { group, levels: all } = levels({ n: 2, field: { kind: 'overlap', ligands: octahedron.slice(0, 2) }, B, C });
     expect(group).toBeNull();
-    expect(new Map(all.map((l) => [key(l), l.degeneracy]))).toEqual(merged);
+    expect(all.every((l) => l.label === null && l.irrep === null)).toBe(true);
+    expect(all.reduce((sum, { degeneracy }) => sum + degeneracy, 0)).toBe(45);
   });
 
   const twisted: OverlapLigand[] = [
