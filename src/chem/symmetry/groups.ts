@@ -2,6 +2,7 @@ import { DomainError } from '../errors.ts';
 import { type FiniteGroup, finiteGroup } from './finite-group.ts';
 import { finiteSymbols } from './generators.ts';
 import { linearSymbols, linearTable } from './linear-groups.ts';
+import { settingText } from './setting.ts';
 
 /** An irrep of a character table, as shown. */
 export interface Irrep {
@@ -21,6 +22,8 @@ export interface PointGroup {
   /** Number of operations; null for the linear groups, which have no end of them. */
   order: number | null;
   centrosymmetric: boolean;
+  /** Choice of axes that the labels hang on, in words. */
+  setting: string;
   classes: { label: string; size: number | null }[];
   irreps: Irrep[];
 }
@@ -52,6 +55,7 @@ export function findGroup(symbol: string): PointGroup | null {
     symbol,
     order: group.order,
     centrosymmetric: group.centrosymmetric,
+    setting: settingText(symbol),
     classes: group.classes.map(({ label, size }) => ({ label, size })),
     irreps: group.irreps.map(({ label, dimension, characters, functions }) => ({
       label,
@@ -89,6 +93,7 @@ function linearGroup(symbol: string): PointGroup {
     symbol,
     order: null,
     centrosymmetric: central,
+    setting: settingText(symbol),
     classes: [...turns, ...more].map((label) => ({ label: label.replace(/^2/, ''), size: sizes[label] ?? null })),
     irreps: linearTable(symbol).map(({ irrep: { lambda, sign, parity }, label, functions }) => {
       const dimension = lambda === 0 ? 1 : 2;

@@ -87,7 +87,7 @@ export function spinOrbitPart(
 export function selectionSteps(parts: SelectionParts): string[] {
   const { group, from, to, spinAllowed, spinOrbit } = parts;
   return [
-    `Both terms are labelled in ${group.symbol}: ${termText(from)} to ${termText(to)}.`,
+    `Both terms are labelled in ${group.symbol} (${group.setting}): ${termText(from)} to ${termText(to)}.`,
     spinAllowed
       ? `The spin multiplicity stays ${from.multiplicity}: spin-allowed.`
       : `The spin multiplicity changes from ${from.multiplicity} to ${to.multiplicity}: spin-forbidden.`,

@@ -121,5 +121,13 @@ describe('printed tables', () => {
     expect(t1u.characters[fivefold]).toBeCloseTo((1 + Math.sqrt(5)) / 2, 12);
   });
 
+  test('the setting is told', () => {
+    const setting = (symbol: string): string => findGroup(symbol)!.setting;
+    expect(setting('D4h')).toBe('z is the principal axis, x a C2′');
+    expect(setting('C4v')).toBe('z is the principal axis, xz a σv');
+    expect(setting('Td')).toBe('x, y and z are S4 axes');
+    expect(setting('Cs')).toBe('xy is the mirror');
+  });
+
   test('an unknown symbol gives null', () => expect(findGroup('D9h')).toBeNull());
 });
