@@ -1,4 +1,5 @@
 import { DomainError } from '../errors.ts';
+import type { Matrix3 } from '../geometry/vector.ts';
 import { blockEnergies, blockParents, type CubicBlock, cubicBlocks } from './cubic-blocks.ts';
 import { fieldLevels, fromLowest, type Level } from './field-levels.ts';
 import { termLetter } from './free-ion.ts';
@@ -26,15 +27,20 @@ export interface LevelsRequest {
 export interface Levels {
   /** Point group of the labels; null for ligands on one line. */
   group: string | null;
+  /**
+   * x, y and z of the labels as unit vectors in the frame of the ligands, as other axes can rename irreps; null for a
+   * cubic field, whose labels do not hang on them, and without a group.
+   */
+  axes: Matrix3 | null;
   levels: Level[];
 }
 
 /**
  * All levels of dⁿ in a ligand field without spin–orbit coupling, by complete configuration interaction; ascending.
  *
- * A cubic field labels every level in Oh or Td, an overlap field in the group of its ligands, whose axes are those of
- * the ligands' own frame where it can have them. Levels that coincide but differ in spin or irrep stay apart. For
- * ligands on one line group, irrep and label are null, and levels of one spin that coincide are one entry.
+ * A cubic field labels every level in Oh or Td, an overlap field in the group of its ligands, about the axes told.
+ * Levels that coincide but differ in spin or irrep stay apart. For ligands on one line group, irrep and label are null,
+ * and levels of one spin that coincide are one entry.
  *
  * @throws DomainError `out-of-range` (fields `n`, `delta`, `B`, `C`, `ligands`), `unsupported` (field `geometry`)
  */
@@ -44,7 +50,11 @@ export function levels({ n, field, B, C }: LevelsRequest): Levels {
   if (field.kind === 'overlap') {
     const matrix = overlapField(field.ligands);
     const setting = overlapGroup(field.ligands);
-    return { group: setting?.group.symbol ?? null, levels: fieldLevels(n, matrix, B, C, setting) };
+    return {
+      group: setting?.group.symbol ?? null,
+      axes: setting?.axes ?? null,
+      levels: fieldLevels(n, matrix, B, C, setting),
+    };
   }
   requireStrength(field.delta, 'delta');
   const { group, sign } = cubicSetting(field.geometry);
@@ -61,7 +71,7 @@ export function levels({ n, field, B, C }: LevelsRequest): Levels {
       parent: parents[i] == null ? null : termLetter(parents[i]),
     }));
   });
-  return { group, levels: fromLowest(found) };
+  return { group, axes: null, levels: fromLowest(found) };
 }
 
 /** Group in which a cubic field labels its levels, and the sign of Δ with e above t2. */

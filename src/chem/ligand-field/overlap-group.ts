@@ -1,5 +1,5 @@
-import type { Vector3 } from '../geometry/vector.ts';
-import { embeddings } from '../symmetry/embedding.ts';
+import { dot, type Matrix3, type Vector3 } from '../geometry/vector.ts';
+import { type Embedding, embeddings } from '../symmetry/embedding.ts';
 import { type FiniteGroup, finiteGroup } from '../symmetry/finite-group.ts';
 import { isLinear, permutingOperations } from '../symmetry/permuting-operations.ts';
 import { schoenflies } from '../symmetry/point-group.ts';
@@ -10,6 +10,8 @@ import { type OverlapLigand, overlapField } from './overlap.ts';
 /** The group that labels the levels of an overlap field. */
 export interface FieldSetting {
   group: FiniteGroup;
+  /** Rows: x, y and z of the labels, in the frame of the ligands. */
+  axes: Matrix3;
   /** What one operation of each class does to the d orbitals, in the order of the table. */
   representatives: Matrix[];
 }
@@ -18,8 +20,9 @@ export interface FieldSetting {
 const ALIKE = 1e-5;
 
 /**
- * The point group of ligands with their overlap parameters (anisotropic π included), set so that its axes keep to those
- * of the ligands' own frame where they can.
+ * The point group of ligands with their overlap parameters (anisotropic π included). Its z keeps to that of the
+ * ligands' own frame where it can; the plane xz, then x, go through as many ligands as they can, so that in D4h and
+ * C4v the ligands stand on x and y; else the frame's own axes stay.
  *
  * @returns null where all ligands lie on one line, and for a group that has no table
  */
@@ -41,10 +44,11 @@ export function overlapGroup(ligands: readonly OverlapLigand[]): FieldSetting | 
   });
   const matrices = kept.map(({ matrix }) => matrix);
   const group = finiteGroup(schoenflies(matrices));
-  const setting = group && embeddings(group, matrices)[0];
+  const setting = group && bestSetting(embeddings(group, matrices), points);
   if (!group || !setting) return null;
   return {
     group,
+    axes: setting.frame,
     representatives: group.classes.map(({ representative }) =>
       rotateOrbitals(setting.images[group.operations.indexOf(representative)]!),
     ),
@@ -54,4 +58,14 @@ export function overlapGroup(ligands: readonly OverlapLigand[]): FieldSetting | 
 function direction({ theta, phi }: OverlapLigand): Vector3 {
   const [t, p] = [(theta * Math.PI) / 180, (phi * Math.PI) / 180];
   return [Math.sin(t) * Math.cos(p), Math.sin(t) * Math.sin(p), Math.cos(t)];
+}
+
+function bestSetting(settings: readonly Embedding[], points: readonly Vector3[]): Embedding | undefined {
+  const z = settings[0]?.frame[2];
+  const isZero = (value: number): boolean => Math.abs(value) < 1e-4;
+  const score = ({ frame: [x, y] }: Embedding): number =>
+    points.reduce((sum, p) => sum + (isZero(dot(p, y)) ? 10 : 0) + (isZero(Math.abs(dot(p, x)) - 1) ? 1 : 0), 0);
+  return settings
+    .filter(({ frame }) => z && isZero(dot(frame[2], z) - 1))
+    .reduce<Embedding | undefined>((best, other) => (!best || score(other) > score(best) ? other : best), undefined);
 }

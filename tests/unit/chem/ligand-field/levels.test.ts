@@ -136,10 +136,11 @@ describe('overlap fields', () => {
   });
 
   // Order and labels of one electron in a square plane: x²−y² b1g, z² a1g, xy b2g, xz and yz eg (standard tables).
-  test('labels the orbitals of a square plane in D4h', () => {
-    const ligands = octahedron.slice(2);
-    const { group, levels: all } = levels({ n: 1, field: { kind: 'overlap', ligands }, B, C });
+  test.each([0, 45, 30])('labels the orbitals of a square plane in D4h, turned by %i°', (turn) => {
+    const ligands = octahedron.slice(2).map((l) => ({ ...l, phi: l.phi + turn }));
+    const { group, axes, levels: all } = levels({ n: 1, field: { kind: 'overlap', ligands }, B, C });
     expect(group).toBe('D4h');
+    expect(axes?.[2]).toEqual([0, 0, 1]);
     expect(all.map((l) => l.label)).toEqual(['2Eg', '2B2g', '2A1g', '2B1g']);
   });
 
@@ -156,6 +157,16 @@ describe('overlap fields', () => {
         .map((l) => l.label)
         .sort(),
     ).toEqual(['4B2g', '4Eg']);
+  });
+
+  // d(xz) lies in the plane xz, which holds the ligands: b1 of C2v, and xy a2 (character table).
+  test('a bent pair has the plane of its ligands as xz of C2v', () => {
+    const ligands = [0, 180].map((phi) => ({ theta: 50, phi: phi + 90, eSigma, ePi: 0 }));
+    const { group, axes, levels: all } = levels({ n: 1, field: { kind: 'overlap', ligands }, B, C });
+    expect(group).toBe('C2v');
+    expect(Math.abs(axes![0][1])).toBeCloseTo(1, 9);
+    expect(all.map((l) => l.label)).toContain('2B1');
+    expect(all.at(-1)!.label).toBe('2B1');
   });
 
   test('π that differs in two directions lowers the group', () => {
