@@ -22,4 +22,26 @@ export const rows: Record<string, MatrixRow> = {
   },
   listGeometries: { send: () => ({ path: '/api/geometries' }), expect: anybody },
   listLigands: { send: () => ({ path: '/api/ligands' }), expect: anybody },
+  listGroups: { send: () => ({ path: '/api/symmetry/groups' }), expect: anybody },
+  readGroup: { send: () => ({ path: '/api/symmetry/groups/D4h' }), expect: anybody },
+  deriveProduct: {
+    send: () => ({ path: '/api/derive/product', json: { group: 'Oh', irreps: ['T2g', 'Eg'] } }),
+    expect: anybody,
+  },
+  deriveDescent: {
+    send: () => ({ path: '/api/derive/descent', json: { from: 'Oh', to: 'D4h', irreps: ['T2g'] } }),
+    expect: anybody,
+  },
+  deriveSplitting: {
+    send: () => ({ path: '/api/derive/splitting', json: { group: 'Oh', term: '3F' } }),
+    expect: anybody,
+  },
+  deriveVibrations: {
+    send: () => ({ path: '/api/derive/vibrations', json: { geometry: 'OC-6', sites: ['A', 'A', 'A', 'A', 'A', 'A'] } }),
+    expect: anybody,
+  },
+  deriveSelection: {
+    send: () => ({ path: '/api/derive/selection', json: { group: 'Oh', from: '2T2g', to: '2Eg' } }),
+    expect: anybody,
+  },
 };

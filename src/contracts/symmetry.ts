@@ -1,0 +1,122 @@
+import * as z from 'zod';
+import { route } from './route.ts';
+
+const GroupSymbol = z.string().min(1).max(10).describe('Schoenflies symbol in plain text: Oh, D4h, Cinfv');
+const Irrep = z.string().min(1).max(20);
+const IrrepCount = z.object({ irrep: z.string(), count: z.number().int() });
+const PerAxis = z.object({ x: z.boolean(), y: z.boolean(), z: z.boolean() });
+const irrepsPerAxis = z.object({ x: z.array(z.string()), y: z.array(z.string()), z: z.array(z.string()) });
+
+export const CharacterTable = z
+  .looseObject({
+    symbol: z.string(),
+    order: z.number().int().nullable().describe('Null for the linear groups'),
+    centrosymmetric: z.boolean(),
+    setting: z.string().describe('The choice of axes, in words'),
+    classes: z.array(z.object({ label: z.string(), size: z.number().int().nullable() })),
+    irreps: z.array(
+      z.looseObject({
+        label: z.string(),
+        dimension: z.number().int(),
+        characters: z.array(z.union([z.number(), z.string()])),
+        functions: z.array(z.string()),
+      }),
+    ),
+  })
+  .meta({ id: 'CharacterTable' });
+
+export const ProductInput = z.strictObject({ group: GroupSymbol, irreps: z.array(Irrep).min(1).max(12) });
+export const DescentInput = z.strictObject({
+  from: GroupSymbol,
+  to: GroupSymbol,
+  irreps: z.array(Irrep).min(1).max(50).optional(),
+  along: z.string().max(100).optional().describe("A choice of axes, or one class in it, such as C2''"),
+});
+export const SplittingInput = z.strictObject({ group: GroupSymbol, term: z.string().min(1).max(10) });
+export const VibrationsInput = z.strictObject({
+  geometry: z.string().min(1).max(10),
+  sites: z.array(z.string().min(1).max(40)).min(1).max(12),
+});
+export const SelectionInput = z.strictObject({
+  group: GroupSymbol,
+  from: z.string().min(1).max(30),
+  to: z.string().min(1).max(30),
+  vibrations: z
+    .array(z.strictObject({ irrep: Irrep, count: z.number().int().min(1).max(100) }))
+    .max(50)
+    .optional(),
+});
+export const SelectionResult = z
+  .looseObject({
+    spinAllowed: z.boolean(),
+    laporteAllowed: z.boolean().nullable(),
+    dipole: PerAxis,
+    vibronic: irrepsPerAxis,
+    magneticDipole: PerAxis,
+    spinOrbit: z.looseObject({ allowed: z.boolean().nullable(), steps: z.array(z.string()) }),
+    mechanism: z.enum(['allowed', 'vibronic', 'spin-forbidden', 'spin-forbidden-vibronic', 'forbidden']),
+    steps: z.array(z.string()),
+  })
+  .meta({ id: 'SelectionAnalysis' });
+
+const read = { tag: 'Symmetry', who: 'signed-in', scope: 'read', status: 200 } as const;
+const derive = { ...read, method: 'POST', limit: 20_000 } as const;
+
+export const symmetryRoutes = {
+  listGroups: route({
+    ...read,
+    method: 'GET',
+    path: '/api/symmetry/groups',
+    summary: 'Point groups by symbol',
+    answers: z.object({ items: z.array(z.object({ symbol: z.string(), order: z.number().int().nullable() })) }),
+  }),
+  readGroup: route({
+    ...read,
+    method: 'GET',
+    path: '/api/symmetry/groups/{symbol}',
+    summary: 'The character table of a group',
+    answers: CharacterTable,
+  }),
+  deriveProduct: route({
+    ...derive,
+    path: '/api/derive/product',
+    summary: 'Direct product of irreps, reduced',
+    body: ProductInput,
+    answers: z.object({ terms: z.array(IrrepCount) }),
+  }),
+  deriveDescent: route({
+    ...derive,
+    path: '/api/derive/descent',
+    summary: 'What irreps become in a subgroup',
+    body: DescentInput,
+    answers: z.looseObject({
+      maps: z.array(z.object({ irrep: z.string(), terms: z.array(IrrepCount) })),
+      choices: z.array(z.string()),
+    }),
+  }),
+  deriveSplitting: route({
+    ...derive,
+    path: '/api/derive/splitting',
+    summary: 'Terms of a free-ion d term in a group',
+    body: SplittingInput,
+    answers: z.object({ terms: z.array(z.string()) }),
+  }),
+  deriveVibrations: route({
+    ...derive,
+    path: '/api/derive/vibrations',
+    summary: 'Vibrations of a skeleton, sorted by irrep',
+    body: VibrationsInput,
+    answers: z.looseObject({
+      group: z.string(),
+      total: z.array(IrrepCount),
+      vibrations: z.array(IrrepCount.extend({ infrared: z.boolean(), raman: z.boolean() })),
+    }),
+  }),
+  deriveSelection: route({
+    ...derive,
+    path: '/api/derive/selection',
+    summary: 'Why a transition is allowed or forbidden, step by step',
+    body: SelectionInput,
+    answers: SelectionResult,
+  }),
+};

@@ -1,0 +1,7 @@
+import { selectionAnalysis } from '#src/chem/symmetry/index.ts';
+import { routes } from '#src/contracts/routes.ts';
+import { endpoint } from '#src/server/endpoint.ts';
+
+export const POST = endpoint(routes.deriveSelection, {
+  act: ({ body }) => selectionAnalysis(body),
+});
