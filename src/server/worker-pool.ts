@@ -98,6 +98,11 @@ async function serve(waiting: Waiting): Promise<void> {
 /** Put one question to a worker. Returns whether it can be asked again. */
 function ask(worker: Worker, { question, options, resolve, reject }: Waiting): Promise<boolean> {
   const { timeoutMs = 10_000, signal, field = question.name } = options;
+  // Whoever asked may have gone while the worker started: an abort that is past tells nobody.
+  if (signal?.aborted) {
+    reject(signal.reason);
+    return Promise.resolve(true);
+  }
   return new Promise((done) => {
     const end = (usable: boolean) => {
       clearTimeout(timer);

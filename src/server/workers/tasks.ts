@@ -1,5 +1,6 @@
 import { readFormula } from '#src/chem/formula/index.ts';
 import { enumerateIsomers } from '#src/chem/geometry/index.ts';
+import { diagram, levels } from '#src/chem/ligand-field/index.ts';
 import { type ReadOptions, readSpectrumFile } from '#src/chem/spectra/index.ts';
 
 type Rest = Parameters<typeof readFormula>;
@@ -13,6 +14,8 @@ interface FormulaInput {
 export const tasks = {
   formula: ({ text, answers, ownLigands }: FormulaInput) => readFormula(text, answers, ownLigands),
   isomers: enumerateIsomers,
+  levels,
+  diagram,
   spectrumFile: ({ bytes, options }: { bytes: Uint8Array; options: ReadOptions }) => readSpectrumFile(bytes, options),
 };
 

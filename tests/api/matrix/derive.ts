@@ -44,4 +44,15 @@ export const rows: Record<string, MatrixRow> = {
     send: () => ({ path: '/api/derive/selection', json: { group: 'Oh', from: '2T2g', to: '2Eg' } }),
     expect: anybody,
   },
+  deriveLevels: {
+    send: () => ({
+      path: '/api/derive/levels',
+      json: { n: 3, field: { kind: 'cubic', geometry: 'OC-6', delta: 17_400 }, B: 725, C: 2900, zeta: 0 },
+    }),
+    expect: anybody,
+  },
+  deriveDiagram: {
+    send: () => ({ path: '/api/derive/diagram', json: { n: 3, geometry: 'OC-6', ratioCB: 4.5, max: 40, points: 11 } }),
+    expect: anybody,
+  },
 };

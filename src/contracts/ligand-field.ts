@@ -1,0 +1,87 @@
+import * as z from 'zod';
+import { route } from './route.ts';
+
+const perCm = z.number().min(-1e6).max(1e6).describe('cm⁻¹');
+const Electrons = z.number().int().min(1).max(9).describe('d electrons');
+const CubicGeometry = z.enum(['OC-6', 'T-4', 'CU-8']);
+
+/** A ligand of the overlap model: degrees and cm⁻¹. */
+const OverlapLigand = z.strictObject({
+  theta: z.number(),
+  phi: z.number(),
+  eSigma: perCm,
+  ePi: perCm.optional(),
+  ePiX: perCm.optional(),
+  ePiY: perCm.optional(),
+  psi: z.number().optional(),
+});
+
+export const LevelsInput = z
+  .strictObject({
+    n: Electrons,
+    field: z.discriminatedUnion('kind', [
+      z.strictObject({ kind: z.literal('cubic'), geometry: CubicGeometry, delta: perCm }),
+      z.strictObject({ kind: z.literal('overlap'), ligands: z.array(OverlapLigand).min(1).max(12) }),
+    ]),
+    B: perCm,
+    C: perCm,
+    zeta: z.literal(0, 'Spin–orbit coupling is not computed yet: leave zeta out, or send 0').optional(),
+  })
+  .meta({ id: 'LevelsInput' });
+
+export const LevelsResult = z
+  .looseObject({
+    group: z.string().nullable(),
+    levels: z.array(
+      z.looseObject({
+        energy: z.number().describe('cm⁻¹ above the lowest'),
+        degeneracy: z.number().int(),
+        multiplicity: z.number().int().nullable(),
+        irrep: z.string().nullable(),
+        label: z.string().nullable(),
+      }),
+    ),
+  })
+  .meta({ id: 'LevelsResult' });
+
+export const DiagramInput = z.strictObject({
+  n: Electrons,
+  geometry: CubicGeometry,
+  ratioCB: z.number().positive().max(20),
+  max: z.number().positive().max(1000).optional(),
+  points: z.number().int().min(2).max(2001).optional(),
+});
+export const DiagramResult = z
+  .looseObject({
+    x: z.array(z.number()).describe('Δ/B'),
+    curves: z.array(z.looseObject({ label: z.string(), y: z.array(z.number()) })),
+    ground: z.array(z.looseObject({ from: z.number(), to: z.number(), label: z.string() })),
+    crossings: z.array(z.looseObject({ x: z.number(), from: z.string(), to: z.string() })),
+  })
+  .meta({ id: 'DiagramResult' });
+
+const derive = {
+  tag: 'Ligand field',
+  who: 'signed-in',
+  scope: 'read',
+  status: 200,
+  method: 'POST',
+  limit: 20_000,
+} as const;
+
+export const ligandFieldRoutes = {
+  deriveLevels: route({
+    ...derive,
+    path: '/api/derive/levels',
+    summary: 'Levels of a dⁿ ion in a field',
+    body: LevelsInput,
+    answers: LevelsResult,
+  }),
+  deriveDiagram: route({
+    ...derive,
+    path: '/api/derive/diagram',
+    summary: 'Energy-level diagram: energy/B against field/B',
+    body: DiagramInput,
+    answers: DiagramResult,
+  }),
+};
