@@ -1,6 +1,5 @@
 import { pathToFileURL } from 'node:url';
 import { grants } from '#src/db/schema/index.ts';
-import { seeComplex } from '#src/server/access/records.ts';
 import { registerComplex } from '#src/server/complexes/register.ts';
 import { closeDatabase, database } from '#src/server/database.ts';
 import { DEMO_ACCOUNTS } from '#src/server/demo-accounts.ts';
@@ -75,14 +74,13 @@ export async function loadDemo(): Promise<void> {
   const pick = (...formulas: string[]) => formulas.map((formula) => accession.get(formula)!);
 
   const contributor = await people.asker(DEMO_ACCOUNTS[2].email);
-  const draft = await registerComplex(contributor, {
+  await registerComplex(contributor, {
     formula: '[Cr(NCS)(NH3)5]2+',
     geometry: 'OC-6',
     lab: people.labId.quay,
     state: 'draft',
     notes: 'Waiting for the sulfur analysis: κN or κS? Invented for the demo.',
   });
-  await seeComplex(contributor, draft);
 
   await shareFolio(people, {
     lead: DEMO_ACCOUNTS[1].email,

@@ -2,7 +2,7 @@ import type { APIContext, APIRoute } from 'astro';
 import type * as z from 'zod';
 import type { Route } from '../contracts/route.ts';
 import { type Asker, isMember } from './access/asker.ts';
-import { contractErrors, entityTag, HttpError, problem, readJsonBody, tooLarge, toProblem } from './http.ts';
+import { contractErrors, entityTag, HttpError, readJsonBody, tooLarge, toProblem } from './http.ts';
 import { replayOrRun } from './idempotency.ts';
 
 /** What an endpoint's steps are given. */
@@ -139,6 +139,3 @@ export function respond(route: Route, request: Request, result: unknown): Respon
     return new Response(null, { status: 304, headers });
   return new Response(text, { status, headers });
 }
-
-/** Answer for a method that a path does not serve, and for an unknown path under /api. */
-export const noSuchEndpoint: APIRoute = () => problem(404, 'There is no such endpoint; /api/openapi.json lists them');

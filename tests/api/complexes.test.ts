@@ -159,6 +159,24 @@ describe('changing', () => {
     expect(record.pointGroup).toBe('C3v');
   });
 
+  test('another spin state leaves the hand as it was: not stated, rac, or one of the two', async () => {
+    const unstated = await register({ formula: '[Fe(bpy)3]2+', geometry: 'OC-6' });
+    const racemate = await register({ formula: '[Fe(phen)3]2+', geometry: 'OC-6', chirality: 'rac' });
+    const delta = await register({ formula: 'Δ-[Fe(en)3]2+', geometry: 'OC-6' });
+    for (const { accession, isomer } of [unstated, racemate, delta]) {
+      const record = await json<ComplexRecord>(
+        call('PATCH', `/api/complexes/${accession}`, {
+          as: lead,
+          json: { spinState: 'low' },
+          headers: { 'if-match': '*' },
+        }),
+      );
+      expect(record.centres[0]!.spinState).toBe('low');
+      expect(record.isomer).toEqual(isomer);
+    }
+    expect([unstated, racemate, delta].map(({ isomer }) => isomer.chirality)).toEqual([null, 'rac', 'Δ']);
+  });
+
   test('withdraws with a reason only', async () => {
     const { accession } = await register({ formula: '[Fe(H2O)6]3+', geometry: 'OC-6' });
     const send = (body: object) =>

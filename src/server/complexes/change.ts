@@ -27,15 +27,20 @@ async function deleteParts(tx: Tx, complexId: string): Promise<void> {
 }
 
 /** What stands now, as choices, so that a patch changes only what it names. */
-async function presentChoices(tx: Tx, { complex }: ComplexChange) {
+async function presentChoices(tx: Tx, { complex }: ComplexChange, patch: ComplexPatch) {
   const rows = await tx.select().from(centres).where(eq(centres.complexId, complex.id)).orderBy(centres.ordinal);
   return {
     formula: complex.formula,
     answers: complex.answers,
     geometry: rows.map((row) => row.geometry),
     spinState: rows.map((row) => row.spinState),
-    isomer: complex.sites ? { sites: complex.sites, chelates: complex.chelates ?? [] } : null,
-    ...(complex.chirality === 'rac' ? { chirality: 'rac' as const } : {}),
+    isomer: complex.sites
+      ? {
+          sites: complex.sites,
+          chelates: complex.chelates ?? [],
+          chirality: patch.chirality === undefined ? complex.chirality : patch.chirality,
+        }
+      : null,
   };
 }
 
@@ -94,13 +99,16 @@ export async function changeComplex(access: ComplexChange, patch: ComplexPatch):
 
       let reopened = 0;
       if (IDENTITY.some((name) => name in patch)) {
-        const present = await presentChoices(tx, access);
+        const present = await presentChoices(tx, access, patch);
         const wanted = Object.fromEntries(IDENTITY.filter((name) => name in patch).map((name) => [name, patch[name]]));
         // Another polyhedron has other sites: the old isomer does not carry over.
         const isomer = 'geometry' in patch && !('isomer' in patch) ? { isomer: null } : {};
-        const chirality = 'isomer' in patch ? { chirality: undefined } : {};
-        const choices = { ...present, ...chirality, ...isomer, ...wanted };
-        const identity = deriveIdentity({ ...choices, chirality: choices.chirality ?? undefined });
+        const identity = deriveIdentity({
+          ...present,
+          ...isomer,
+          ...wanted,
+          chirality: patch.chirality ?? undefined,
+        });
         if (identity.key !== complex.identityKey) {
           const twin = await duplicateInSight(tx, asker, identity.key, complex.id);
           if (twin) throw duplicate(twin);

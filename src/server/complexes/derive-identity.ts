@@ -8,8 +8,18 @@ import { HttpError } from '../http.ts';
 /** The choices of a person from which everything else of a complex follows. */
 export type IdentityChoices = Pick<ComplexInput, 'formula' | 'answers' | 'geometry' | 'chirality' | 'spinState'> & {
   /** As a person gives it, or as a record keeps it. */
-  isomer?: ComplexInput['isomer'] | { sites: string[]; chelates: [number, number][] };
+  isomer?: ComplexInput['isomer'] | KeptIsomer;
 };
+
+/** An isomer as its record has it, with the hand that was stated: of a chiral form that may be none. */
+export interface KeptIsomer {
+  sites: string[];
+  chelates: [number, number][];
+  chirality: Identity['chirality'];
+}
+
+const isKept = (isomer: IdentityChoices['isomer']): isomer is KeptIsomer =>
+  typeof isomer === 'object' && isomer !== null && !Array.isArray(isomer);
 
 export interface Identity {
   reading: Reading;
@@ -117,6 +127,7 @@ export function deriveIdentity(choices: IdentityChoices): Identity {
   let chirality: Identity['chirality'] = null;
   if (isomer?.chiral) {
     if (choices.chirality === 'rac' || (!picked && reading.configuration?.includes('rac'))) chirality = 'rac';
+    else if (isKept(choices.isomer)) chirality = choices.isomer.chirality;
     else if (picked) chirality = isomer.chirality;
     else if (hand && isomer.chirality) {
       const { descriptor } = isomer;
