@@ -40,7 +40,7 @@ async function askerOf(request: Request) {
   }
   if (!SESSION_COOKIE.test(request.headers.get('cookie') ?? '')) return null;
   const session = await getSession(request);
-  return session?.accountId ? askerOfSession(session) : null;
+  return session?.sessionId ? askerOfSession(session.sessionId) : null;
 }
 
 const SECURITY_HEADERS = {

@@ -29,14 +29,14 @@ const row: BenchRow = {
     const { closeDatabase, database } = await import('#src/server/database.ts');
     const { migrateDatabase } = await import('../migrate.ts');
     const { fillForMeasuring } = await import('../lib/synthetic-registry.ts');
-    const { askerOfSession } = await import('#src/server/access/asker.ts');
+    const { askerAgain } = await import('#src/server/access/asker.ts');
     const { GET } = await import('#src/pages/api/complexes/index.ts');
     try {
       const opened = await database();
       await migrateDatabase(opened);
       const { accountId } = await fillForMeasuring(opened, COMPLEXES);
       await opened.client.execute('ANALYZE');
-      const asker = await askerOfSession({ accountId, version: 1 });
+      const asker = await askerAgain({ accountId });
 
       const url = new URL(QUERY, 'http://localhost');
       const ask = async () => {

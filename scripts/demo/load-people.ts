@@ -1,5 +1,5 @@
 import { accounts, labs as labTable, memberships } from '#src/db/schema/index.ts';
-import { type Asker, askerOfSession } from '#src/server/access/asker.ts';
+import { type Asker, askerAgain } from '#src/server/access/asker.ts';
 import { database } from '#src/server/database.ts';
 import { DEMO_ACCOUNTS, DEMO_PASSWORD } from '#src/server/demo-accounts.ts';
 import { newId, nowIso } from '#src/server/ids.ts';
@@ -35,7 +35,7 @@ export async function loadPeople(): Promise<DemoPeople> {
   return {
     labId,
     asker: async (email) => {
-      const asker = await askerOfSession({ accountId: accountId.get(email) ?? '', version: 1 });
+      const asker = await askerAgain({ accountId: accountId.get(email) ?? '' });
       if (!asker) throw new Error(`no demo account ${email}`);
       return asker;
     },

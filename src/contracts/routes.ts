@@ -1,6 +1,12 @@
+import { accountRoutes } from './account-routes.ts';
 import { complexRoutes } from './complex-routes.ts';
 import { deriveRoutes } from './derive.ts';
+import { grantRoutes } from './grant-routes.ts';
 import { ligandFieldRoutes } from './ligand-field.ts';
+import { mergeRoutes } from './merge-routes.ts';
+import { oversightRoutes } from './oversight-routes.ts';
+import { peopleRoutes } from './people-routes.ts';
+import { secondFactorRoutes } from './second-factor-routes.ts';
 import { sharingRoutes } from './sharing-routes.ts';
 import { spectrumRoutes } from './spectrum-routes.ts';
 import { symmetryRoutes } from './symmetry.ts';
@@ -14,8 +20,14 @@ export const routes = {
   ...symmetryRoutes,
   ...ligandFieldRoutes,
   ...complexRoutes,
+  ...mergeRoutes,
   ...spectrumRoutes,
   ...sharingRoutes,
+  ...grantRoutes,
+  ...peopleRoutes,
+  ...accountRoutes,
+  ...secondFactorRoutes,
+  ...oversightRoutes,
 };
 
 export type RouteName = keyof typeof routes;

@@ -8,16 +8,16 @@ import { HttpError } from './http.ts';
 import { log } from './log.ts';
 import { passwordFits } from './passwords.ts';
 import { countAttempt } from './rate-limit.ts';
+import { beginSession, SESSION_LIFE_MS } from './sessions.ts';
 import { settings } from './settings.ts';
 import { record } from './trail.ts';
 
 declare module '@auth/core/types' {
   interface User {
-    sessionVersion?: number;
+    sessionId?: string;
   }
   interface Session {
-    accountId: string;
-    version: number;
+    sessionId: string;
   }
 }
 
@@ -27,7 +27,7 @@ class TooMany extends CredentialsSignin {
 
 const QUARTER_HOUR = 15 * 60 * 1000; // ms
 
-async function authorize(given: Partial<Record<string, unknown>>) {
+async function authorize(given: Partial<Record<string, unknown>>, request: Request) {
   const email = String(given.email ?? '')
     .trim()
     .toLowerCase();
@@ -44,29 +44,30 @@ async function authorize(given: Partial<Record<string, unknown>>) {
   // The same work for an unknown address as for a wrong password.
   const fits = await passwordFits(account?.passwordHash ?? null, password);
   if (!account || !fits || account.state !== 'active') return null;
-  await write((tx) =>
-    record(tx, { accountId: account.id }, { action: 'sign-in', subjectType: 'account', subjectId: account.id }),
-  );
-  return { id: account.id, email: account.email, name: account.name, sessionVersion: account.sessionVersion };
+  const sessionId = await write(async (tx) => {
+    await record(tx, { accountId: account.id }, { action: 'sign-in', subjectType: 'account', subjectId: account.id });
+    const userAgent = request.headers.get('user-agent');
+    return beginSession(tx, { accountId: account.id, secondFactor: false, userAgent, address: null });
+  });
+  return { id: account.id, email: account.email, name: account.name, sessionId };
 }
 
 export default defineConfig({
   secret: settings().authSecret,
   trustHost: true,
-  session: { strategy: 'jwt', maxAge: 12 * 3600 },
+  session: { strategy: 'jwt', maxAge: SESSION_LIFE_MS / 1000 },
   pages: { signIn: '/signin', error: '/signin' },
   providers: [Credentials({ credentials: { email: {}, password: {} }, authorize })],
   callbacks: {
     jwt({ token, user }) {
       if (user) {
         token.sub = user.id ?? '';
-        token.version = user.sessionVersion;
+        token.sid = user.sessionId;
       }
       return token;
     },
     session({ session, token }) {
-      session.accountId = token.sub ?? '';
-      session.version = Number(token.version);
+      session.sessionId = String(token.sid ?? '');
       return session;
     },
   },

@@ -58,10 +58,18 @@ export interface Call {
 
 const SESSION_COOKIE = 'authjs.session-token';
 
+/** A session of an account, as a sign-in begins one. */
+export async function sessionOf(accountId: string, { secondFactor = false } = {}): Promise<string> {
+  const { database } = await import('#src/server/database.ts');
+  const { beginSession } = await import('#src/server/sessions.ts');
+  const facts = { accountId, secondFactor, userAgent: 'tests', address: null };
+  return (await database()).write((tx) => beginSession(tx, facts));
+}
+
 /** What a browser sends that is signed in: the encrypted cookie that sign-in gives, and the origin of our pages. */
-export async function sessionHeaders(accountId: string, version = 1): Promise<Record<string, string>> {
+export async function sessionHeaders(accountId: string, sessionId?: string): Promise<Record<string, string>> {
   const { encode } = await import('@auth/core/jwt');
-  const token = { sub: accountId, version };
+  const token = { sub: accountId, sid: sessionId ?? (await sessionOf(accountId)) };
   const cookie = await encode({ token, secret: process.env.AUTH_SECRET!, salt: SESSION_COOKIE, maxAge: 3600 });
   return { cookie: `${SESSION_COOKIE}=${cookie}`, origin: ORIGIN };
 }

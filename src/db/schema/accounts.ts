@@ -13,11 +13,11 @@ export const accounts = sqliteTable(
     /** Argon2id, or null for an account that only signs in by other means. */
     passwordHash: text(),
     steward: integer({ mode: 'boolean' }).notNull().default(false),
-    /** Raised to end every session at once: a cookie holds the number it was made with. */
-    sessionVersion: integer().notNull().default(1),
     state: text({ enum: ['active', 'deactivated'] })
       .notNull()
       .default('active'),
+    deactivatedAt: text(),
+    version: integer().notNull().default(1),
     createdAt: text().notNull(),
   },
   (t) => [uniqueIndex('account_email').on(t.email)],
@@ -32,6 +32,8 @@ export const labs = sqliteTable(
     description: text(),
     /** Whether contributors of other labs may attest what this lab measured. */
     outsideAttest: integer({ mode: 'boolean' }).notNull().default(false),
+    /** Measures what other labs made, as a spectroscopy service does. */
+    facility: integer({ mode: 'boolean' }).notNull().default(false),
     version: integer().notNull().default(1),
     createdAt: text().notNull(),
   },
@@ -76,6 +78,9 @@ export const invitations = sqliteTable(
     acceptedAt: text(),
     acceptedBy: text().references(() => accounts.id),
     revokedAt: text(),
+    /** How often its mail was sent; each sending makes a new link and ends the one before. */
+    sends: integer().notNull().default(1),
+    sentAt: text(),
   },
   (t) => [uniqueIndex('invitation_token').on(t.tokenHash), index('invitation_email').on(t.email)],
 );

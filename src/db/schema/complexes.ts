@@ -232,4 +232,7 @@ export const mergeTasks = sqliteTable('merge_task', {
     .references(() => complexes.id),
   createdAt: text().notNull(),
   settledAt: text(),
+  settledBy: text().references(() => accounts.id),
+  outcome: text({ enum: ['merged', 'different'] }),
+  reason: text(),
 });

@@ -56,6 +56,9 @@ export const grants = sqliteTable(
     level: text({ enum: ['view', 'download'] }).notNull(),
     expiresAt: text().notNull(),
     termsAcceptedAt: text(),
+    /** SPDX identifier of the licence that was accepted then. */
+    termsLicence: text(),
+    version: integer().notNull().default(1),
     grantedBy: text()
       .notNull()
       .references(() => accounts.id),

@@ -1,8 +1,9 @@
 import { and, eq, gt, isNull } from 'drizzle-orm';
 import type { Db } from '../../db/client.ts';
-import { accessTokens, accounts, folios, grants, memberships } from '../../db/schema/index.ts';
+import { accessTokens, accounts, folios, grants, memberships, sessions } from '../../db/schema/index.ts';
 import { database } from '../database.ts';
 import { nowIso, sha256 } from '../ids.ts';
+import { liveSession, touchSession } from '../sessions.ts';
 import type { Actor } from '../trail.ts';
 
 export type Role = 'lead' | 'contributor';
@@ -27,6 +28,8 @@ export interface Asker extends Actor {
   /** Grants that hold today, of folios not under embargo. */
   readonly grants: readonly ActiveGrant[];
   readonly tokenId: string | null;
+  /** The session of the cookie; null for a token, and for work apart from a request. */
+  readonly sessionId: string | null;
   /** What the asker's means of entry allows: a session both, a token what it was made for. */
   readonly scopes: ReadonlySet<'read' | 'write'>;
 }
@@ -38,11 +41,12 @@ export const isMember = (asker: Asker): boolean => asker.steward || asker.labs.s
 export const labsWith = (asker: Asker, role: Role): string[] =>
   [...asker.labs].filter(([, held]) => held === role).map(([labId]) => labId);
 
-async function load(
-  db: Db,
-  account: typeof accounts.$inferSelect,
-  token?: typeof accessTokens.$inferSelect,
-): Promise<Asker> {
+interface Entry {
+  token?: typeof accessTokens.$inferSelect;
+  session?: typeof sessions.$inferSelect;
+}
+
+async function load(db: Db, account: typeof accounts.$inferSelect, { token, session }: Entry = {}): Promise<Asker> {
   const now = nowIso();
   const [held, given] = await Promise.all([
     db.select().from(memberships).where(eq(memberships.accountId, account.id)),
@@ -69,16 +73,22 @@ async function load(
     labs: new Map(labs.map((m) => [m.labId, m.role])),
     grants: given.filter((g) => !g.embargoUntil || g.embargoUntil <= now),
     tokenId: token?.id ?? null,
+    sessionId: session?.id ?? null,
     scopes: new Set(token?.scopes ?? ['read', 'write']),
   };
 }
 
-/** The account of a session cookie, or null when it was ended or the account closed since. */
-export async function askerOfSession(session: { accountId: string; version: number }): Promise<Asker | null> {
+/** The account of a session cookie, or null when the session ended or lapsed or the account was closed since. */
+export async function askerOfSession(sessionId: string): Promise<Asker | null> {
   const { db } = await database();
-  const [account] = await db.select().from(accounts).where(eq(accounts.id, session.accountId));
-  if (account?.state !== 'active' || account.sessionVersion !== session.version) return null;
-  return load(db, account);
+  const [row] = await db
+    .select()
+    .from(sessions)
+    .innerJoin(accounts, eq(accounts.id, sessions.accountId))
+    .where(and(eq(sessions.id, sessionId), liveSession()));
+  if (row?.account.state !== 'active') return null;
+  await touchSession(row.session);
+  return load(db, row.account, { session: row.session });
 }
 
 /** The account of an access token, or null when it is unknown, lapsed or revoked. */
@@ -92,7 +102,7 @@ export async function askerOfToken(token: string): Promise<Asker | null> {
       and(eq(accessTokens.hash, sha256(token)), isNull(accessTokens.revokedAt), gt(accessTokens.expiresAt, nowIso())),
     );
   if (row?.account.state !== 'active') return null;
-  return load(db, row.account, row.access_token);
+  return load(db, row.account, { token: row.access_token });
 }
 
 /**
@@ -111,5 +121,5 @@ export async function askerAgain({ accountId, tokenId }: Actor): Promise<Asker |
     .select()
     .from(accessTokens)
     .where(and(eq(accessTokens.id, tokenId), isNull(accessTokens.revokedAt), gt(accessTokens.expiresAt, nowIso())));
-  return token ? load(db, account, token) : null;
+  return token ? load(db, account, { token }) : null;
 }

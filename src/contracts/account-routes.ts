@@ -1,0 +1,2 @@
+/** Routes of one's own account: sessions, password, address, second factor. */
+export const accountRoutes = {};

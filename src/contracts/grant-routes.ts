@@ -1,0 +1,2 @@
+/** Routes of grants and requests for more. */
+export const grantRoutes = {};

@@ -1,0 +1,2 @@
+/** Routes of merging records of one complex. */
+export const mergeRoutes = {};

@@ -1,0 +1,2 @@
+/** Routes of the trail and of who looked. */
+export const oversightRoutes = {};

@@ -1,0 +1,2 @@
+/** Routes of members, accounts and their state. */
+export const peopleRoutes = {};

@@ -1,0 +1,2 @@
+/** Routes of second factors. */
+export const secondFactorRoutes = {};
