@@ -1,63 +1,9 @@
 import * as z from 'zod';
 import { Accession } from './accession.ts';
-import { Email, Instant, LabRef, Name } from './common.ts';
+import { Expiry, Instant, LabRef, Name } from './common.ts';
+import { AskedForMore, GrantRecord, Level, Licence, OwnTerms } from './grants.ts';
 
 export const Role = z.enum(['contributor', 'lead']);
-export const Level = z.enum(['view', 'download']);
-const expires = z.union([Instant, z.iso.date().transform((day) => `${day}T23:59:59.999Z`)]);
-
-export const InvitationRecord = z
-  .object({
-    id: z.string(),
-    email: z.string(),
-    state: z.enum(['sent', 'accepted', 'lapsed', 'revoked']),
-    role: Role.nullable(),
-    level: Level.nullable(),
-    folio: z.object({ id: z.string(), name: z.string() }).nullable(),
-    lab: LabRef.nullable(),
-    invitedBy: z.string(),
-    createdAt: Instant,
-    expiresAt: Instant,
-  })
-  .meta({ id: 'Invitation' });
-export type InvitationRecord = z.infer<typeof InvitationRecord>;
-
-export const MemberInvitation = z
-  .strictObject({
-    email: Email,
-    role: Role,
-    expires: expires.optional().describe('When the link stops working, at most 14 days from now'),
-  })
-  .meta({ id: 'MemberInvitation' });
-export type MemberInvitation = z.infer<typeof MemberInvitation>;
-export const GuestInvitation = z
-  .strictObject({
-    email: Email,
-    level: Level.default('view'),
-    expires: expires.optional().describe('End of the access given; a year from now unless told'),
-  })
-  .meta({ id: 'GuestInvitation' });
-export type GuestInvitation = z.infer<typeof GuestInvitation>;
-export const InvitationToken = z.string().min(1).max(200);
-export const Acceptance = z
-  .strictObject({
-    token: InvitationToken,
-    name: Name.optional(),
-    password: z.string().min(15, 'A password needs at least 15 characters').max(1000).optional(),
-  })
-  .meta({ id: 'Acceptance', description: 'Name and password are for an address that has no account yet' });
-export type Acceptance = z.infer<typeof Acceptance>;
-export const InvitationPreview = z.object({
-  email: z.string(),
-  invitedBy: z.string(),
-  lab: LabRef,
-  role: Role.nullable(),
-  folio: z.object({ name: z.string() }).nullable(),
-  level: Level.nullable(),
-  hasAccount: z.boolean(),
-  expiresAt: Instant,
-});
-export type InvitationPreview = z.infer<typeof InvitationPreview>;
 
 export const LabRecord = z
   .object({
@@ -66,6 +12,7 @@ export const LabRecord = z
     place: z.string().nullable(),
     description: z.string().nullable(),
     outsideAttest: z.boolean(),
+    facility: z.boolean().describe('Measures what other labs made'),
     members: z.number().int(),
     complexes: z.number().int(),
     spectra: z.number().int(),
@@ -87,6 +34,7 @@ export const LabPatch = z
     place: z.string().trim().max(200).nullable().optional(),
     description: z.string().trim().max(2000).nullable().optional(),
     outsideAttest: z.boolean().optional(),
+    facility: z.boolean().optional(),
   })
   .meta({ id: 'LabPatch' });
 export type LabPatch = z.infer<typeof LabPatch>;
@@ -97,6 +45,7 @@ export const MemberRecord = z
     email: z.string().nullable().describe('For leads of the lab and stewards'),
     role: Role,
     since: Instant,
+    state: AccountState.describe('A deactivated account cannot sign in; the person stays on the list'),
   })
   .meta({ id: 'Member' });
 export type MemberRecord = z.infer<typeof MemberRecord>;
@@ -109,18 +58,6 @@ export const FolioItem = z
   .meta({ id: 'FolioItem' });
 export type FolioItem = z.infer<typeof FolioItem>;
 export const FolioItems = z.array(FolioItem).max(5000).meta({ id: 'FolioItems' });
-export const GrantRecord = z
-  .object({
-    id: z.string(),
-    email: z.string(),
-    name: z.string(),
-    level: Level,
-    expires: Instant,
-    termsAcceptedAt: Instant.nullable(),
-    revoked: z.boolean(),
-  })
-  .meta({ id: 'Grant' });
-export type GrantRecord = z.infer<typeof GrantRecord>;
 export const FolioRecord = z
   .object({
     id: z.string(),
@@ -135,18 +72,20 @@ export const FolioRecord = z
     edition: z.number().int().nullable(),
     level: Level.nullable().describe('The level at which a guest reads it; null for members'),
     expires: Instant.nullable().describe('When a guest’s access ends'),
-    may: z.object({ change: z.boolean(), invite: z.boolean(), download: z.boolean() }),
+    terms: OwnTerms.nullable().describe('What a guest accepted; null for members'),
+    contact: z.string().nullable().describe('For a guest: the lead who can be asked'),
+    asked: z.array(AskedForMore).describe('A guest’s own requests that wait for an answer'),
+    may: z.object({ change: z.boolean(), invite: z.boolean(), download: z.boolean(), delete: z.boolean() }),
   })
   .meta({ id: 'Folio' });
 export type FolioRecord = z.infer<typeof FolioRecord>;
 
-const licence = z.enum(['CC0-1.0', 'CC-BY-4.0', 'CC-BY-SA-4.0', 'CC-BY-NC-4.0', 'ODbL-1.0', 'PDDL-1.0']);
 export const FolioInput = z
   .strictObject({
     name: Name,
     description: z.string().max(5000).optional(),
     lab: z.string(),
-    licence,
+    licence: Licence,
     shows: z.enum(['attested', 'proposed']).default('attested'),
     embargoUntil: Instant.nullable().optional(),
     items: FolioItems.default([]),
@@ -157,15 +96,22 @@ export const FolioPatch = z
   .strictObject({
     name: Name.optional(),
     description: z.string().max(5000).nullable().optional(),
-    licence: licence.optional(),
+    licence: Licence.optional(),
     shows: z.enum(['attested', 'proposed']).optional(),
     embargoUntil: Instant.nullable().optional(),
   })
   .meta({ id: 'FolioPatch' });
 export type FolioPatch = z.infer<typeof FolioPatch>;
 
+const notify = z
+  .boolean()
+  .optional()
+  .describe('Send a mail when it is ready; without this one is sent only when it takes longer than a minute');
 export const BundleInput = z
-  .union([z.strictObject({ folio: z.string() }), z.strictObject({ complexes: z.array(Accession).min(1).max(5000) })])
+  .union([
+    z.strictObject({ folio: z.string(), notify }),
+    z.strictObject({ complexes: z.array(Accession).min(1).max(5000), notify }),
+  ])
   .meta({ id: 'BundleInput' });
 export type BundleInput = z.infer<typeof BundleInput>;
 export const BundleRecord = z
@@ -178,6 +124,7 @@ export const BundleRecord = z
     folio: z.string().nullable(),
     error: z.string().nullable(),
     createdAt: Instant,
+    fileUntil: Instant.nullable().describe('Until when the file of a ready bundle is kept; null once it is gone'),
   })
   .meta({ id: 'Bundle' });
 export type BundleRecord = z.infer<typeof BundleRecord>;
@@ -192,7 +139,7 @@ export const TokenInput = z
       .max(2)
       .transform((scopes) => [...new Set(scopes)]),
     lab: z.string().optional().describe('Brings the rights of this lab alone'),
-    expires: expires.describe('At most a year from now'),
+    expires: Expiry.describe('At most a year from now'),
   })
   .meta({ id: 'TokenInput' });
 export type TokenInput = z.infer<typeof TokenInput>;

@@ -84,10 +84,11 @@ export async function seeComplex(asker: Asker, accession: string): Promise<Compl
   return grant({ asker, complex });
 }
 
-/** Its maker may change a draft; a registered one its lab's leads and the steward. */
+/** Its maker may change a draft as long as they work in the lab; a registered one its lab's leads and the steward. */
 export const canChangeComplex = (asker: Asker, complex: typeof complexes.$inferSelect): boolean =>
   asker.scopes.has('write') &&
-  (leads(asker, complex.labId) || (complex.state === 'draft' && complex.makerId === asker.accountId));
+  (leads(asker, complex.labId) ||
+    (complex.state === 'draft' && complex.makerId === asker.accountId && worksIn(asker, complex.labId)));
 
 /** @throws {HttpError} 404 not in sight, 403 seen but not to be changed by this asker */
 export async function mayChangeComplex(asker: Asker, accession: string): Promise<ComplexChange> {

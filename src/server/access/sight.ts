@@ -16,7 +16,9 @@ function memberSight(asker: Asker, t: typeof complexes | typeof preparations | t
   const mine = [...asker.labs.keys()];
   const shared = any(eq(t.visibility, 'programme'), mine.length ? inArray(t.labId, mine) : undefined);
   const leading = labsWith(asker, 'lead');
-  const draft = any(eq(t.makerId, asker.accountId), leading.length ? inArray(t.labId, leading) : undefined);
+  // Who left a lab leaves its drafts behind, the own ones too.
+  const own = mine.length ? all(eq(t.makerId, asker.accountId), inArray(t.labId, mine)) : undefined;
+  const draft = any(own, leading.length ? inArray(t.labId, leading) : undefined);
   return any(all(inArray(t.state, ['registered', 'withdrawn']), shared), all(eq(t.state, 'draft'), draft));
 }
 

@@ -40,6 +40,7 @@ export async function listMembers({ asker, lab }: LabAccess): Promise<MemberReco
       email: accounts.email,
       role: memberships.role,
       since: memberships.createdAt,
+      state: accounts.state,
     })
     .from(memberships)
     .innerJoin(accounts, eq(accounts.id, memberships.accountId))

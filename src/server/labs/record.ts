@@ -39,6 +39,7 @@ export async function labRecords(asker: Asker, rows: Row[]): Promise<LabRecord[]
     place: lab.place,
     description: lab.description,
     outsideAttest: lab.outsideAttest,
+    facility: lab.facility,
     members: of(people, lab.id),
     complexes: of(made, lab.id),
     spectra: of(measured, lab.id),
