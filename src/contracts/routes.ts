@@ -1,4 +1,5 @@
 import { accountRoutes } from './account-routes.ts';
+import { chargeTransferRoutes } from './charge-transfer.ts';
 import { complexRoutes } from './complex-routes.ts';
 import { deriveRoutes } from './derive.ts';
 import { grantRoutes } from './grant-routes.ts';
@@ -19,6 +20,7 @@ export const routes = {
   ...deriveRoutes,
   ...symmetryRoutes,
   ...ligandFieldRoutes,
+  ...chargeTransferRoutes,
   ...complexRoutes,
   ...mergeRoutes,
   ...spectrumRoutes,

@@ -34,7 +34,12 @@ export const simpleLigands: readonly Ligand[] = [
     source: `${OPTICAL}; ${SERIES}`,
   }),
   ligand('H', 'H', -1, 'H', 'hydrido', '[H-]', 'none', { canBridge: true }),
-  ligand('O', 'O', -2, 'O', 'oxido', '[O-2]', 'donor', { synonyms: ['oxo'], canBridge: true }),
+  ligand('O', 'O', -2, 'O', 'oxido', '[O-2]', 'donor', {
+    synonyms: ['oxo'],
+    opticalElectronegativity: { pi: 3.2 },
+    canBridge: true,
+    source: 'optical electronegativity: C. K. Jørgensen, Prog. Inorg. Chem. 12 (1970) 101 (from memory)',
+  }),
   ligand('S', 'S', -2, 'S', 'sulfido', '[S-2]', 'donor', { seriesRank: 3, canBridge: true, source: SERIES }),
   ligand('Se', 'Se', -2, 'Se', 'selenido', '[Se-2]', 'donor', { canBridge: true }),
   ligand('N', 'N', -3, 'N', 'nitrido', '[N-3]', 'donor', { canBridge: true }),

@@ -55,4 +55,11 @@ export const rows: Record<string, MatrixRow> = {
     send: () => ({ path: '/api/derive/diagram', json: { n: 3, geometry: 'OC-6', ratioCB: 4.5, max: 40, points: 11 } }),
     expect: anybody,
   },
+  deriveChargeTransfer: {
+    send: () => ({
+      path: '/api/derive/charge-transfer',
+      json: { element: 'Cr', oxidationState: 3, geometry: 'OC-6', ligands: ['Cl', 'NH3'] },
+    }),
+    expect: anybody,
+  },
 };
