@@ -2,8 +2,9 @@ import type { APIContext, APIRoute } from 'astro';
 import type * as z from 'zod';
 import type { Route } from '../contracts/route.ts';
 import { type Asker, isMember } from './access/asker.ts';
-import { contractErrors, entityTag, HttpError, readJsonBody, tooLarge, toProblem } from './http.ts';
+import { contractErrors, entityTag, HttpError, problem, readJsonBody, tooLarge, toProblem } from './http.ts';
 import { replayOrRun } from './idempotency.ts';
+import { type Admitted, admitWithin } from './limits/admit.ts';
 
 /** What an endpoint's steps are given. */
 export interface Step<Query, Body> {
@@ -38,7 +39,7 @@ const JSON_LIMIT = 200_000;
 
 /**
  * An endpoint from its row of the route table. The order of checks is one for all (design §8):
- * 401 who, 403 role and scope, 413 and 415 body, 404 sight, 428 and 412 condition, 400 and 422 content.
+ * 401 who, 403 role and scope, 429 limits, 413 and 415 body, 404 sight, 428 and 412 condition, 400 and 422 content.
  */
 export function endpoint<Q extends z.ZodType, B extends z.ZodType, Access = null>(
   route: Route<Q, B>,
@@ -46,8 +47,10 @@ export function endpoint<Q extends z.ZodType, B extends z.ZodType, Access = null
 ): APIRoute {
   return async (context) => {
     const { request, locals } = context;
-    try {
+    let within: Admitted | undefined;
+    const answer = async (): Promise<Response> => {
       const asker = admit(route, locals.asker);
+      within = await admitWithin(route, asker, context);
       const params = Object.fromEntries(Object.entries(context.params).map(([name, value]) => [name, value ?? '']));
       checkBodyKind(route, request);
       const access = (await handler.sight?.({ asker, params, context })) as Access;
@@ -57,9 +60,15 @@ export function endpoint<Q extends z.ZodType, B extends z.ZodType, Access = null
       const step = { asker, params, query, body: body as z.output<B>, context, access };
       const run = async () => respond(route, request, await handler.act(step));
       return route.method === 'POST' && route.body ? await replayOrRun(route, request, asker, body, run) : await run();
-    } catch (error) {
-      return toProblem(error, locals.requestId);
-    }
+    };
+    const response = await answer().catch((error: unknown) =>
+      request.signal.aborted
+        ? problem(499, 'Whoever asked has gone', { title: 'Gone meanwhile' })
+        : toProblem(error, locals.requestId),
+    );
+    within?.leave();
+    for (const [name, value] of Object.entries(within?.headers ?? {})) response.headers.set(name, value);
+    return response;
   };
 }
 

@@ -28,6 +28,14 @@ const HEADERS: Record<string, Json> = {
   Link: { description: 'The next page, rel="next" (RFC 8288); absent on the last', schema: { type: 'string' } },
   Location: { description: 'Where the new record is', schema: { type: 'string', format: 'uri-reference' } },
   RetryAfter: { description: 'Seconds to wait', schema: { type: 'integer', minimum: 1 } },
+  RateLimitPolicy: {
+    description: 'The limit that this request counted against: "name";q=requests;w=seconds of its window',
+    schema: { type: 'string', examples: ['"api";q=6000;w=60'] },
+  },
+  RateLimit: {
+    description: 'How this request stands against it: "name";r=requests left;t=seconds until the next window',
+    schema: { type: 'string', examples: ['"api";r=5990;t=42'] },
+  },
   WWWAuthenticate: { description: 'Bearer', schema: { type: 'string' } },
   ContentRange: { description: 'Which bytes of how many', schema: { type: 'string' } },
   ContentDisposition: { description: 'The file name to save it under', schema: { type: 'string' } },
@@ -254,5 +262,13 @@ function problemHeaders(status: number): Json {
   if (status === 401) return { headers: { 'WWW-Authenticate': header('WWWAuthenticate') } };
   if (status === 412) return { headers: { ETag: header('ETag') } };
   if (status === 416) return { headers: { 'Content-Range': header('ContentRange') } };
-  return status === 429 || status === 503 ? { headers: { 'Retry-After': header('RetryAfter') } } : {};
+  if (status === 429)
+    return {
+      headers: {
+        'Retry-After': header('RetryAfter'),
+        'RateLimit-Policy': header('RateLimitPolicy'),
+        RateLimit: header('RateLimit'),
+      },
+    };
+  return status === 503 ? { headers: { 'Retry-After': header('RetryAfter') } } : {};
 }

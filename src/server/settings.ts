@@ -33,6 +33,7 @@ const Environment = z.object({
     .default('ZF'),
   LOG_LEVEL: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
   MAX_UPLOAD_BYTES: z.coerce.number().int().positive().default(50_000_000),
+  RATE_LIMITS: z.enum(['default', 'off']).default('default'),
 });
 
 export interface Settings {
@@ -54,6 +55,8 @@ export interface Settings {
   logLevel: string;
   /** Largest request body of an upload, in bytes. */
   maxUploadBytes: number;
+  /** The limits of `limits/policy.ts`; off only where nobody else can ask. */
+  rateLimits: 'default' | 'off';
 }
 
 /** The settings cannot be used; the message has one sentence a fault, each naming the variable. */
@@ -112,6 +115,7 @@ export function readSettings(environment: NodeJS.ProcessEnv): Settings {
     accessionPrefix: env.ACCESSION_PREFIX,
     logLevel: env.LOG_LEVEL,
     maxUploadBytes: env.MAX_UPLOAD_BYTES,
+    rateLimits: env.RATE_LIMITS,
   };
 }
 
@@ -132,7 +136,9 @@ function modeFaults(env: z.infer<typeof Environment>, publicOrigin: string): str
     return faults;
   }
   const needed = ['PUBLIC_ORIGIN', 'AUTH_SECRET', 'RESEND_API_KEY'] as const;
-  return needed.filter((name) => env[name] === undefined).map((name) => `${name}: production mode needs it`);
+  const faults = needed.filter((name) => env[name] === undefined).map((name) => `${name}: production mode needs it`);
+  if (env.RATE_LIMITS === 'off') faults.push('RATE_LIMITS: production mode has no switch for its limits');
+  return faults;
 }
 
 function storeFaults(env: z.infer<typeof Environment>): string[] {
