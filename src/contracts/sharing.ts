@@ -4,6 +4,7 @@ import { Expiry, Instant, LabRef, Name } from './common.ts';
 import { AskedForMore, GrantRecord, Level, Licence, OwnTerms } from './grants.ts';
 
 export const Role = z.enum(['contributor', 'lead']);
+export const AccountState = z.enum(['active', 'deactivated']);
 
 export const LabRecord = z
   .object({

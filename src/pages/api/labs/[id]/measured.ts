@@ -1,9 +1,9 @@
 import { routes } from '#src/contracts/routes.ts';
 import { seeLab } from '#src/server/access/sharing.ts';
 import { endpoint } from '#src/server/endpoint.ts';
-import { listMembers } from '#src/server/labs/list.ts';
+import { measured } from '#src/server/labs/measured.ts';
 
-export const GET = endpoint(routes.listMembers, {
+export const GET = endpoint(routes.readMeasured, {
   sight: ({ asker, params }) => seeLab(asker, params.id!),
-  act: ({ access }) => listMembers(access),
+  act: ({ access }) => measured(access),
 });

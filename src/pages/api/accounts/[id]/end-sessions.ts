@@ -1,0 +1,9 @@
+import { routes } from '#src/contracts/routes.ts';
+import { seeAccount } from '#src/server/access/people.ts';
+import { endpoint } from '#src/server/endpoint.ts';
+import { endAccountSessions } from '#src/server/people/accounts.ts';
+
+export const POST = endpoint(routes.endAccountSessions, {
+  sight: ({ asker, params }) => seeAccount(asker, params.id!),
+  act: ({ access }) => endAccountSessions(access),
+});
