@@ -1,6 +1,6 @@
 import { type ConfigurationSpace, configurationSpace, oneElectron } from './configuration-space.ts';
 import { CUBIC_IRREPS, CUBIC_ROTATIONS, type CubicIrrep, IRREP_DIMENSION } from './cubic-group.ts';
-import { combine, fromRows, type Matrix, within } from './matrix.ts';
+import { besideEachOther, combine, diagonal, fromRows, type Matrix, within } from './matrix.ts';
 import { quantumNumber, rangeOf, splitBy } from './subspaces.ts';
 import { symmetricEigen, symmetricEigenvalues } from './symmetric-eigen.ts';
 import { turnOfSpace } from './turns.ts';
@@ -14,7 +14,9 @@ export interface CubicBlock {
   /** Irrep of O, or of Td: no `g`. */
   irrep: CubicIrrep;
   dimension: number;
-  /** Field per unit of Δ, e above t2, centre of gravity of the orbitals at 0. */
+  /** Electrons in e of each basis state, rising: the rows are states of one configuration t2^(n−m) e^m. */
+  upper: number[];
+  /** Field per unit of Δ, e above t2, centre of gravity of the orbitals at 0; diagonal. */
   field: Matrix;
   B: Matrix;
   C: Matrix;
@@ -22,15 +24,19 @@ export interface CubicBlock {
   orbitalSquared: Matrix;
 }
 
-/** Strengths of the field and of the repulsion in one unit of energy. `delta` < 0: t2 above e. */
+/**
+ * Strengths of the field and of the repulsion in one unit of energy. `delta` < 0: t2 above e. `alpha` is Trees'
+ * correction, α·L(L + 1), 0 unless told.
+ */
 export interface Strengths {
   delta: number;
   B: number;
   C: number;
+  alpha?: number | undefined;
 }
 
-/** e at 3Δ/5, t2 at −2Δ/5, in the order of the orbitals. */
-const CUBIC_FIELD = fromRows(
+/** One electron in the cubic field per unit of Δ: e at 3Δ/5, t2 at −2Δ/5, in the order of the orbitals. */
+export const CUBIC_FIELD = fromRows(
   [0.6, 0.6, -0.4, -0.4, -0.4].map((energy, i, all) => all.map((_, j) => (i === j ? energy : 0))),
 );
 
@@ -56,11 +62,13 @@ export function blockEnergies(block: CubicBlock, strengths: Strengths): number[]
   return symmetricEigenvalues(blockMatrix(block, strengths));
 }
 
-function blockMatrix(block: CubicBlock, { delta, B, C }: Strengths): Matrix {
+/** Matrix of a block at these strengths. */
+export function blockMatrix(block: CubicBlock, { delta, B, C, alpha = 0 }: Strengths): Matrix {
   return combine([
     [delta, block.field],
     [B, block.B],
     [C, block.C],
+    [alpha, block.orbitalSquared],
   ]);
 }
 
@@ -84,19 +92,32 @@ export function blockParents(block: CubicBlock, B: number, C: number): (number |
 function build(space: ConfigurationSpace): CubicBlock[] {
   const field = oneElectron(CUBIC_FIELD, space.substitutions);
   const turns = CUBIC_ROTATIONS.map(({ orbitals }) => turnOfSpace(space, orbitals));
-  const blocks = CUBIC_IRREPS.flatMap((irrep) =>
-    splitBy(space.spinSquared, rangeOf(rowProjector(turns, irrep))).map(({ value, basis }) => ({
-      multiplicity: Math.round(2 * quantumNumber(value)) + 1,
-      irrep,
-      dimension: IRREP_DIMENSION[irrep],
-      field: within(basis, field),
-      B: within(basis, space.B),
-      C: within(basis, space.C),
-      orbitalSquared: within(basis, space.orbitalSquared),
-    })),
-  );
+  const blocks = CUBIC_IRREPS.flatMap((irrep) => {
+    // Configuration by configuration, so that the field is diagonal and the shares of an eigenvector are their weights.
+    const parts = splitBy(field, rangeOf(rowProjector(turns, irrep))).flatMap(({ value, basis }) =>
+      splitBy(space.spinSquared, basis).map((part) => ({ ...part, upper: Math.round(value + 0.4 * space.n) })),
+    );
+    const spins = [...new Set(parts.map(({ value }) => multiplicityOf(value)))];
+    return spins.map((multiplicity) => {
+      const own = parts.filter(({ value }) => multiplicityOf(value) === multiplicity);
+      const basis = besideEachOther(own.map((part) => part.basis));
+      const upper = own.flatMap((part) => Array.from({ length: part.basis.columns }, () => part.upper));
+      return {
+        multiplicity,
+        irrep,
+        dimension: IRREP_DIMENSION[irrep],
+        upper,
+        field: diagonal(upper.map((electrons) => electrons - 0.4 * space.n)),
+        B: within(basis, space.B),
+        C: within(basis, space.C),
+        orbitalSquared: within(basis, space.orbitalSquared),
+      };
+    });
+  });
   return blocks.sort((a, b) => b.multiplicity - a.multiplicity);
 }
+
+const multiplicityOf = (spinSquared: number): number => Math.round(2 * quantumNumber(spinSquared)) + 1;
 
 /** (d/24) Σ_R D(R)₁₁ R over the rotations R: the states that transform as the chosen row of the irrep. */
 function rowProjector(turns: readonly Matrix[], irrep: CubicIrrep): Matrix {

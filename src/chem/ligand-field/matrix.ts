@@ -68,3 +68,25 @@ export function pickColumns(a: Matrix, indices: readonly number[]): Matrix {
   }
   return picked;
 }
+
+/** Matrices of as many rows each, as one. */
+export function besideEachOther(parts: readonly Matrix[]): Matrix {
+  const joined = zeros(
+    parts[0]!.rows,
+    parts.reduce((sum, { columns }) => sum + columns, 0),
+  );
+  let at = 0;
+  for (const { rows, columns, data } of parts) {
+    for (let i = 0; i < rows; i++) joined.data.set(data.subarray(i * columns, (i + 1) * columns), i * joined.columns + at);
+    at += columns;
+  }
+  return joined;
+}
+
+export function diagonal(values: readonly number[]): Matrix {
+  const matrix = zeros(values.length);
+  values.forEach((value, i) => {
+    matrix.data[i * values.length + i] = value;
+  });
+  return matrix;
+}
