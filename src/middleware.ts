@@ -2,6 +2,7 @@ import { defineMiddleware } from 'astro:middleware';
 import { randomUUID } from 'node:crypto';
 import { getSession } from 'auth-astro/server';
 import { type Asker, askerOfSession, askerOfToken } from './server/access/asker.ts';
+import { withCaller } from './server/accounts/caller.ts';
 import { problem, tooLarge, toProblem } from './server/http.ts';
 import { log } from './server/log.ts';
 import { servedMethods } from './server/served-methods.ts';
@@ -102,6 +103,11 @@ function refuseAuth({ method, headers }: Request, path: string): Response | null
   return Number(length) > AUTH_LIMIT ? toProblem(tooLarge(AUTH_LIMIT), '') : null;
 }
 
+/** What a sign-in is told of the request. */
+function callerOf(address: string, asker: Asker | null) {
+  return { address, session: asker?.sessionId ? { id: asker.sessionId, accountId: asker.accountId } : null };
+}
+
 export const onRequest = defineMiddleware(async (context, next) => {
   const { request, url, locals, cookies } = context;
   const started = performance.now();
@@ -122,9 +128,11 @@ export const onRequest = defineMiddleware(async (context, next) => {
     if (UNSAFE.has(request.method) && byCookie && (locals.asker || !isApi) && !fromOwnPage(request))
       return problem(403, 'A write by cookie must come from a page of this registry');
     if (!isApi) return next();
-    const refused = url.pathname.startsWith(AUTH) ? refuseAuth(request, url.pathname.slice(AUTH.length)) : null;
+    const isAuth = url.pathname.startsWith(AUTH);
+    const refused = isAuth ? refuseAuth(request, url.pathname.slice(AUTH.length)) : null;
+    const serve = () => (isAuth ? withCaller(callerOf(context.clientAddress, locals.asker), next) : next());
     try {
-      return refused ?? asProblem(await next(), url.pathname);
+      return refused ?? asProblem(await serve(), url.pathname);
     } catch (error) {
       return toProblem(error, requestId);
     }

@@ -4,7 +4,7 @@ import { Email, Instant, LabRef, Name } from './common.ts';
 /** Fewest characters (code points) of a password, the only factor of many accounts (NIST SP 800-63B-4, §3.1.1.2). */
 export const SHORTEST_PASSWORD = 15;
 /** Most UTF-8 bytes of a password: far above the 64 characters that must be allowed, and no work for a hash. */
-const LONGEST_PASSWORD_BYTES = 1000;
+export const LONGEST_PASSWORD_BYTES = 1000;
 
 const codePoints = (text: string) => [...text.normalize('NFKC')].length;
 const bytes = (text: string) => new TextEncoder().encode(text).length;

@@ -1,16 +1,10 @@
 import { CredentialsSignin } from '@auth/core/errors';
 import Credentials from '@auth/core/providers/credentials';
 import { defineConfig } from 'auth-astro';
-import { eq } from 'drizzle-orm';
-import { accounts } from '../db/schema/index.ts';
-import { database } from './database.ts';
-import { HttpError } from './http.ts';
+import { endedSignIn, SignInRefused, signIn } from './accounts/sign-in.ts';
 import { log } from './log.ts';
-import { passwordFits } from './passwords.ts';
-import { countAttempt } from './rate-limit.ts';
-import { beginSession, SESSION_LIFE_MS } from './sessions.ts';
+import { SESSION_LIFE_MS } from './sessions.ts';
 import { settings } from './settings.ts';
-import { record } from './trail.ts';
 
 declare module '@auth/core/types' {
   interface User {
@@ -21,35 +15,22 @@ declare module '@auth/core/types' {
   }
 }
 
-class TooMany extends CredentialsSignin {
-  override code = 'too-many';
+/** A refusal whose code the sign-in page reads from its address. */
+class Refusal extends CredentialsSignin {
+  constructor(code: string) {
+    super();
+    this.code = code;
+  }
 }
 
-const QUARTER_HOUR = 15 * 60 * 1000; // ms
-
 async function authorize(given: Partial<Record<string, unknown>>, request: Request) {
-  const email = String(given.email ?? '')
-    .trim()
-    .toLowerCase();
-  const password = String(given.password ?? '');
-  if (!email || !password || password.length > 1000) return null;
+  const text = (field: string) => (typeof given[field] === 'string' ? given[field] : '');
+  const typed = { email: text('email'), password: text('password'), code: text('code'), passkey: text('passkey') };
   try {
-    await countAttempt(`sign-in:${email}`, { most: 10, windowMs: QUARTER_HOUR });
+    return (await signIn(typed, request.headers.get('user-agent'))) || null;
   } catch (error) {
-    if (error instanceof HttpError) throw new TooMany();
-    throw error;
+    throw error instanceof SignInRefused ? new Refusal(error.code) : error;
   }
-  const { db, write } = await database();
-  const [account] = await db.select().from(accounts).where(eq(accounts.email, email));
-  // The same work for an unknown address as for a wrong password.
-  const fits = await passwordFits(account?.passwordHash ?? null, password);
-  if (!account || !fits || account.state !== 'active') return null;
-  const sessionId = await write(async (tx) => {
-    await record(tx, { accountId: account.id }, { action: 'sign-in', subjectType: 'account', subjectId: account.id });
-    const userAgent = request.headers.get('user-agent');
-    return beginSession(tx, { accountId: account.id, secondFactor: false, userAgent, address: null });
-  });
-  return { id: account.id, email: account.email, name: account.name, sessionId };
 }
 
 export default defineConfig({
@@ -57,7 +38,7 @@ export default defineConfig({
   trustHost: true,
   session: { strategy: 'jwt', maxAge: SESSION_LIFE_MS / 1000 },
   pages: { signIn: '/signin', error: '/signin' },
-  providers: [Credentials({ credentials: { email: {}, password: {} }, authorize })],
+  providers: [Credentials({ credentials: { email: {}, password: {}, code: {}, passkey: {} }, authorize })],
   callbacks: {
     jwt({ token, user }) {
       if (user) {
@@ -71,5 +52,18 @@ export default defineConfig({
       return session;
     },
   },
-  logger: { error: (error) => log.warn({ reason: error.name }, 'sign-in refused'), warn: () => {}, debug: () => {} },
+  events: {
+    async signOut(message) {
+      const token = 'token' in message ? message.token : null;
+      if (token) await endedSignIn(String(token.sub ?? ''), String(token.sid ?? ''));
+    },
+  },
+  logger: {
+    // A refused sign-in was told by the one who refused it, with its reason.
+    error: (error) => {
+      if (!(error instanceof CredentialsSignin)) log.warn({ reason: error.name }, 'the sign-in library refused');
+    },
+    warn: () => {},
+    debug: () => {},
+  },
 });
