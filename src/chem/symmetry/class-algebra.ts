@@ -1,7 +1,4 @@
-import type { Matrix3 } from '../geometry/vector.ts';
-import { multiply } from '../geometry/vector.ts';
 import { eigenvectors } from './eigenvectors.ts';
-import { matrixKey } from './matrices.ts';
 
 /** A finite set of operations with its multiplication, classes and real irreducible characters. */
 export interface ClassAlgebra {
@@ -16,22 +13,34 @@ export interface ClassAlgebra {
 }
 
 /**
- * Classes and characters of a finite group given by all its matrices.
+ * Multiplication table of a closed set: `table[a][b]` is the index of a·b.
+ *
+ * @param key - the same text for equal elements, and for no others
+ */
+export function multiplicationTable<T>(
+  elements: readonly T[],
+  multiply: (a: T, b: T) => T,
+  key: (element: T) => string,
+): number[][] {
+  const index = new Map(elements.map((element, i) => [key(element), i]));
+  return elements.map((a) => elements.map((b) => index.get(key(multiply(a, b)))!));
+}
+
+/**
+ * Classes and characters of a finite group given by its multiplication table.
  *
  * The sums over classes joined with their inverses commute, and in a basis of unit length each multiplies by a
  * symmetric matrix; their common eigenvectors are the characters (Burnside's method; J. D. Dixon, Numer. Math. 10
  * (1967) 446, from memory). One weighted sum of them, the weights having no rational relation, parts all of them.
  *
- * @param operations - a closed set, the identity first
+ * @param times - from `multiplicationTable`, the identity first
  */
-export function classAlgebra(operations: readonly Matrix3[]): ClassAlgebra {
-  const index = new Map(operations.map((m, i) => [matrixKey(m), i]));
-  const times = operations.map((a) => operations.map((b) => index.get(matrixKey(multiply(a, b)))!));
+export function classAlgebra(times: readonly (readonly number[])[]): ClassAlgebra {
   const inverse = times.map((row) => row.indexOf(0));
 
-  const classOf = operations.map(() => -1);
+  const classOf = times.map(() => -1);
   const classes: number[][] = [];
-  operations.forEach((_, g) => {
+  times.forEach((_, g) => {
     if (classOf[g]! >= 0) return;
     const members = [...new Set(times.map((row, h) => times[row[g]!]![inverse[h]!]!))].sort((a, b) => a - b);
     for (const member of members) classOf[member] = classes.length;
@@ -48,11 +57,12 @@ export function classAlgebra(operations: readonly Matrix3[]): ClassAlgebra {
   const squares = powerClass(2);
   const characters = eigenvectors(weightedSum(joined, times, inverse)).map((vector) => {
     const raw = classes.map((_, c) => vector[joined.of[c]!]! / Math.sqrt(joined.sizes[joined.of[c]!]!));
-    const scale = Math.sqrt(operations.length) * Math.sign(raw[0]!);
+    const scale = Math.sqrt(times.length) * Math.sign(raw[0]!);
     const real = raw.map((x) => x * scale);
-    // Frobenius and Schur: the mean of χ(g²) is 1 for a real irrep, 0 for each of a complex pair.
-    const mean = classes.reduce((sum, { length }, c) => sum + length * real[squares[c]!]!, 0) / operations.length;
-    return real.map((x) => exactCosine(mean > 0.5 ? x : x * Math.SQRT2));
+    // Frobenius and Schur: the mean of χ(g²) is 1 for a real irrep, −1 for one with real characters alone, 0 for each of
+    // a complex pair.
+    const mean = classes.reduce((sum, { length }, c) => sum + length * real[squares[c]!]!, 0) / times.length;
+    return real.map((x) => exactCosine(Math.abs(mean) > 0.5 ? x : x * Math.SQRT2));
   });
   return { classes, classOf, powerClass, characters };
 }
@@ -81,8 +91,8 @@ function joinInverses(
 
 function weightedSum(
   { sizes, ofOperation, representatives }: JoinedClasses,
-  times: number[][],
-  inverse: number[],
+  times: readonly (readonly number[])[],
+  inverse: readonly number[],
 ): number[][] {
   const weight = (j: number): number => Math.sqrt(primes[j]!) / sizes[j]!;
   const sum = sizes.map(() => sizes.map(() => 0));
@@ -95,13 +105,13 @@ function weightedSum(
   return sum;
 }
 
-const primes = [2, 3, 5, 7, 11, 13, 17, 19, 23, 29, 31, 37, 41, 43, 47, 53, 59, 61];
+const primes = [2, 3, 5, 7, 11, 13, 17, 19, 23, 29, 31, 37, 41, 43, 47, 53, 59, 61, 67, 71, 73, 79];
 
 /** The integer or the 2 cos(2πk/m) that a computed character stands for. */
 export function exactCosine(value: number): number {
   const near = Math.round(value);
   if (Math.abs(value - near) < 1e-6) return near || 0;
-  for (const m of [10, 12, 14, 16]) {
+  for (const m of [10, 12, 14, 16, 20, 24, 28, 32]) {
     for (let k = 1; k < m; k++) {
       const cosine = 2 * Math.cos((2 * Math.PI * k) / m);
       if (Math.abs(value - cosine) < 1e-6) return cosine;

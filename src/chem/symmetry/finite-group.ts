@@ -1,5 +1,5 @@
-import type { Matrix3 } from '../geometry/vector.ts';
-import { classAlgebra } from './class-algebra.ts';
+import { type Matrix3, multiply } from '../geometry/vector.ts';
+import { classAlgebra, multiplicationTable } from './class-algebra.ts';
 import { labelClasses } from './class-labels.ts';
 import { sortFunctions } from './functions.ts';
 import {
@@ -53,7 +53,7 @@ export function finiteGroup(symbol: string): FiniteGroup | null {
 function generate(symbol: string): FiniteGroup {
   const parts = symbolParts(symbol);
   const operations = closure(generatorsOf(parts));
-  const algebra = classAlgebra(operations);
+  const algebra = classAlgebra(multiplicationTable(operations, multiply, matrixKey));
   const labelled = labelClasses(parts, operations, algebra.classes);
   const place = algebra.classes.map((members) => labelled.findIndex((c) => c.members === members));
   const indices = new Map(operations.map((m, g) => [matrixKey(m), place[algebra.classOf[g]!]!]));
