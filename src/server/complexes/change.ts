@@ -1,4 +1,4 @@
-import { and, eq, inArray, sql } from 'drizzle-orm';
+import { and, eq, inArray, or, sql } from 'drizzle-orm';
 import type { ComplexPatch } from '../../contracts/complexes.ts';
 import { isUniqueViolation, type Tx } from '../../db/client.ts';
 import {
@@ -7,6 +7,7 @@ import {
   complexes,
   complexLigands,
   ligandSites,
+  mergeTasks,
   preparationComponents,
   spectra,
 } from '../../db/schema/index.ts';
@@ -14,6 +15,7 @@ import { type ComplexChange, leads } from '../access/records.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { nowIso } from '../ids.ts';
+import { notifyMentions } from '../mentions/notify.ts';
 import { record } from '../trail.ts';
 import { deriveIdentity } from './derive-identity.ts';
 import { duplicate, duplicateInSight, identityColumns, insertParts, noteHiddenDuplicates } from './register.ts';
@@ -98,6 +100,7 @@ export async function changeComplex(access: ComplexChange, patch: ComplexPatch):
       if (changed.length === 0) throw new HttpError(412, 'Somebody changed it meanwhile: read it again and repeat');
 
       let reopened = 0;
+      let { identityKey } = complex;
       if (IDENTITY.some((name) => name in patch)) {
         const present = await presentChoices(tx, access, patch);
         const wanted = Object.fromEntries(IDENTITY.filter((name) => name in patch).map((name) => [name, patch[name]]));
@@ -109,6 +112,7 @@ export async function changeComplex(access: ComplexChange, patch: ComplexPatch):
           ...wanted,
           chirality: patch.chirality ?? undefined,
         });
+        identityKey = identity.key;
         if (identity.key !== complex.identityKey) {
           const twin = await duplicateInSight(tx, asker, identity.key, complex.id);
           if (twin) throw duplicate(twin);
@@ -127,6 +131,14 @@ export async function changeComplex(access: ComplexChange, patch: ComplexPatch):
         ...(state === undefined ? {} : { state, withdrawnReason: state === 'withdrawn' ? withdrawnReason! : null }),
       };
       if (Object.keys(plain).length > 0) await tx.update(complexes).set(plain).where(eq(complexes.id, complex.id));
+      // A draft may have got a twin out of its maker's sight since it was begun.
+      if (complex.state === 'draft' && state === 'registered')
+        await noteHiddenDuplicates(tx, asker, complex.id, identityKey);
+      // Who sees it only from now on hears now of a note that named them before.
+      const isWider =
+        (state ?? complex.state) !== complex.state || (visibility ?? complex.visibility) !== complex.visibility;
+      const [text, before] = [notes === undefined ? complex.notes : notes, isWider ? null : complex.notes];
+      await notifyMentions(tx, asker, { text, before, subject: { type: 'complex', id: complex.id } });
       const action = state && state !== complex.state ? (state === 'withdrawn' ? 'withdraw' : 'register') : 'change';
       await record(tx, asker, {
         action,
@@ -158,6 +170,7 @@ export async function deleteDraft({ complex, asker }: ComplexChange): Promise<vo
       .limit(1);
     if (spectrum || part) throw new HttpError(409, 'It has preparations or spectra: delete or move those first');
     await deleteParts(tx, complex.id);
+    await tx.delete(mergeTasks).where(or(eq(mergeTasks.firstId, complex.id), eq(mergeTasks.secondId, complex.id)));
     await tx.delete(complexes).where(eq(complexes.id, complex.id));
     await record(tx, asker, {
       action: 'delete-draft',

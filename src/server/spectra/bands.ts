@@ -5,6 +5,7 @@ import type { SpectrumPropose } from '#src/server/access/records.ts';
 import { database } from '#src/server/database.ts';
 import { HttpError } from '#src/server/http.ts';
 import { newId } from '#src/server/ids.ts';
+import { notifyMentions } from '#src/server/mentions/notify.ts';
 import { record } from '#src/server/trail.ts';
 import { takeVersion } from './change.ts';
 import { bandContext, deriveBand } from './quantities.ts';
@@ -111,6 +112,7 @@ export async function replaceBands({ asker, complex, spectrum }: SpectrumPropose
           .set({ ...row, version: before.version + 1 })
           .where(eq(bands.id, id));
       else await tx.insert(bands).values({ id, spectrumId: spectrum.id, ...row });
+      await notifyMentions(tx, asker, { text: now.reason, before: before?.reason, subject: { type: 'band', id } });
     }
     await takeVersion(tx, spectrum);
     await record(tx, asker, {

@@ -5,6 +5,7 @@ import type { BandJudge } from '#src/server/access/records.ts';
 import { database } from '#src/server/database.ts';
 import { HttpError } from '#src/server/http.ts';
 import { nowIso } from '#src/server/ids.ts';
+import { notifyDispute, notifyMentions } from '#src/server/mentions/notify.ts';
 import { record } from '#src/server/trail.ts';
 import { describeJudged } from './band-record.ts';
 import { refuse } from './refuse.ts';
@@ -51,6 +52,9 @@ export async function judgeBand(
       subjectId: band.id,
       detail: { spectrum: spectrum.id, class: band.class, ...(reason ? { reason } : {}) },
     });
+    const except = verdict === 'disputed' ? band.proposedBy : undefined;
+    if (except && reason) await notifyDispute(tx, asker, { band, reason });
+    await notifyMentions(tx, asker, { text: reason, subject: { type: 'band', id: band.id, judgement: true }, except });
   });
   return describeJudged(access);
 }
