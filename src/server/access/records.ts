@@ -1,6 +1,7 @@
 import { and, eq, type SQL } from 'drizzle-orm';
 import { normaliseAccession } from '../../contracts/accession.ts';
 import { bands, complexes, labs, preparations, spectra } from '../../db/schema/index.ts';
+import { livingAccession } from '../complexes/alias.ts';
 import { database } from '../database.ts';
 import { HttpError, notInSight } from '../http.ts';
 import type { Asker } from './asker.ts';
@@ -16,6 +17,8 @@ export interface Access<What extends string> {
 }
 export interface ComplexAccess extends Access<'see' | 'change'> {
   readonly complex: typeof complexes.$inferSelect;
+  /** The accession that was asked for, where that record was merged into this one. */
+  readonly alias: string | null;
 }
 export interface ComplexChange extends ComplexAccess {
   readonly [proof]: 'change';
@@ -78,10 +81,10 @@ async function findComplex(condition: SQL | undefined) {
   return row;
 }
 
-/** A complex in sight, by its accession. @throws {HttpError} 404 */
+/** A complex in sight, by its accession or by that of a record merged into it. @throws {HttpError} 404 */
 export async function seeComplex(asker: Asker, accession: string): Promise<ComplexAccess> {
-  const complex = await findComplex(and(eq(complexes.accession, accession), complexSight(asker)));
-  return grant({ asker, complex });
+  const complex = await findComplex(and(eq(complexes.accession, livingAccession(accession)), complexSight(asker)));
+  return grant({ asker, complex, alias: complex.accession === accession ? null : accession });
 }
 
 /** Its maker may change a draft as long as they work in the lab; a registered one its lab's leads and the steward. */
@@ -92,10 +95,10 @@ export const canChangeComplex = (asker: Asker, complex: typeof complexes.$inferS
 
 /** @throws {HttpError} 404 not in sight, 403 seen but not to be changed by this asker */
 export async function mayChangeComplex(asker: Asker, accession: string): Promise<ComplexChange> {
-  const { complex } = await seeComplex(asker, accession);
+  const { complex, alias } = await seeComplex(asker, accession);
   if (!canChangeComplex(asker, complex))
     throw new HttpError(403, 'A lead of the home lab or a steward may change a registered complex');
-  return grant({ asker, complex });
+  return grant({ asker, complex, alias });
 }
 
 /** A preparation in sight. @throws {HttpError} 404 */

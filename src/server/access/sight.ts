@@ -22,26 +22,43 @@ function memberSight(asker: Asker, t: typeof complexes | typeof preparations | t
   return any(all(inArray(t.state, ['registered', 'withdrawn']), shared), all(eq(t.state, 'draft'), draft));
 }
 
-/** Items of the folios granted to a guest. */
-const granted = (asker: Asker, folioIds = asker.grants.map((g) => g.folioId)): SQL =>
-  folioIds.length
-    ? sql`${complexes.id} in (select ${folioItems.complexId} from ${folioItems} where ${inArray(folioItems.folioId, folioIds)})`
-    : never;
+/** Items of the folios granted to a guest, as far as a member of the folio's lab may share them. */
+function granted(grants: Asker['grants']): SQL {
+  const inFolios = (some: Asker['grants']) =>
+    sql`${complexes.id} in (select ${folioItems.complexId} from ${folioItems} where ${inArray(
+      folioItems.folioId,
+      some.map((g) => g.folioId),
+    )})`;
+  if (grants.length === 0) return never;
+  const labIds = [...new Set(grants.map((g) => g.labId))];
+  return any(
+    all(eq(complexes.visibility, 'programme'), inFolios(grants)),
+    ...labIds.map((labId) =>
+      all(
+        eq(complexes.visibility, 'lab'),
+        eq(complexes.labId, labId),
+        inFolios(grants.filter((g) => g.labId === labId)),
+      ),
+    ),
+  );
+}
 
 const openComplex = (): SQL =>
   all(eq(complexes.state, 'registered'), any(isNull(complexes.embargoUntil), lte(complexes.embargoUntil, nowIso())));
 
+/** Complexes that live: one that was merged away is nowhere to be seen, its accession leads to where it lives on. */
+const living = (): SQL => isNull(complexes.mergedInto);
+
 /** Complexes in the asker's sight. A query that uses it has `complex` in its FROM. */
 export function complexSight(asker: Asker): SQL {
-  const asGuest = all(openComplex(), granted(asker));
-  return isMember(asker) ? any(memberSight(asker, complexes), asGuest) : asGuest;
+  const asGuest = all(openComplex(), granted(asker.grants));
+  return all(living(), isMember(asker) ? any(memberSight(asker, complexes), asGuest) : asGuest);
 }
 
 /** Complexes of which the asker may take files away: every member's, and a guest's granted at download level. */
 export function complexDownload(asker: Asker): SQL {
-  const folioIds = asker.grants.filter((g) => g.level === 'download').map((g) => g.folioId);
-  const asGuest = all(openComplex(), granted(asker, folioIds));
-  return isMember(asker) ? any(memberSight(asker, complexes), asGuest) : asGuest;
+  const asGuest = all(openComplex(), granted(asker.grants.filter((g) => g.level === 'download')));
+  return all(living(), isMember(asker) ? any(memberSight(asker, complexes), asGuest) : asGuest);
 }
 
 /** Preparations in sight, of complexes in sight. A query that uses it has both tables in its FROM. */

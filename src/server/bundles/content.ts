@@ -16,6 +16,7 @@ import {
 import type { Asker } from '../access/asker.ts';
 import { guestLevel } from '../access/sharing.ts';
 import { bandSight, complexDownload, spectrumDownload } from '../access/sight.ts';
+import { livingAccessions } from '../complexes/alias.ts';
 import { database } from '../database.ts';
 
 type Rows<T extends { $inferSelect: unknown }> = T['$inferSelect'][];
@@ -40,10 +41,14 @@ export interface Content {
 const among = (column: SQL, ids: readonly string[]) =>
   sql`${column} in (select value from json_each(${JSON.stringify(ids)}))`;
 
-/** A guest's bundle of one folio is judged by the grant of that folio alone, whatever else was granted. */
+/**
+ * As whom a bundle is judged: grants to read alone bring nothing into a file, and a guest's bundle of one folio is
+ * judged by the grant of that folio, whatever else was granted.
+ */
 export function narrowed(asker: Asker, folio: typeof folios.$inferSelect | null): Asker {
-  if (!folio || guestLevel(asker, folio) === null) return asker;
-  return { ...asker, grants: asker.grants.filter((grant) => grant.folioId === folio.id) };
+  const grants = asker.grants.filter((grant) => grant.level === 'download');
+  if (!folio || guestLevel(asker, folio) === null) return { ...asker, grants };
+  return { ...asker, grants: grants.filter((grant) => grant.folioId === folio.id) };
 }
 
 /** All that this asker may take away of what was ordered, and nothing else. */
@@ -129,10 +134,12 @@ async function complexesOf(asker: Asker, order: Order) {
       .innerJoin(complexes, eq(complexes.id, folioItems.complexId))
       .where(and(eq(folioItems.folioId, order.folioId), eq(complexes.state, 'registered'), complexDownload(asker)))
       .orderBy(asc(complexes.accession));
+  const named = order.complexes ?? [];
+  const accessions = named.map(await livingAccessions(db, named));
   const rows = await db
     .select({ complex: complexes })
     .from(complexes)
-    .where(and(among(sql`${complexes.accession}`, order.complexes ?? []), complexDownload(asker)))
+    .where(and(among(sql`${complexes.accession}`, accessions), complexDownload(asker)))
     .orderBy(asc(complexes.accession));
   return rows.map(({ complex }) => ({ complex, listed: null }));
 }
@@ -159,6 +166,10 @@ export interface Held {
   bands: string[];
 }
 
+/** Records by id, those merged since as what they live on as. */
+const livesIn = (ids: readonly string[]) =>
+  sql`${complexes.mergedInto} is null and (${among(sql`${complexes.id}`, ids)} or ${complexes.accession} in (select merged.merged_into from ${complexes} merged where ${among(sql`merged.id`, ids)}))`;
+
 /** Whether the asker may still take all of what a bundle holds. What was deleted since is no matter of access. */
 export async function stillOpen(asker: Asker, order: Order, held: Held): Promise<boolean> {
   const { db } = await database();
@@ -171,7 +182,7 @@ export async function stillOpen(asker: Asker, order: Order, held: Held): Promise
     db
       .select({ count })
       .from(complexes)
-      .where(and(among(sql`${complexes.id}`, held.complexes), shut(complexDownload(judged)))),
+      .where(and(livesIn(held.complexes), shut(complexDownload(judged)))),
     db
       .select({ count })
       .from(spectra)

@@ -1,4 +1,4 @@
-import { and, eq, inArray, isNull, type SQL, sql } from 'drizzle-orm';
+import { and, eq, inArray, type SQL, sql } from 'drizzle-orm';
 import type { ComplexFilters } from '../../contracts/complexes.ts';
 import { bands, centres, complexes, complexLigands, folioItems, spectra } from '../../db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
@@ -65,5 +65,5 @@ function folioInSight(asker: Asker): SQL {
 /** All of a query's conditions but one, with the asker's sight. */
 export function whereOf(asker: Asker, conditions: Conditions, without?: keyof Conditions): SQL {
   const kept = Object.entries(conditions).filter(([name]) => name !== without);
-  return and(complexSight(asker), isNull(complexes.mergedInto), ...kept.map(([, condition]) => condition))!;
+  return and(complexSight(asker), ...kept.map(([, condition]) => condition))!;
 }

@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, isNull, ne } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, ne, or } from 'drizzle-orm';
 import type { ComplexRecord } from '../../contracts/complexes.ts';
 import { accounts, complexes, preparations, trail } from '../../db/schema/index.ts';
 import { isMember } from '../access/asker.ts';
@@ -13,7 +13,7 @@ import { summaries } from './summary.ts';
 
 /** A complex in full, as this asker gets it. */
 export async function complexRecord(access: ComplexAccess): Promise<ComplexRecord> {
-  const { asker, complex } = access;
+  const { asker, complex, alias } = access;
   const { db } = await database();
   const [[summary], prepared, siblings, history, [downloadable], doubts] = await Promise.all([
     summaries(asker, [complex]),
@@ -34,6 +34,7 @@ export async function complexRecord(access: ComplexAccess): Promise<ComplexRecor
   const member = isMember(asker);
   return {
     ...summary!,
+    ...(alias ? { mergedInto: complex.accession } : {}),
     notes: member ? complex.notes : null,
     withdrawnReason: complex.withdrawnReason,
     cautions: formulaCautions(complex.formula, complex.answers),
@@ -66,7 +67,6 @@ async function siblingsOf({ asker, complex }: ComplexAccess): Promise<ComplexRec
         eq(complexes.hill, complex.hill),
         eq(complexes.charge, complex.charge),
         ne(complexes.id, complex.id),
-        isNull(complexes.mergedInto),
         complexSight(asker),
       ),
     )
@@ -77,14 +77,21 @@ async function siblingsOf({ asker, complex }: ComplexAccess): Promise<ComplexRec
     .map(({ accession, descriptor, chirality }) => ({ accession, descriptor, chirality }));
 }
 
-/** What happened to the record. Guests see no names and no inner remarks: only that it was registered or changed, and when. */
+/**
+ * What happened to the record. Guests see no names and no inner remarks: only that it was registered or changed, and
+ * when; that another record went into it is nothing of theirs. What happened to that other record the steward alone
+ * sees, since it may have been one lab's own.
+ */
 async function historyOf({ asker, complex }: ComplexAccess): Promise<ComplexRecord['history']> {
   const { db } = await database();
+  const own = eq(trail.subjectId, complex.id);
+  const mergedHere = db.select({ id: complexes.id }).from(complexes).where(eq(complexes.mergedInto, complex.accession));
+  const subject = asker.steward ? or(own, inArray(trail.subjectId, mergedHere)) : own;
   const rows = await db
     .select({ at: trail.at, action: trail.action, detail: trail.detail, who: accounts.name })
     .from(trail)
     .leftJoin(accounts, eq(accounts.id, trail.actorId))
-    .where(and(eq(trail.subjectType, 'complex'), eq(trail.subjectId, complex.id)))
+    .where(and(eq(trail.subjectType, 'complex'), subject, isMember(asker) ? undefined : ne(trail.action, 'take-in')))
     .orderBy(desc(trail.seq))
     .limit(100);
   return isMember(asker) ? rows : rows.map(({ at, action }) => ({ at, action, who: null, detail: {} }));

@@ -1,4 +1,4 @@
-import { and, eq, isNull, ne, not } from 'drizzle-orm';
+import { and, eq, isNull, ne, not, or } from 'drizzle-orm';
 import type { ComplexInput } from '../../contracts/complexes.ts';
 import { isUniqueViolation, type Tx } from '../../db/client.ts';
 import { centres, complexes, complexLigands, ligandSites, mergeTasks } from '../../db/schema/index.ts';
@@ -9,6 +9,7 @@ import { nextAccession } from '../accession.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { newId, nowIso } from '../ids.ts';
+import { notifyMentions } from '../mentions/notify.ts';
 import { record } from '../trail.ts';
 import { deriveIdentity, groundTermOf, type Identity } from './derive-identity.ts';
 
@@ -108,14 +109,7 @@ export async function duplicateInSight(tx: Tx, asker: Asker, key: string, except
   const [found] = await tx
     .select({ accession: complexes.accession })
     .from(complexes)
-    .where(
-      and(
-        eq(complexes.identityKey, key),
-        isNull(complexes.mergedInto),
-        complexSight(asker),
-        except ? ne(complexes.id, except) : undefined,
-      ),
-    )
+    .where(and(eq(complexes.identityKey, key), complexSight(asker), except ? ne(complexes.id, except) : undefined))
     .limit(1);
   return found?.accession ?? null;
 }
@@ -133,11 +127,24 @@ export async function noteHiddenDuplicates(tx: Tx, asker: Asker, complexId: stri
         eq(complexes.identityKey, key),
         ne(complexes.id, complexId),
         eq(complexes.state, 'registered'),
+        isNull(complexes.mergedInto),
         not(complexSight(asker)),
       ),
     );
-  for (const { id } of hidden)
-    await tx.insert(mergeTasks).values({ id: newId(), firstId: id, secondId: complexId, createdAt: nowIso() });
+  for (const { id } of hidden) {
+    const [known] = await tx
+      .select({ id: mergeTasks.id })
+      .from(mergeTasks)
+      .where(
+        or(
+          and(eq(mergeTasks.firstId, id), eq(mergeTasks.secondId, complexId)),
+          and(eq(mergeTasks.firstId, complexId), eq(mergeTasks.secondId, id)),
+        ),
+      )
+      .limit(1);
+    if (!known)
+      await tx.insert(mergeTasks).values({ id: newId(), firstId: id, secondId: complexId, createdAt: nowIso() });
+  }
 }
 
 /**
@@ -181,6 +188,7 @@ export async function registerComplex(asker: Asker, input: ComplexInput): Promis
         subjectId: id,
         detail: { accession, typed: input.formula },
       });
+      await notifyMentions(tx, asker, { text: input.notes, subject: { type: 'complex', id } });
       return accession;
     });
   } catch (error) {

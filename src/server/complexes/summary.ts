@@ -104,7 +104,6 @@ export async function summaries(asker: Asker, rows: readonly ComplexRow[]): Prom
       colour: own.findLast((spectrum) => spectrum.colour !== null)?.colour ?? null,
       visibility: row.visibility,
       embargoUntil: row.embargoUntil,
-      ...(row.mergedInto ? { mergedInto: row.mergedInto } : {}),
       updatedAt: row.updatedAt,
     };
   });

@@ -4,6 +4,7 @@ import type { Tx } from '#src/db/client.ts';
 import { complexes, folioItems, spectra } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
 import { complexSight, spectrumSight } from '../access/sight.ts';
+import { livingAccessions } from '../complexes/alias.ts';
 import { HttpError } from '../http.ts';
 
 /** What one was merely granted by others is not one's own to pass on. */
@@ -18,6 +19,10 @@ type Item = Pick<typeof folioItems.$inferInsert, 'complexId' | 'spectra'>;
  */
 export async function resolveItems(tx: Tx, asker: Asker, items: FolioItem[], pointer: string): Promise<Item[]> {
   const member = withoutGrants(asker);
+  const livesAs = await livingAccessions(
+    tx,
+    items.map((item) => item.accession),
+  );
   const found = await tx
     .select({ id: complexes.id, accession: complexes.accession })
     .from(complexes)
@@ -25,7 +30,7 @@ export async function resolveItems(tx: Tx, asker: Asker, items: FolioItem[], poi
       and(
         inJson(
           complexes.accession,
-          items.map((item) => item.accession),
+          items.map((item) => livesAs(item.accession)),
         ),
         complexSight(member),
       ),
@@ -42,7 +47,7 @@ export async function resolveItems(tx: Tx, asker: Asker, items: FolioItem[], poi
   const errors: { pointer: string; detail: string }[] = [];
   const taken = new Set<string>();
   const rows = items.flatMap(({ accession, spectra: chosen }, i): Item[] => {
-    const complexId = idOf.get(accession);
+    const complexId = idOf.get(livesAs(accession));
     if (!complexId) errors.push({ pointer: `${pointer}/${i}/accession`, detail: `${accession} is not in your sight` });
     else if (taken.has(complexId)) errors.push({ pointer: `${pointer}/${i}`, detail: `${accession} stands twice` });
     if (!complexId) return [];

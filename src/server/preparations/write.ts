@@ -1,4 +1,4 @@
-import { and, eq, isNull, sql } from 'drizzle-orm';
+import { and, eq, sql } from 'drizzle-orm';
 import { readFormula } from '../../chem/formula/index.ts';
 import type { PreparationInput, PreparationPatch } from '../../contracts/complexes.ts';
 import type { Tx } from '../../db/client.ts';
@@ -10,6 +10,7 @@ import { connectivityOf } from '../complexes/derive-identity.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { newId, nowIso } from '../ids.ts';
+import { notifyMentions, textBefore } from '../mentions/notify.ts';
 import { record } from '../trail.ts';
 
 interface FormulaUnit {
@@ -54,7 +55,6 @@ async function formulaUnit(
       .where(
         and(
           sql`${complexes.identityKey} like ${`${other.identity.replace(/[\\%_]/g, '\\$&')} / %`} escape '\\'`,
-          isNull(complexes.mergedInto),
           complexSight(asker),
         ),
       )
@@ -108,6 +108,7 @@ export async function createPreparation({ asker, complex }: ComplexAccess, input
       subjectId: id,
       detail: { complex: complex.accession, label: input.label },
     });
+    await notifyMentions(tx, asker, { text: input.notes, subject: { type: 'preparation', id } });
   });
   return id;
 }
@@ -138,6 +139,12 @@ export async function changePreparation(
       subjectType: 'preparation',
       subjectId: preparation.id,
       detail: patch,
+    });
+    const { id, notes } = preparation;
+    await notifyMentions(tx, asker, {
+      text: patch.notes ?? notes,
+      before: textBefore(notes, preparation, patch),
+      subject: { type: 'preparation', id },
     });
   });
 }

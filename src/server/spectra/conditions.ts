@@ -4,6 +4,7 @@ import type { Tx } from '#src/db/client.ts';
 import { complexes, instruments, type spectra, spectrumSolvents, spectrumSpecies } from '#src/db/schema/index.ts';
 import type { Asker } from '#src/server/access/asker.ts';
 import { complexSight } from '#src/server/access/sight.ts';
+import { livingAccessions } from '#src/server/complexes/alias.ts';
 import { database } from '#src/server/database.ts';
 import { refuse } from './refuse.ts';
 
@@ -87,13 +88,14 @@ export async function speciesRows(
   if (given === undefined) return undefined;
   if (given === null) return [{ complexId, fraction: null, basis: 'declared' }];
   const { db } = await database();
-  const accessions = given.map(({ accession }) => accession);
+  const told = given.map(({ accession }) => accession);
+  const accessions = told.map(await livingAccessions(db, told));
   const found = await db
     .select({ id: complexes.id, accession: complexes.accession })
     .from(complexes)
     .where(and(inArray(complexes.accession, accessions), complexSight(asker)));
-  const rows = given.map(({ accession, fraction, basis }, i) => {
-    const complex = found.find((row) => row.accession === accession);
+  const rows = given.map(({ fraction, basis }, i) => {
+    const complex = found.find((row) => row.accession === accessions[i]);
     if (!complex) throw refuse(`#/species/${i}/accession`, 'There is no such complex in your sight');
     return { complexId: complex.id, fraction: fraction ?? null, basis };
   });

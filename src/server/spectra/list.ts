@@ -6,6 +6,7 @@ import type { Db } from '#src/db/client.ts';
 import { complexes, instruments, labs, spectra, spectrumSolvents } from '#src/db/schema/index.ts';
 import type { Asker } from '#src/server/access/asker.ts';
 import { spectrumSight } from '#src/server/access/sight.ts';
+import { livingAccession } from '#src/server/complexes/alias.ts';
 import { database } from '#src/server/database.ts';
 import { behind, cursorScope, cutPage, readCursor } from '#src/server/paging.ts';
 import { solventsOf, summaryColumns, summaryOf } from './summary.ts';
@@ -18,7 +19,10 @@ const hasFlag = (codes: string[]) =>
 function filtersOf(query: SpectrumQuery): Filters {
   const { complex, lab, technique, instrument, flag, state, q } = query;
   return {
-    complex: complex === undefined ? undefined : eq(complexes.accession, normaliseAccession(complex) ?? complex),
+    complex:
+      complex === undefined
+        ? undefined
+        : eq(complexes.accession, livingAccession(normaliseAccession(complex) ?? complex)),
     lab: lab?.length ? inArray(spectra.labId, lab) : undefined,
     technique: technique?.length ? inArray(spectra.technique, technique) : undefined,
     instrument: instrument?.length ? inArray(spectra.instrumentId, instrument) : undefined,

@@ -29,7 +29,6 @@ export async function resolveTarget(asker: Asker, metadata: SpectrumMetadata): P
     ? (await orRefuse(seePreparation(asker, metadata.preparation), '#/preparation', 'preparation')).preparation
     : null;
   const complex = await targetComplex(asker, metadata, preparation);
-  if (complex.mergedInto) throw refuse('#/complex', 'This record was merged into another one: name that');
   if (complex.state === 'withdrawn') throw refuse('#/complex', 'This complex is withdrawn: nothing is added to it');
   await requireInstrument(metadata.instrument);
   const species = await speciesRows(asker, metadata.species ?? null, complex.id);
