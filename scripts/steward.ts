@@ -1,7 +1,9 @@
 import { createInterface } from 'node:readline';
 import { text } from 'node:stream/consumers';
 import { eq } from 'drizzle-orm';
+import { NewPassword } from '#src/contracts/account.ts';
 import { accounts } from '#src/db/schema/index.ts';
+import { passwordFault } from '#src/server/accounts/password-rule.ts';
 import { closeDatabase, database } from '#src/server/database.ts';
 import { newId, nowIso } from '#src/server/ids.ts';
 import { hashPassword } from '#src/server/passwords.ts';
@@ -9,8 +11,6 @@ import { record } from '#src/server/trail.ts';
 import { accountOf, makeDataFolder, readOptions, run, UsageError } from './lib/command.ts';
 import { isHalfLoaded } from './lib/demo-data.ts';
 import { migrateDatabase } from './migrate.ts';
-
-const SHORTEST = 12;
 
 // Makes the first steward, or makes an account that is there a steward. From there on people are invited in the program.
 run(async () => {
@@ -29,8 +29,9 @@ run(async () => {
     throw new UsageError('Loading the demo data was broken off; start the program once, then try again.');
 
   const account = await accountOf(open, email);
+  const person = { email, name: account?.name ?? options.name ?? email };
   const passwordHash =
-    account?.passwordHash ?? (await hashPassword(await readPassword(options['password-stdin'] ?? false)));
+    account?.passwordHash ?? (await hashPassword(await readPassword(options['password-stdin'] ?? false, person)));
   const id = account?.id ?? newId();
   await open.write(async (tx) => {
     if (account)
@@ -52,13 +53,15 @@ run(async () => {
   );
 });
 
-async function readPassword(fromInput: boolean): Promise<string> {
+async function readPassword(fromInput: boolean, person: { email: string; name: string }): Promise<string> {
   if (!fromInput && !process.stdin.isTTY)
     throw new UsageError(
       'There is no terminal to ask for a password; send it on standard input with --password-stdin.',
     );
   const password = fromInput ? ((await text(process.stdin)).split(/\r?\n/)[0] ?? '') : await ask('Password: ');
-  if (password.length < SHORTEST) throw new UsageError(`A password has at least ${SHORTEST} characters.`);
+  // The rule of the program, which knows no second way in.
+  const fault = NewPassword.safeParse(password).error?.issues[0]?.message ?? (await passwordFault(password, person));
+  if (fault) throw new UsageError(`${fault}.`);
   if (!fromInput && password !== (await ask('Once more: '))) throw new UsageError('The two passwords differ.');
   return password;
 }

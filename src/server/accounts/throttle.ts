@@ -62,14 +62,19 @@ async function hasSignedInFrom(accountId: string, address: string): Promise<bool
   return found.length > 0;
 }
 
-/** Forget the attempts on an account after it was proved to be its owner's, and give this one back to the client. */
+/** Forget the attempts on an account, by everybody, after somebody proved to be its owner. */
+export async function forgiveAccount(tx: Tx, email: string, address: string): Promise<void> {
+  const { pair, account } = keysOf(email, address);
+  await tx.delete(limits).where(inArray(limits.key, [pair, account]));
+}
+
+/** What a successful sign-in takes back: the attempts on the account, and its own one from the client's count. */
 export async function forgiveSignIn(tx: Tx, email: string, address: string): Promise<void> {
-  const keys = keysOf(email, address);
-  await tx.delete(limits).where(inArray(limits.key, [keys.pair, keys.account]));
+  await forgiveAccount(tx, email, address);
   await tx
     .update(limits)
     .set({ count: sql`max(0, ${limits.count} - 1)` })
-    .where(eq(limits.key, keys.client));
+    .where(eq(limits.key, keysOf(email, address).client));
 }
 
 /** Counts whose window ended a day ago say nothing any more. */
