@@ -8,6 +8,7 @@ import { log } from './server/log.ts';
 import { servedMethods } from './server/served-methods.ts';
 import { isLoopback, settings } from './server/settings.ts';
 import { startBackground } from './server/start.ts';
+import { touchToken } from './server/tokens/last-used.ts';
 
 if (process.env.ZAFFRE_SERVE === '1') startBackground();
 
@@ -37,7 +38,9 @@ async function askerOf(request: Request) {
   // Where cookie and bearer both come, the bearer counts, also when it is wrong.
   if (authorization !== null) {
     const token = /^Bearer\s+(\S+)$/i.exec(authorization)?.[1];
-    return token ? askerOfToken(token) : null;
+    const asker = token ? await askerOfToken(token) : null;
+    if (asker?.tokenId) await touchToken(asker.tokenId);
+    return asker;
   }
   if (!SESSION_COOKIE.test(request.headers.get('cookie') ?? '')) return null;
   const session = await getSession(request);

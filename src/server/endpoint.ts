@@ -5,6 +5,7 @@ import { type Asker, isMember } from './access/asker.ts';
 import { contractErrors, entityTag, HttpError, problem, readJsonBody, tooLarge, toProblem } from './http.ts';
 import { replayOrRun } from './idempotency.ts';
 import { type Admitted, admitWithin } from './limits/admit.ts';
+import { noteRead } from './oversight/reads.ts';
 
 /** What an endpoint's steps are given. */
 export interface Step<Query, Body> {
@@ -58,7 +59,11 @@ export function endpoint<Q extends z.ZodType, B extends z.ZodType, Access = null
       const query = readQuery(route, context.url);
       const body = route.body ? await readBody(route.body, request, route.limit ?? JSON_LIMIT) : undefined;
       const step = { asker, params, query, body: body as z.output<B>, context, access };
-      const run = async () => respond(route, request, await handler.act(step));
+      const run = async () => {
+        const result = await handler.act(step);
+        if (request.method === 'GET') noteRead(route, step, result);
+        return respond(route, request, result);
+      };
       return route.method === 'POST' && route.body ? await replayOrRun(route, request, asker, body, run) : await run();
     };
     const response = await answer().catch((error: unknown) =>

@@ -1,3 +1,4 @@
+import { flushAccessLog } from './access-log.ts';
 import { closeDatabase, database } from './database.ts';
 import { jobHandlers } from './job-handlers.ts';
 import { type JobLoop, startJobLoop } from './jobs.ts';
@@ -37,7 +38,7 @@ async function open(): Promise<Background> {
   return {
     async stop() {
       await Promise.all([jobs.stop(), mail.stop()]);
-      await Promise.all([transport.close(), closeWorkers()]);
+      await Promise.all([transport.close(), closeWorkers(), flushAccessLog()]);
       await closeDatabase();
     },
   };

@@ -50,8 +50,11 @@ export class AtOnce {
 
   private leave(key: string, line: Line): void {
     const next = line.waiting[0];
-    // The turn passes on: the number of those that run stays.
-    if (next) return next();
+    if (next) {
+      // The turn passes on: the number of those that run stays.
+      next();
+      return;
+    }
     line.running -= 1;
     if (line.running === 0) this.lines.delete(key);
   }
