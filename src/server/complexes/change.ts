@@ -15,7 +15,7 @@ import { type ComplexChange, leads } from '../access/records.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { nowIso } from '../ids.ts';
-import { notifyMentions } from '../mentions/notify.ts';
+import { notifyMentions, textBefore } from '../mentions/notify.ts';
 import { record } from '../trail.ts';
 import { deriveIdentity } from './derive-identity.ts';
 import { duplicate, duplicateInSight, identityColumns, insertParts, noteHiddenDuplicates } from './register.ts';
@@ -134,10 +134,7 @@ export async function changeComplex(access: ComplexChange, patch: ComplexPatch):
       // A draft may have got a twin out of its maker's sight since it was begun.
       if (complex.state === 'draft' && state === 'registered')
         await noteHiddenDuplicates(tx, asker, complex.id, identityKey);
-      // Who sees it only from now on hears now of a note that named them before.
-      const isWider =
-        (state ?? complex.state) !== complex.state || (visibility ?? complex.visibility) !== complex.visibility;
-      const [text, before] = [notes === undefined ? complex.notes : notes, isWider ? null : complex.notes];
+      const [text, before] = [notes === undefined ? complex.notes : notes, textBefore(complex.notes, complex, patch)];
       await notifyMentions(tx, asker, { text, before, subject: { type: 'complex', id: complex.id } });
       const action = state && state !== complex.state ? (state === 'withdrawn' ? 'withdraw' : 'register') : 'change';
       await record(tx, asker, {

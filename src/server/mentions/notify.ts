@@ -19,6 +19,18 @@ interface MentionText {
   except?: string | undefined;
 }
 
+interface Shown {
+  state?: string | undefined;
+  visibility?: string | undefined;
+}
+
+/** The text that stood there, as `before`: none where the change lets more people see it, since they hear of it now. */
+export function textBefore(text: string | null, was: Shown, patch: Shown): string | null {
+  const isPublished = was.state === 'draft' && patch.state === 'registered';
+  const isOpened = was.visibility === 'lab' && patch.visibility === 'programme';
+  return isPublished || isOpened ? null : text;
+}
+
 /**
  * Tell those whom a text names, by one mail a person and sentence, in the transaction that writes the text. Told are
  * active members who see the record themselves, never who wrote it. A name that fits several members tells nobody.
