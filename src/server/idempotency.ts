@@ -8,8 +8,13 @@ import { HttpError } from './http.ts';
 import { sha256 } from './ids.ts';
 
 const KEPT_FOR = 24 * 3600 * 1000; // ms
-/** Answers of these routes hold a secret that is shown once: they are never kept. */
-const SECRET = new Set(['/api/tokens']);
+/**
+ * Answers of these routes hold a secret that is shown once, or their bodies a password whose hash would be kept here:
+ * neither is.
+ */
+const SECRET = new Set(['/api/tokens', '/api/sign-in/passkey-options']);
+const SECRET_UNDER = '/api/account/';
+const isSecret = ({ path }: Route) => SECRET.has(path) || path.startsWith(SECRET_UNDER);
 
 /**
  * Run a POST once for one Idempotency-Key: the same account, token, route, key and body gives the same answer again.
@@ -27,7 +32,7 @@ export async function replayOrRun(
   run: () => Promise<Response>,
 ): Promise<Response> {
   const given = request.headers.get('idempotency-key');
-  if (given === null || !asker || SECRET.has(route.path)) return run();
+  if (given === null || !asker || isSecret(route)) return run();
   if (given.length > 200) throw new HttpError(400, 'Idempotency-Key is longer than 200 characters');
   const key = sha256(
     [asker.accountId, asker.tokenId ?? '', route.method, new URL(request.url).pathname, given].join('\n'),

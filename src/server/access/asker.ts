@@ -3,6 +3,7 @@ import type { Db } from '../../db/client.ts';
 import { accessTokens, accounts, folios, grants, memberships, sessions } from '../../db/schema/index.ts';
 import { database } from '../database.ts';
 import { nowIso, sha256 } from '../ids.ts';
+import { factorRequired, hasFactor } from '../second-factor/rule.ts';
 import { liveSession, touchSession } from '../sessions.ts';
 import type { Actor } from '../trail.ts';
 
@@ -24,12 +25,16 @@ export interface Asker extends Actor {
   readonly email: string;
   readonly name: string;
   readonly steward: boolean;
+  /** A steward who may not act as one here: in production that takes a second factor. */
+  readonly stewardWithoutFactor: boolean;
   readonly labs: ReadonlyMap<string, Role>;
   /** Grants that hold today, of folios not under embargo. */
   readonly grants: readonly ActiveGrant[];
   readonly tokenId: string | null;
   /** The session of the cookie; null for a token, and for work apart from a request. */
   readonly sessionId: string | null;
+  /** Whether a second factor was shown when the session began, or has been set up in it. */
+  readonly secondFactor: boolean;
   /** What the asker's means of entry allows: a session both, a token what it was made for. */
   readonly scopes: ReadonlySet<'read' | 'write'>;
 }
@@ -64,16 +69,21 @@ async function load(db: Db, account: typeof accounts.$inferSelect, { token, sess
       .where(and(eq(grants.accountId, account.id), isNull(grants.revokedAt), gt(grants.expiresAt, now))),
   ]);
   // A token made for one lab brings the rights of that lab alone.
+  const steward = account.steward && !token?.labId;
+  // A session has shown a factor or has not; a token, and work apart from a request, go by the account's having one.
+  const mayAct = !factorRequired({ steward }) || (session ? session.secondFactor : await hasFactor(db, account.id));
   const labs = held.filter((m) => !token?.labId || m.labId === token.labId);
   return {
     accountId: account.id,
     email: account.email,
     name: account.name,
-    steward: account.steward && !token?.labId,
+    steward: steward && mayAct,
+    stewardWithoutFactor: steward && !mayAct,
     labs: new Map(labs.map((m) => [m.labId, m.role])),
     grants: given.filter((g) => !g.embargoUntil || g.embargoUntil <= now),
     tokenId: token?.id ?? null,
     sessionId: session?.id ?? null,
+    secondFactor: session?.secondFactor ?? false,
     scopes: new Set(token?.scopes ?? ['read', 'write']),
   };
 }

@@ -1,5 +1,5 @@
 import { verifyAuthenticationResponse } from '@simplewebauthn/server';
-import { and, eq, isNotNull } from 'drizzle-orm';
+import { and, eq } from 'drizzle-orm';
 import * as z from 'zod';
 import { secondFactors } from '#src/db/schema/index.ts';
 import { database } from '../database.ts';
@@ -7,6 +7,7 @@ import { nowIso } from '../ids.ts';
 import { log } from '../log.ts';
 import { takeChallenge } from './challenges.ts';
 import { relyingParty } from './relying-party.ts';
+import { confirmedFactors } from './rule.ts';
 
 /** What a browser answers to request options (WebAuthn §5.2.2), as far as it is read here. */
 const Assertion = z.object({
@@ -36,11 +37,7 @@ export async function passesPasskey(accountId: string, text: string): Promise<bo
   const challenge = answer && (await takeChallenge(accountId, 'sign-in', answer.response.clientDataJSON));
   if (!answer || !challenge) return false;
   const { db, write } = await database();
-  const ofAccount = and(
-    eq(secondFactors.accountId, accountId),
-    eq(secondFactors.credentialId, answer.id),
-    isNotNull(secondFactors.confirmedAt),
-  );
+  const ofAccount = and(confirmedFactors(accountId), eq(secondFactors.credentialId, answer.id));
   const [key] = await db.select().from(secondFactors).where(ofAccount);
   if (!key) return false;
   const counter = await newCounter(answer, challenge, key);

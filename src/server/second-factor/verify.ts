@@ -1,4 +1,4 @@
-import { and, eq, isNotNull, isNull, lt, or } from 'drizzle-orm';
+import { and, eq, isNull, lt, or } from 'drizzle-orm';
 import { accounts, secondFactors } from '#src/db/schema/index.ts';
 import { database } from '../database.ts';
 import { newId, nowIso } from '../ids.ts';
@@ -10,6 +10,7 @@ import { record } from '../trail.ts';
 import { passesPasskey } from './assertion.ts';
 import { decipher } from './cipher.ts';
 import { recoveryCodesLeft, useRecoveryCode } from './recovery-codes.ts';
+import { confirmedFactors } from './rule.ts';
 import { totpStep } from './totp.ts';
 
 const QUARTER_HOUR = 15 * 60 * 1000; // ms
@@ -21,7 +22,7 @@ export async function factorKinds(accountId: string): Promise<('totp' | 'passkey
   const rows = await db
     .selectDistinct({ kind: secondFactors.kind })
     .from(secondFactors)
-    .where(and(eq(secondFactors.accountId, accountId), isNotNull(secondFactors.confirmedAt)));
+    .where(confirmedFactors(accountId));
   return rows.map(({ kind }) => kind);
 }
 
@@ -51,15 +52,13 @@ async function passesTotp(accountId: string, code: string): Promise<boolean> {
   const rows = await db
     .select()
     .from(secondFactors)
-    .where(
-      and(eq(secondFactors.accountId, accountId), eq(secondFactors.kind, 'totp'), isNotNull(secondFactors.confirmedAt)),
-    );
+    .where(and(confirmedFactors(accountId), eq(secondFactors.kind, 'totp')));
   for (const row of rows) if (await takeTotp(row, code)) return true;
   return false;
 }
 
 /** Take a code of one app, where it fits and neither it nor a later one was taken before. */
-export async function takeTotp(
+async function takeTotp(
   { id, secret }: Pick<typeof secondFactors.$inferSelect, 'id' | 'secret'>,
   code: string,
 ): Promise<boolean> {

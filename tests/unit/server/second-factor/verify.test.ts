@@ -1,7 +1,7 @@
-import { Secret, TOTP } from 'otpauth';
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { openRegistry } from '../../../api/harness.ts';
 import { person } from '../../../api/people.ts';
+import { appCode, giveApp } from '../../../api/second-factor-people.ts';
 
 let registry: Awaited<ReturnType<typeof openRegistry>>;
 beforeAll(async () => {
@@ -10,26 +10,6 @@ beforeAll(async () => {
 afterAll(() => registry.close());
 
 const verify = () => import('#src/server/second-factor/verify.ts');
-const code = (secret: Uint8Array, steps = 0) =>
-  TOTP.generate({
-    secret: new Secret({ buffer: new Uint8Array(secret).buffer }),
-    timestamp: Date.now() + steps * 30_000,
-  });
-
-/** An app of an account, made straight in the database. */
-async function app(accountId: string, { confirmed = true } = {}): Promise<Uint8Array> {
-  const { database } = await import('#src/server/database.ts');
-  const { newId, nowIso } = await import('#src/server/ids.ts');
-  const { secondFactors } = await import('#src/db/schema/index.ts');
-  const { encipher } = await import('#src/server/second-factor/cipher.ts');
-  const { newTotpSecret } = await import('#src/server/second-factor/totp.ts');
-  const [id, secret] = [newId(), newTotpSecret()];
-  const row = { id, accountId, kind: 'totp' as const, name: 'App', secret: encipher(secret, id), createdAt: nowIso() };
-  const confirmedAt = confirmed ? nowIso() : null;
-  await (await database()).write((tx) => tx.insert(secondFactors).values({ ...row, confirmedAt }));
-  return secret;
-}
-
 async function codes(accountId: string): Promise<string[]> {
   const { database } = await import('#src/server/database.ts');
   const { replaceRecoveryCodes } = await import('#src/server/second-factor/recovery-codes.ts');
@@ -39,19 +19,20 @@ async function codes(accountId: string): Promise<string[]> {
 test('a code of an app passes once; neither it nor an older one passes after it', async () => {
   const { factorKinds, passesSecondFactor } = await verify();
   const { id } = await person('Ada');
-  const secret = await app(id);
+  const { secret } = await giveApp(id);
   expect(await factorKinds(id)).toEqual(['totp']);
-  const [older, present] = [code(secret, -1), code(secret)];
+  const [older, present] = [appCode(secret, -1), appCode(secret)];
   expect(await passesSecondFactor(id, { code: `${present.slice(0, 3)} ${present.slice(3)}` })).toBe(true);
   expect(await passesSecondFactor(id, { code: present })).toBe(false);
   expect(await passesSecondFactor(id, { code: older })).toBe(false);
-  expect(await passesSecondFactor(id, { code: code(secret, 1) })).toBe(true);
+  expect(await passesSecondFactor(id, { code: appCode(secret, 1) })).toBe(true);
 });
 
 test('of two that come with one code at once, one passes', async () => {
   const { passesSecondFactor } = await verify();
   const { id } = await person('Twice');
-  const given = { code: code(await app(id)) };
+  const { secret } = await giveApp(id);
+  const given = { code: appCode(secret) };
   const both = await Promise.all([passesSecondFactor(id, given), passesSecondFactor(id, given)]);
   expect(both.sort()).toEqual([false, true]);
 });
@@ -59,19 +40,19 @@ test('of two that come with one code at once, one passes', async () => {
 test('an app that is not confirmed counts for nothing', async () => {
   const { factorKinds, passesSecondFactor } = await verify();
   const { id } = await person('Halfway');
-  const secret = await app(id, { confirmed: false });
+  const { secret } = await giveApp(id, { confirmed: false });
   expect(await factorKinds(id)).toEqual([]);
-  expect(await passesSecondFactor(id, { code: code(secret) })).toBe(false);
+  expect(await passesSecondFactor(id, { code: appCode(secret) })).toBe(false);
 });
 
 test("nothing given, and another's code, do not pass", async () => {
   const { passesSecondFactor } = await verify();
   const [one, other] = [await person('One'), await person('Other')];
-  const secret = await app(one.id);
-  await app(other.id);
+  const { secret } = await giveApp(one.id);
+  await giveApp(other.id);
   for (const given of [{}, { code: '' }, { code: 'x'.repeat(200) }, { passkey: '{}' }, { passkey: 'not JSON' }])
     expect(await passesSecondFactor(one.id, given)).toBe(false);
-  expect(await passesSecondFactor(other.id, { code: code(secret) })).toBe(false);
+  expect(await passesSecondFactor(other.id, { code: appCode(secret) })).toBe(false);
 });
 
 test('a recovery code passes once, however it is typed, and its owner is told by mail', async () => {
