@@ -23,7 +23,7 @@ const steward = {
 } as const;
 const leads = { ...steward, who: 'member' } as const;
 
-/** Routes of the trail and of who looked: for people alone, never for access tokens. */
+/** Routes of the trail, of who looked and of all own tokens at once: for people alone, never for access tokens. */
 export const oversightRoutes = {
   listTrail: route({
     ...steward,
@@ -58,6 +58,17 @@ export const oversightRoutes = {
       'The trail as JSON lines with all that its hashes are over: SHA-256 of the JSON array previousHash, at, actorId, tokenId, action, subjectType, subjectId, detail as JSON text',
     query: TrailFilter,
     answers: 'application/jsonl',
+  }),
+  revokeAllTokens: route({
+    who: 'signed-in',
+    scope: 'write',
+    sessionOnly: true,
+    method: 'DELETE',
+    path: '/api/tokens',
+    summary: 'Revoke all own access tokens',
+    tag: 'Labs and people',
+    status: 200,
+    answers: z.object({ revoked: z.number().int() }),
   }),
   listAccessLog: route({
     ...leads,

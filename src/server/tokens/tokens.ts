@@ -1,4 +1,4 @@
-import { and, desc, eq, gt, isNull } from 'drizzle-orm';
+import { and, count, desc, eq, gt, isNull } from 'drizzle-orm';
 import type { TokenInput, TokenRecord } from '#src/contracts/sharing.ts';
 import { accessTokens } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
@@ -6,6 +6,7 @@ import type { TokenRevoke } from '../access/sharing.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { newId, newSecret, nowIso, sha256 } from '../ids.ts';
+import { MOST_TOKENS } from '../limits/policy.ts';
 import { record } from '../trail.ts';
 
 /** So that a token found in a log or a repository can be told from other secrets. */
@@ -22,15 +23,14 @@ const toRecord = (row: typeof accessTokens.$inferSelect): TokenRecord => ({
   lastUsedAt: row.lastUsedAt,
 });
 
+/** Tokens of an account that still open something. */
+const liveOf = (accountId: string) =>
+  and(eq(accessTokens.accountId, accountId), isNull(accessTokens.revokedAt), gt(accessTokens.expiresAt, nowIso()));
+
 /** The asker's own tokens that still open something, newest first; never the tokens themselves. */
 export async function listTokens(asker: Asker): Promise<TokenRecord[]> {
   const { db } = await database();
-  const own = eq(accessTokens.accountId, asker.accountId);
-  const rows = await db
-    .select()
-    .from(accessTokens)
-    .where(and(own, isNull(accessTokens.revokedAt), gt(accessTokens.expiresAt, nowIso())))
-    .orderBy(desc(accessTokens.id));
+  const rows = await db.select().from(accessTokens).where(liveOf(asker.accountId)).orderBy(desc(accessTokens.id));
   return rows.map(toRecord);
 }
 
@@ -40,7 +40,8 @@ const refuse = (pointer: string, detail: string) =>
 /**
  * Make a token. It is in this answer and nowhere else: only its hash is kept.
  *
- * @throws {HttpError} 422 for an end that is past or more than a year away, and for a lab that is not the asker's
+ * @throws {HttpError} 422 for an end that is past or more than a year away, and for a lab that is not the asker's; 409
+ *   where the account has as many as it may
  */
 export async function createToken(asker: Asker, { name, scopes, lab, expires }: TokenInput): Promise<TokenRecord> {
   const end = Date.parse(expires);
@@ -62,6 +63,9 @@ export async function createToken(asker: Asker, { name, scopes, lab, expires }: 
   };
   const { write } = await database();
   await write(async (tx) => {
+    const [live] = await tx.select({ n: count() }).from(accessTokens).where(liveOf(asker.accountId));
+    if ((live?.n ?? 0) >= MOST_TOKENS)
+      throw new HttpError(409, `You have ${MOST_TOKENS} tokens, as many as an account may: revoke one first`);
     await tx.insert(accessTokens).values(row);
     const detail = { name, scopes, lab: row.labId, expires: row.expiresAt };
     await record(tx, asker, { action: 'create', subjectType: 'token', subjectId: row.id, detail });
@@ -79,5 +83,19 @@ export async function revokeToken({ asker, token }: TokenRevoke): Promise<void> 
       .where(and(eq(accessTokens.id, token.id), isNull(accessTokens.revokedAt)))
       .returning({ id: accessTokens.id });
     if (revoked) await record(tx, asker, { action: 'revoke', subjectType: 'token', subjectId: token.id });
+  });
+}
+
+/** End all live tokens of the asker. How many there were. */
+export async function revokeAllTokens(asker: Asker): Promise<{ revoked: number }> {
+  const { write } = await database();
+  return write(async (tx) => {
+    const ended = await tx
+      .update(accessTokens)
+      .set({ revokedAt: nowIso() })
+      .where(liveOf(asker.accountId))
+      .returning({ id: accessTokens.id });
+    for (const { id } of ended) await record(tx, asker, { action: 'revoke', subjectType: 'token', subjectId: id });
+    return { revoked: ended.length };
   });
 }
