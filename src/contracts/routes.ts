@@ -1,4 +1,5 @@
 import { accountRoutes } from './account-routes.ts';
+import { bandFitRoutes } from './band-fit.ts';
 import { chargeTransferRoutes } from './charge-transfer.ts';
 import { complexRoutes } from './complex-routes.ts';
 import { deriveRoutes } from './derive.ts';
@@ -21,6 +22,7 @@ export const routes = {
   ...symmetryRoutes,
   ...ligandFieldRoutes,
   ...chargeTransferRoutes,
+  ...bandFitRoutes,
   ...complexRoutes,
   ...mergeRoutes,
   ...spectrumRoutes,

@@ -1,5 +1,12 @@
 export * from './absorbance.ts';
 export { ABSORBANCE_LIMIT, checkConditions, type Flag, type MeasuredCurve, type SolventGiven } from './conditions.ts';
+export {
+  type BandFit,
+  combinedPositionError,
+  type FitOptions,
+  type FittedBand,
+  fitBands,
+} from './fit/fit-bands.ts';
 export { type SpectrumToWrite, writeJcamp } from './jcamp/write.ts';
 export * from './oscillator-strength.ts';
 export { type PickedBand, type PickOptions, pickBands } from './pick-bands.ts';

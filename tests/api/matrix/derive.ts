@@ -62,4 +62,16 @@ export const rows: Record<string, MatrixRow> = {
     }),
     expect: anybody,
   },
+  deriveBands: {
+    send: () => ({
+      path: '/api/derive/bands',
+      json: {
+        x: wavenumbers,
+        y: wavenumbers.map((x) => 50 * Math.exp(-(((x - 20_000) / 2500) ** 2))),
+        count: 1,
+        edge: false,
+      },
+    }),
+    expect: anybody,
+  },
 };
