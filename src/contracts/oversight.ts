@@ -121,3 +121,8 @@ export const FolioReader = z
 export type FolioReader = z.infer<typeof FolioReader>;
 
 export const FolioReadersQuery = z.object({ folio: Id });
+
+export const RevokeAllQuery = z.object({
+  until: z.iso.datetime().optional().describe('Those made until then alone: what a list shown at that moment held'),
+});
+export type RevokeAllQuery = z.infer<typeof RevokeAllQuery>;

@@ -1,4 +1,5 @@
-import { and, count, desc, eq, gt, isNull } from 'drizzle-orm';
+import { and, count, desc, eq, gt, isNull, lte } from 'drizzle-orm';
+import type { RevokeAllQuery } from '#src/contracts/oversight.ts';
 import type { TokenInput, TokenRecord } from '#src/contracts/sharing.ts';
 import { accessTokens } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
@@ -86,14 +87,16 @@ export async function revokeToken({ asker, token }: TokenRevoke): Promise<void> 
   });
 }
 
-/** End all live tokens of the asker. How many there were. */
-export async function revokeAllTokens(asker: Asker): Promise<{ revoked: number }> {
+/** End all live tokens of the asker, or those made until a moment. How many there were. */
+export async function revokeAllTokens(asker: Asker, { until }: RevokeAllQuery): Promise<{ revoked: number }> {
   const { write } = await database();
   return write(async (tx) => {
     const ended = await tx
       .update(accessTokens)
       .set({ revokedAt: nowIso() })
-      .where(liveOf(asker.accountId))
+      .where(
+        and(liveOf(asker.accountId), until ? lte(accessTokens.createdAt, new Date(until).toISOString()) : undefined),
+      )
       .returning({ id: accessTokens.id });
     for (const { id } of ended) await record(tx, asker, { action: 'revoke', subjectType: 'token', subjectId: id });
     return { revoked: ended.length };

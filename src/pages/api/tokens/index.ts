@@ -6,4 +6,6 @@ export const GET = endpoint(routes.listTokens, { act: ({ asker }) => listTokens(
 
 export const POST = endpoint(routes.createToken, { act: ({ asker, body }) => createToken(asker, body) });
 
-export const DELETE = endpoint(routes.revokeAllTokens, { act: ({ asker }) => revokeAllTokens(asker) });
+export const DELETE = endpoint(routes.revokeAllTokens, {
+  act: ({ asker, query }) => revokeAllTokens(asker, query),
+});
