@@ -12,6 +12,7 @@ const TITLES: Record<number, string> = {
   404: 'Not found',
   405: 'This method is not served here',
   409: 'It conflicts with what is there',
+  410: 'No longer here',
   412: 'Somebody changed it meanwhile',
   413: 'Too large',
   415: 'This kind of body is not served here',

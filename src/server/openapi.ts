@@ -11,6 +11,7 @@ const REFUSALS: Record<number, string> = {
   403: 'This role or scope can never do this, or the record is in sight but not to be touched',
   404: 'Not in your sight; the same answer as for what is not there',
   409: 'It conflicts with what is there',
+  410: 'No longer here',
   412: 'The record changed since it was read: If-Match is stale',
   413: 'The body is too large',
   415: 'This kind of body is not served here',

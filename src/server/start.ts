@@ -1,5 +1,6 @@
 import { flushAccessLog } from './access-log.ts';
 import { closeDatabase, database } from './database.ts';
+import { startHousekeeping } from './housekeeping/loop.ts';
 import { jobHandlers } from './job-handlers.ts';
 import { type JobLoop, startJobLoop } from './jobs.ts';
 import { log } from './log.ts';
@@ -16,7 +17,7 @@ interface Background {
 }
 type Holder = { [RUNNING]?: Background };
 
-/** Start what runs beside the requests, the job loop and the sending of mail, once a process. */
+/** Start what runs beside the requests, the job loop, the sending of mail and the housekeeping, once a process. */
 export function startBackground(): void {
   const holder = globalThis as Holder;
   if (holder[RUNNING]) return;
@@ -35,9 +36,10 @@ async function open(): Promise<Background> {
   const transport = await openTransport(settings());
   const jobs: JobLoop = startJobLoop(await database(), { handlers: jobHandlers });
   const mail = startMailLoop(transport.send);
+  const housekeeping = startHousekeeping(await database());
   return {
     async stop() {
-      await Promise.all([jobs.stop(), mail.stop()]);
+      await Promise.all([jobs.stop(), mail.stop(), housekeeping.stop()]);
       await Promise.all([transport.close(), closeWorkers(), flushAccessLog()]);
       await closeDatabase();
     },

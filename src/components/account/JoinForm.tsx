@@ -1,4 +1,4 @@
-import type { InvitationPreview } from '../../contracts/sharing.ts';
+import type { InvitationPreview } from '../../contracts/invitations.ts';
 import { Button, ButtonLink } from '../ui/Button.tsx';
 import { longDay } from '../ui/dates.ts';
 import { EmptyState } from '../ui/EmptyState.tsx';

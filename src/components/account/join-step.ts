@@ -1,4 +1,4 @@
-import type { InvitationPreview } from '../../contracts/sharing.ts';
+import type { InvitationPreview } from '../../contracts/invitations.ts';
 
 /** What the one who opened an invitation has to do next. */
 export type JoinStep = 'new-account' | 'sign-in' | 'accept' | 'other-account';

@@ -1,6 +1,6 @@
 import { useMutation, useQuery } from '@tanstack/react-query';
 import { useEffect, useState } from 'react';
-import type { InvitationPreview } from '../../contracts/sharing.ts';
+import type { InvitationPreview } from '../../contracts/invitations.ts';
 import { sendJson } from '../ui/http.ts';
 import { ProblemError } from '../ui/problem-error.ts';
 import { queryClient } from '../ui/query-client.ts';

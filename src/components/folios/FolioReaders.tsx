@@ -1,5 +1,7 @@
 import { type FormEvent, useMemo, useState } from 'react';
-import type { FolioRecord, GrantRecord, GuestInvitation } from '../../contracts/sharing.ts';
+import type { GrantRecord } from '../../contracts/grants.ts';
+import type { GuestInvitation } from '../../contracts/invitations.ts';
+import type { FolioRecord } from '../../contracts/sharing.ts';
 import { InvitationTable } from '../labs/InvitationTable.tsx';
 import { Sent } from '../labs/LabInvitations.tsx';
 import { useInvitations } from '../labs/useInvitations.ts';

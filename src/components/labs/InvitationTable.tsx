@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import type { InvitationRecord } from '../../contracts/sharing.ts';
+import type { InvitationRecord } from '../../contracts/invitations.ts';
 import { Button } from '../ui/Button.tsx';
 import { DataTable } from '../ui/DataTable.tsx';
 import { Dialog } from '../ui/Dialog.tsx';

@@ -1,5 +1,6 @@
 import type { FormEvent } from 'react';
-import type { LabRecord, MemberInvitation } from '../../contracts/sharing.ts';
+import type { MemberInvitation } from '../../contracts/invitations.ts';
+import type { LabRecord } from '../../contracts/sharing.ts';
 import { Button } from '../ui/Button.tsx';
 import { Select, TextInput } from '../ui/controls.tsx';
 import { Panel } from '../ui/Panel.tsx';

@@ -1,5 +1,5 @@
 import { useMutation, useQuery } from '@tanstack/react-query';
-import type { InvitationRecord } from '../../contracts/sharing.ts';
+import type { InvitationRecord } from '../../contracts/invitations.ts';
 import { getJson, sendJson } from '../ui/http.ts';
 import { queryClient } from '../ui/query-client.ts';
 

@@ -1,5 +1,5 @@
 import { and, eq, inArray, isNull, or, type SQL, sql } from 'drizzle-orm';
-import { accessTokens, bundles, folios, grants, invitations, labs } from '../../db/schema/index.ts';
+import { accessTokens, bundles, folios, labs } from '../../db/schema/index.ts';
 import { database } from '../database.ts';
 import { HttpError, notInSight } from '../http.ts';
 import { type Asker, isMember, type Level, labsWith } from './asker.ts';
@@ -21,12 +21,6 @@ export interface FolioAccess extends Access<'see' | 'change' | 'invite'>, OfFoli
 export interface FolioChange extends Access<'change'>, OfFolio {}
 /** Leads of the folio's lab and stewards: who may read it, and who is asked to. */
 export interface FolioInvite extends Access<'invite'>, OfFolio {}
-export interface GrantRevoke extends FolioInvite {
-  readonly grant: typeof grants.$inferSelect;
-}
-export interface InvitationRevoke extends Access<'change'> {
-  readonly invitation: typeof invitations.$inferSelect;
-}
 export interface BundleAccess extends Access<'see'> {
   readonly bundle: typeof bundles.$inferSelect;
 }
@@ -34,10 +28,11 @@ export interface TokenRevoke extends Access<'change'> {
   readonly token: typeof accessTokens.$inferSelect;
 }
 
-const prove = <A extends object>(facts: object): A => facts as A;
+/** For the files of this folder alone. */
+export const prove = <A extends object>(facts: object): A => facts as A;
 
 /** Nobody else can ever invite, so that the role is judged before the record (design §8). */
-function requireLeading(asker: Asker): void {
+export function requireLeading(asker: Asker): void {
   if (!asker.steward && labsWith(asker, 'lead').length === 0)
     throw new HttpError(403, 'Leads of a lab and stewards invite and see invitations');
 }
@@ -118,32 +113,6 @@ export async function mayInviteToFolio(asker: Asker, id: string): Promise<FolioI
   if (!leads(asker, folio.labId))
     throw new HttpError(403, 'Leads of a folio’s lab and stewards decide who else reads it');
   return prove({ asker, folio });
-}
-
-/** @throws {HttpError} 403, 404 also for a grant of another folio */
-export async function mayRevokeGrant(asker: Asker, folioId: string, grantId: string): Promise<GrantRevoke> {
-  const { folio } = await mayInviteToFolio(asker, folioId);
-  const { db } = await database();
-  const [grant] = await db
-    .select()
-    .from(grants)
-    .where(and(eq(grants.id, grantId), eq(grants.folioId, folio.id)));
-  if (!grant) throw notInSight();
-  return prove({ asker, folio, grant });
-}
-
-/** An invitation into a lab that the asker leads, or to a folio of one. @throws {HttpError} 403, 404 */
-export async function mayRevokeInvitation(asker: Asker, id: string): Promise<InvitationRevoke> {
-  requireLeading(asker);
-  const { db } = await database();
-  const [row] = await db
-    .select()
-    .from(invitations)
-    .leftJoin(folios, eq(folios.id, invitations.folioId))
-    .where(eq(invitations.id, id));
-  const labId = row?.invitation.labId ?? row?.folio?.labId;
-  if (!row || !labId || !leads(asker, labId)) throw notInSight();
-  return prove({ asker, invitation: row.invitation });
 }
 
 /** A bundle that the asker ordered, as long as its folio is in sight. @throws {HttpError} 404 */

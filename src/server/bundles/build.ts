@@ -11,6 +11,7 @@ import type { JobContext } from '../jobs.ts';
 import { store } from '../store.ts';
 import { gatherContent, type Held } from './content.ts';
 import { archiveKey, bundleFolder, heldKey } from './paths.ts';
+import { mailReady, tookLong } from './ready-mail.ts';
 import { writeBundle } from './write.ts';
 
 /** What a job of kind `bundle` is told. */
@@ -18,6 +19,8 @@ export interface BundleJob {
   bundle: string;
   accountId: string;
   tokenId: string | null;
+  /** Whether a mail was asked for; orders of before this was asked have none. */
+  notify?: boolean;
 }
 
 /**
@@ -26,7 +29,7 @@ export interface BundleJob {
  * only when its stream ended well.
  */
 export async function buildBundle(payload: Record<string, unknown>, { progress, signal }: JobContext): Promise<void> {
-  const { bundle: id, ...orderedBy } = payload as unknown as BundleJob;
+  const { bundle: id, notify = false, ...orderedBy } = payload as unknown as BundleJob;
   const { db } = await database();
   const [order] = await db.select().from(bundles).where(eq(bundles.id, id));
   if (!order || order.state === 'cancelled' || order.state === 'ready') return;
@@ -52,7 +55,7 @@ export async function buildBundle(payload: Record<string, unknown>, { progress, 
       bands: content.bands.map((row) => row.id),
     };
     await store().put(heldKey(storeKey), Buffer.from(JSON.stringify(held)), { contentType: 'application/json' });
-    if (!(await markReady(id, { storeKey, ...measured.result() }))) await remove(storeKey);
+    if (!(await markReady(order, { storeKey, ...measured.result() }, notify))) await remove(storeKey);
   } catch (error) {
     bag.stream.destroy();
     await remove(storeKey).catch(() => undefined);
@@ -63,12 +66,19 @@ export async function buildBundle(payload: Record<string, unknown>, { progress, 
 }
 
 /** Whether it was still wanted: not if it was cancelled, or finished by another process, meanwhile. */
-async function markReady(id: string, made: { storeKey: string; size: number; sha256: string }): Promise<boolean> {
+async function markReady(
+  order: typeof bundles.$inferSelect,
+  made: { storeKey: string; size: number; sha256: string },
+  notify: boolean,
+): Promise<boolean> {
   const { write } = await database();
   const ready = { ...made, state: 'ready' as const, progress: 1, finishedAt: nowIso(), error: null };
-  const wanted = and(eq(bundles.id, id), inArray(bundles.state, ['queued', 'running']));
-  const rows = await write((tx) => tx.update(bundles).set(ready).where(wanted).returning({ id: bundles.id }));
-  return rows.length > 0;
+  const wanted = and(eq(bundles.id, order.id), inArray(bundles.state, ['queued', 'running']));
+  return write(async (tx) => {
+    const [bundle] = await tx.update(bundles).set(ready).where(wanted).returning();
+    if (bundle && (notify || tookLong(bundle))) await mailReady(tx, bundle);
+    return bundle !== undefined;
+  });
 }
 
 /** There is nothing that the one who ordered it may take: trying again would not help. */

@@ -12,9 +12,11 @@ import { archiveKey, heldKey } from './paths.ts';
  * The ZIP file, or the range of it that is asked for. Whether the asker may still take all that is in it is judged
  * now, not when it was ordered.
  *
- * @throws {HttpError} 409 while it is not ready, 404 when access to any of its content ended, 503 without the store
+ * @throws {HttpError} 409 while it is not ready, 410 once its file was cleared away, 404 when access to any of its content ended, 503 without the store
  */
 export async function bundleFile({ asker, bundle }: BundleAccess, request: Request): Promise<Response> {
+  if (bundle.state === 'ready' && !bundle.storeKey)
+    throw new HttpError(410, 'The file of this bundle was kept for a week: order it again, and it is made anew');
   if (bundle.state !== 'ready' || bundle.size === null || !bundle.sha256 || !bundle.storeKey)
     throw new HttpError(409, 'The bundle is not ready');
   const { size, sha256, storeKey } = bundle;

@@ -5,12 +5,14 @@ import { bundles, complexes, jobs } from '#src/db/schema/index.ts';
 import { type Asker, isMember } from '../access/asker.ts';
 import { type BundleAccess, guestLevel, seeFolio } from '../access/sharing.ts';
 import { complexDownload, complexSight } from '../access/sight.ts';
+import { livingAccessions } from '../complexes/alias.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { newId, nowIso } from '../ids.ts';
 import { cancelJob, enqueue } from '../jobs.ts';
 import { record } from '../trail.ts';
 import type { BundleJob } from './build.ts';
+import { fileUntil } from './forget.ts';
 
 /** Bundles that one account may have in the making. */
 const AT_ONCE = 5;
@@ -42,7 +44,8 @@ export async function orderBundle(asker: Asker, input: BundleInput): Promise<Bun
     state: 'queued' as const,
     createdAt: nowIso(),
   };
-  const job: BundleJob = { bundle: row.id, accountId: asker.accountId, tokenId: asker.tokenId };
+  const { accountId, tokenId } = asker;
+  const job: BundleJob = { bundle: row.id, accountId, tokenId, notify: input.notify ?? false };
   const { write } = await database();
   const made = await write(async (tx) => {
     await requireRoom(tx, asker);
@@ -57,7 +60,8 @@ export async function orderBundle(asker: Asker, input: BundleInput): Promise<Bun
 
 async function requireComplexes(asker: Asker, accessions: string[]): Promise<void> {
   const { db } = await database();
-  const among = sql`${complexes.accession} in (select value from json_each(${JSON.stringify(accessions)}))`;
+  const livesAs = await livingAccessions(db, accessions);
+  const among = sql`${complexes.accession} in (select value from json_each(${JSON.stringify(accessions.map(livesAs))}))`;
   const find = async (sight: typeof complexSight) =>
     new Set(
       (
@@ -69,10 +73,10 @@ async function requireComplexes(asker: Asker, accessions: string[]): Promise<voi
     );
   const [seen, taken] = await Promise.all([find(complexSight), find(complexDownload)]);
   const errors = accessions.flatMap((accession, i) =>
-    seen.has(accession) ? [] : [{ pointer: `#/complexes/${i}`, detail: `${accession} is not in your sight` }],
+    seen.has(livesAs(accession)) ? [] : [{ pointer: `#/complexes/${i}`, detail: `${accession} is not in your sight` }],
   );
   if (errors.length > 0) throw new HttpError(422, 'Some complexes are not in your sight', { errors });
-  if (accessions.some((accession) => !taken.has(accession))) throw readOnly();
+  if (accessions.some((accession) => !taken.has(livesAs(accession)))) throw readOnly();
 }
 
 const jobOf = (id: string) => and(eq(jobs.kind, 'bundle'), sql`json_extract(${jobs.payload}, '$.bundle') = ${id}`);
@@ -117,6 +121,7 @@ function describe(
     folio: bundle.folioId,
     error: bundle.error ?? (state === 'failed' ? 'The bundle could not be built: order it again' : null),
     createdAt: bundle.createdAt,
+    fileUntil: fileUntil(bundle),
   };
 }
 

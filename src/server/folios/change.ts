@@ -1,9 +1,9 @@
-import { and, eq, isNull, sql } from 'drizzle-orm';
+import { and, eq, sql } from 'drizzle-orm';
 import type { FolioInput, FolioItem, FolioPatch, FolioRecord } from '#src/contracts/sharing.ts';
-import { folios, grants } from '#src/db/schema/index.ts';
+import { folios } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
 import { requireLab } from '../access/records.ts';
-import type { FolioChange, GrantRevoke } from '../access/sharing.ts';
+import type { FolioChange } from '../access/sharing.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { newId, nowIso } from '../ids.ts';
@@ -48,7 +48,8 @@ export async function createFolio(asker: Asker, input: FolioInput): Promise<Foli
   return folioRecord({ asker, folio });
 }
 
-const changedMeanwhile = () => new HttpError(412, 'Somebody changed this folio meanwhile: read it again and repeat');
+export const changedMeanwhile = () =>
+  new HttpError(412, 'Somebody changed this folio meanwhile: read it again and repeat');
 
 /** Change what is told in `patch`. @throws {HttpError} 412 when it changed meanwhile */
 export async function changeFolio({ asker, folio }: FolioChange, patch: FolioPatch): Promise<FolioRecord> {
@@ -82,19 +83,4 @@ export async function replaceFolioItems({ asker, folio }: FolioChange, items: Fo
     return row!;
   });
   return folioRecord({ asker, folio: changed });
-}
-
-/** End a guest's access: it is gone at the next request. */
-export async function revokeGrant({ asker, folio, grant }: GrantRevoke): Promise<void> {
-  const { write } = await database();
-  await write(async (tx) => {
-    const [revoked] = await tx
-      .update(grants)
-      .set({ revokedAt: nowIso() })
-      .where(and(eq(grants.id, grant.id), isNull(grants.revokedAt)))
-      .returning();
-    if (!revoked) return;
-    const detail = { grant: grant.id, account: grant.accountId };
-    await record(tx, asker, { action: 'revoke-grant', subjectType: 'folio', subjectId: folio.id, detail });
-  });
 }

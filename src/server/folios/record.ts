@@ -1,12 +1,22 @@
-import { and, asc, eq, gt, inArray, isNull, max, sql } from 'drizzle-orm';
-import type { FolioRecord, GrantRecord } from '#src/contracts/sharing.ts';
-import { accounts, complexes, editions, folioItems, type folios, grants, labs, spectra } from '#src/db/schema/index.ts';
+import { and, asc, eq, inArray, isNull, max, sql } from 'drizzle-orm';
+import type { FolioRecord } from '#src/contracts/sharing.ts';
+import {
+  accessRequests,
+  complexes,
+  editions,
+  folioItems,
+  type folios,
+  grants,
+  labs,
+  spectra,
+} from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
 import { leads } from '../access/records.ts';
-import { canChangeFolio, type FolioAccess, type FolioInvite, guestLevel } from '../access/sharing.ts';
+import { canChangeFolio, type FolioAccess, guestLevel } from '../access/sharing.ts';
 import { complexSight, spectrumSight } from '../access/sight.ts';
 import { database } from '../database.ts';
-import { nowIso } from '../ids.ts';
+import { contactsOf } from '../grants/contact.ts';
+import { grantRows } from '../grants/record.ts';
 
 type Row = typeof folios.$inferSelect;
 
@@ -16,7 +26,7 @@ export async function folioRecords(asker: Asker, rows: Row[]): Promise<FolioReco
   const { db } = await database();
   const ids = rows.map((folio) => folio.id);
   const led = rows.filter((folio) => leads(asker, folio.labId)).map((folio) => folio.id);
-  const [labNames, items, given, frozen, ends] = await Promise.all([
+  const [labNames, items, given, frozen, own, asked, contacts] = await Promise.all([
     db.select({ id: labs.id, name: labs.name }).from(labs),
     itemsInSight(asker, ids),
     grantRows(led),
@@ -25,10 +35,14 @@ export async function folioRecords(asker: Asker, rows: Row[]): Promise<FolioReco
       .from(editions)
       .where(inArray(editions.folioId, ids))
       .groupBy(editions.folioId),
-    ownEnds(asker, ids),
+    ownGrants(asker, ids),
+    openRequests(asker, ids),
+    contactsOf(asker.grants.length > 0 ? rows.map((folio) => folio.labId) : []),
   ]);
   return rows.map((folio) => {
     const level = guestLevel(asker, folio);
+    const isGuest = level !== null;
+    const held = own.filter((grant) => grant.folioId === folio.id);
     return {
       id: folio.id,
       name: folio.name,
@@ -43,11 +57,19 @@ export async function folioRecords(asker: Asker, rows: Row[]): Promise<FolioReco
       shows: folio.shows,
       edition: frozen.find((edition) => edition.folioId === folio.id)?.number ?? null,
       level,
-      expires: level === null ? null : (ends.find((end) => end.folioId === folio.id)?.expires ?? null),
+      expires: isGuest ? lastEnd(held) : null,
+      terms: isGuest && held.length > 0 ? ownTerms(held, folio.licence) : null,
+      contact: isGuest ? (contacts.get(folio.labId)?.name ?? null) : null,
+      asked: isGuest
+        ? asked
+            .filter((request) => request.folioId === folio.id)
+            .map(({ id, wants, createdAt }) => ({ id, wants, createdAt }))
+        : [],
       may: {
         change: canChangeFolio(asker, folio),
         invite: leads(asker, folio.labId) && asker.tokenId === null,
         download: level !== 'view',
+        delete: leads(asker, folio.labId) && asker.scopes.has('write'),
       },
     };
   });
@@ -85,45 +107,39 @@ async function itemsInSight(asker: Asker, folioIds: string[]) {
   }));
 }
 
-async function grantRows(folioIds: string[]): Promise<(GrantRecord & { folioId: string })[]> {
-  if (folioIds.length === 0) return [];
+/** What the asker's own access to each folio is, for a guest. */
+async function ownGrants(asker: Asker, folioIds: string[]) {
   const { db } = await database();
-  const rows = await db
-    .select({ grant: grants, email: accounts.email, name: accounts.name })
-    .from(grants)
-    .innerJoin(accounts, eq(accounts.id, grants.accountId))
-    .where(inArray(grants.folioId, folioIds))
-    .orderBy(asc(accounts.email), asc(grants.id));
-  return rows.map(({ grant, email, name }) => ({
-    folioId: grant.folioId,
-    id: grant.id,
-    email,
-    name,
-    level: grant.level,
-    expires: grant.expiresAt,
-    termsAcceptedAt: grant.termsAcceptedAt,
-    revoked: grant.revokedAt !== null,
-  }));
+  const held = asker.grants.filter((grant) => folioIds.includes(grant.folioId)).map((grant) => grant.id);
+  if (held.length === 0) return [];
+  return db.select().from(grants).where(inArray(grants.id, held));
 }
 
-/** Who may read a folio and who might once, by address. */
-export async function listGrants({ folio }: FolioInvite): Promise<GrantRecord[]> {
-  return (await grantRows([folio.id])).map(({ folioId: _, ...grant }) => grant);
+type Grant = typeof grants.$inferSelect;
+
+const lastEnd = (held: Grant[]): string | null =>
+  held.reduce<string | null>((last, { expiresAt }) => (last === null || expiresAt > last ? expiresAt : last), null);
+
+/** The terms as they were accepted last. */
+function ownTerms(held: Grant[], licence: string): FolioRecord['terms'] {
+  const at = ({ termsAcceptedAt }: Grant) => termsAcceptedAt ?? '';
+  const last = held.reduce((a, b) => (at(b) > at(a) ? b : a));
+  // Grants of before the licence was noted with them have none: what was accepted then cannot be told from here.
+  const isCurrent = last.termsAcceptedAt !== null && (last.termsLicence ?? licence) === licence;
+  return { acceptedAt: last.termsAcceptedAt, licence: last.termsLicence, isCurrent };
 }
 
-/** When the asker's own access to each folio ends. */
-async function ownEnds(asker: Asker, folioIds: string[]) {
+async function openRequests(asker: Asker, folioIds: string[]) {
+  if (asker.grants.length === 0) return [];
   const { db } = await database();
   return db
-    .select({ folioId: grants.folioId, expires: max(grants.expiresAt) })
-    .from(grants)
+    .select()
+    .from(accessRequests)
     .where(
       and(
-        eq(grants.accountId, asker.accountId),
-        inArray(grants.folioId, folioIds),
-        isNull(grants.revokedAt),
-        gt(grants.expiresAt, nowIso()),
+        eq(accessRequests.accountId, asker.accountId),
+        inArray(accessRequests.folioId, folioIds),
+        isNull(accessRequests.settledAt),
       ),
-    )
-    .groupBy(grants.folioId);
+    );
 }

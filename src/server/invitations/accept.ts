@@ -1,15 +1,15 @@
-import { and, eq, gt, isNull } from 'drizzle-orm';
-import type { Acceptance, InvitationPreview } from '#src/contracts/sharing.ts';
+import { and, eq, gt, isNull, sql } from 'drizzle-orm';
+import type { Acceptance, InvitationPreview } from '#src/contracts/invitations.ts';
 import { isUniqueViolation, type Tx } from '#src/db/client.ts';
 import { accounts, folios, grants, invitations, labs, memberships } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
+import { passwordFault } from '../accounts/password-rule.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { newId, nowIso, sha256 } from '../ids.ts';
 import { hashPassword } from '../passwords.ts';
 import { countAttempt } from '../rate-limit.ts';
 import { record } from '../trail.ts';
-import { passwordFault } from './password-rule.ts';
 import { invitationRows } from './record.ts';
 
 type Invitation = typeof invitations.$inferSelect;
@@ -44,10 +44,11 @@ export async function previewInvitation(token: string, clientAddress: string): P
     invitedBy: inviter.name,
     lab: { id: lab.id, name: lab.name },
     role: invitation.role,
-    folio: folio && { name: folio.name },
+    folio: folio && { name: folio.name, licence: folio.licence },
     level: invitation.level,
     hasAccount: account !== undefined,
     expiresAt: invitation.expiresAt,
+    accessUntil: invitation.grantExpiresAt,
   };
 }
 
@@ -70,11 +71,12 @@ export interface Accepted {
  *
  * @param asker - who is signed in, or null
  * @throws {HttpError} 404 for a token that does not work, 401 where the address has an account, 403 when signed in as
- *   somebody else or by an access token, 422 without a name or a good password, 429
+ *   somebody else or by an access token, 409 when the folio's licence is no longer the one shown, 422 without a name or
+ *   a good password, 429
  */
 export async function acceptInvitation(
   asker: Asker | null,
-  { token, name, password }: Acceptance,
+  { token, name, password, licence }: Acceptance,
   clientAddress: string,
 ): Promise<Accepted> {
   await limitAttempts(clientAddress);
@@ -98,7 +100,7 @@ export async function acceptInvitation(
     if (made) await tx.insert(accounts).values(made).catch(addressTaken);
     await tx.update(invitations).set({ acceptedBy: accountId }).where(eq(invitations.id, taken.id));
     const lab = taken.labId ? await join(tx, taken, accountId) : null;
-    const folio = taken.folioId ? await grantFolio(tx, taken, accountId) : null;
+    const folio = taken.folioId ? await grantFolio(tx, taken, accountId, licence) : null;
     const detail = { invitation: taken.id, lab, folio, newAccount: made !== null };
     await record(tx, { accountId }, { action: 'accept', subjectType: 'invitation', subjectId: taken.id, detail });
     return { email: taken.email, folio, lab };
@@ -120,7 +122,7 @@ async function newAccount(email: string, name: string | undefined, password: str
     ...(password ? [] : [{ pointer: '#/password', detail: 'Choose a password of at least 15 characters' }]),
   ];
   if (!name || !password) throw new HttpError(422, 'A new account needs a name and a password', { errors });
-  const fault = passwordFault(password, { email, name });
+  const fault = await passwordFault(password, { email, name });
   if (fault) throw new HttpError(422, fault, { errors: [{ pointer: '#/password', detail: fault }] });
   return { id: newId(), email, name, passwordHash: await hashPassword(password), createdAt: nowIso() };
 }
@@ -136,17 +138,24 @@ async function join(tx: Tx, { labId, role }: Invitation, accountId: string): Pro
 }
 
 /** A guest who reads the folio already gets the level and the end of the newer invitation. */
-async function grantFolio(tx: Tx, invitation: Invitation, accountId: string): Promise<string | null> {
-  const [folio] = await tx.select({ id: folios.id }).from(folios).where(eq(folios.id, invitation.folioId!));
+async function grantFolio(tx: Tx, invitation: Invitation, accountId: string, shown?: string): Promise<string | null> {
+  const [folio] = await tx.select().from(folios).where(eq(folios.id, invitation.folioId!));
   if (!folio) throw noInvitation();
+  if (shown && shown !== folio.licence)
+    throw new HttpError(409, `The licence of the folio is ${folio.licence} by now: read the invitation again`);
   const terms = {
     level: invitation.level ?? ('view' as const),
     expiresAt: invitation.grantExpiresAt!,
     termsAcceptedAt: nowIso(),
+    termsLicence: folio.licence,
     grantedBy: invitation.invitedBy,
   };
   const live = and(eq(grants.folioId, folio.id), eq(grants.accountId, accountId), isNull(grants.revokedAt));
-  const renewed = await tx.update(grants).set(terms).where(live).returning({ id: grants.id });
+  const renewed = await tx
+    .update(grants)
+    .set({ ...terms, version: sql`${grants.version} + 1` })
+    .where(live)
+    .returning({ id: grants.id });
   if (renewed.length === 0)
     await tx.insert(grants).values({ id: newId(), folioId: folio.id, accountId, createdAt: nowIso(), ...terms });
   return folio.id;

@@ -1,5 +1,5 @@
 import { desc, eq, type SQL } from 'drizzle-orm';
-import type { InvitationRecord } from '#src/contracts/sharing.ts';
+import type { InvitationRecord } from '#src/contracts/invitations.ts';
 import type { Db, Tx } from '#src/db/client.ts';
 import { accounts, folios, invitations, labs } from '#src/db/schema/index.ts';
 import type { FolioInvite, LabInvite } from '../access/sharing.ts';
@@ -42,6 +42,11 @@ export function invitationRecord(row: Awaited<ReturnType<typeof invitationRows>>
     invitedBy: inviter.name,
     createdAt: invitation.createdAt,
     expiresAt: invitation.expiresAt,
+    accessUntil: invitation.grantExpiresAt,
+    sends: invitation.sends,
+    sentAt: invitation.sentAt ?? invitation.createdAt,
+    acceptedAt: invitation.acceptedAt,
+    revokedAt: invitation.revokedAt,
   };
 }
 

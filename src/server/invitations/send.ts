@@ -1,96 +1,70 @@
-import { and, eq, isNull } from 'drizzle-orm';
-import type { GuestInvitation, InvitationRecord, MemberInvitation } from '#src/contracts/sharing.ts';
+import { and, eq, inArray, isNull } from 'drizzle-orm';
+import type { GuestInvitation, InvitationsSent, MemberInvitation } from '#src/contracts/invitations.ts';
 import type { Tx } from '#src/db/client.ts';
 import { invitations } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
-import type { FolioInvite, InvitationRevoke, LabInvite } from '../access/sharing.ts';
+import type { FolioInvite, LabInvite } from '../access/sharing.ts';
 import { database } from '../database.ts';
-import { HttpError } from '../http.ts';
-import { newId, newSecret, nowIso, sha256 } from '../ids.ts';
-import { guestInvitation, type MailContent, memberInvitation } from '../mail/templates.ts';
-import { queueMail } from '../mail.ts';
+import { newId, nowIso } from '../ids.ts';
 import { countAttempt } from '../rate-limit.ts';
-import { settings } from '../settings.ts';
 import { record } from '../trail.ts';
+import { endWithin, GRANT_DAYS, LONGEST_GRANT_DAYS } from './grant-end.ts';
+import { fromNow, LINK_DAYS, linkEnd, mailLink, newLink } from './link.ts';
 import { invitationRecord, invitationRows } from './record.ts';
 
-const DAY = 24 * 3600 * 1000; // ms
-/** How long a link works. */
-const LINK_DAYS = 14;
-/** How long a guest reads, where the inviter says nothing. */
-const GRANT_DAYS = 365;
-const LONGEST_GRANT_DAYS = 5 * 366;
 /** So that nobody's account becomes a way to send mail to the world. */
 const PER_HOUR = 100;
 
-const fromNow = (days: number) => new Date(Date.now() + days * DAY).toISOString();
+/** Count mails that an account has sent. @throws {HttpError} 429 above a hundred an hour */
+export const countMails = (asker: Asker, by: number) =>
+  countAttempt(`invite:${asker.accountId}`, { most: PER_HOUR, windowMs: 3600 * 1000, by });
 
-/** @throws {HttpError} 422 for an end that is past, or later than `days` from now */
-function endWithin(expires: string, days: number): string {
-  const end = new Date(expires).toISOString();
-  if (end <= nowIso()) throw badEnd('Choose a moment that is still to come');
-  if (end > fromNow(days)) throw badEnd(`Choose a moment at most ${days} days from now`);
-  return end;
-}
-const badEnd = (detail: string) =>
-  new HttpError(422, 'The invitation cannot end then', { errors: [{ pointer: '#/expires', detail }] });
+type Offer = Pick<
+  typeof invitations.$inferInsert,
+  'labId' | 'role' | 'folioId' | 'level' | 'grantExpiresAt' | 'expiresAt'
+>;
+type Addresses = Pick<MemberInvitation, 'email' | 'emails'>;
 
-type Offer = Pick<typeof invitations.$inferInsert, 'labId' | 'role' | 'folioId' | 'level' | 'grantExpiresAt'>;
-
-/** Ask a person to join a lab. An older invitation of that address into this lab is revoked. */
-export function inviteMember({ asker, lab }: LabInvite, input: MemberInvitation): Promise<InvitationRecord> {
-  const { email, role, expires } = input;
-  const expiresAt = expires ? endWithin(expires, LINK_DAYS) : fromNow(LINK_DAYS);
-  const mail = (link: string) => memberInvitation({ inviter: asker.name, lab: lab.name, role, link, expiresAt });
-  return send(asker, { email, expiresAt, offer: { labId: lab.id, role }, mail });
+/** Ask people to join a lab. Older invitations of these addresses into this lab are revoked. */
+export function inviteMember({ asker, lab }: LabInvite, input: MemberInvitation): Promise<InvitationsSent> {
+  const expiresAt = input.expires ? endWithin(input.expires, LINK_DAYS) : fromNow(LINK_DAYS);
+  return send(asker, input, { labId: lab.id, role: input.role, expiresAt });
 }
 
-/** Ask a partner outside to read a folio. An older invitation of that address to this folio is revoked. */
-export function inviteGuest({ asker, folio }: FolioInvite, input: GuestInvitation): Promise<InvitationRecord> {
-  const { email, level, expires } = input;
-  const grantExpiresAt = expires ? endWithin(expires, LONGEST_GRANT_DAYS) : fromNow(GRANT_DAYS);
-  // A link that outlives what it gives would be a promise that cannot be kept.
-  const expiresAt = [fromNow(LINK_DAYS), grantExpiresAt].sort()[0]!;
-  const mail = (link: string) => guestInvitation({ inviter: asker.name, folio: folio.name, level, link, expiresAt });
-  return send(asker, { email, expiresAt, offer: { folioId: folio.id, level, grantExpiresAt }, mail });
+/** Ask partners outside to read a folio. Older invitations of these addresses to this folio are revoked. */
+export function inviteGuest({ asker, folio }: FolioInvite, input: GuestInvitation): Promise<InvitationsSent> {
+  const grantExpiresAt = input.expires ? endWithin(input.expires, LONGEST_GRANT_DAYS) : fromNow(GRANT_DAYS);
+  const expiresAt = linkEnd(grantExpiresAt);
+  return send(asker, input, { folioId: folio.id, level: input.level, grantExpiresAt, expiresAt });
 }
 
-interface Sending {
-  email: string;
-  expiresAt: string;
-  offer: Offer;
-  mail: (link: string) => MailContent;
-}
-
-async function send(asker: Asker, { email, expiresAt, offer, mail }: Sending): Promise<InvitationRecord> {
-  await countAttempt(`invite:${asker.accountId}`, { most: PER_HOUR, windowMs: 3600 * 1000 });
-  const id = newId();
-  const token = newSecret();
-  // In the fragment, so that the token reaches no server log and no Referer header.
-  const link = `${settings().publicOrigin}/join#${token}`;
-  const row = {
-    id,
-    email,
-    tokenHash: sha256(token),
-    invitedBy: asker.accountId,
-    createdAt: nowIso(),
-    expiresAt,
-    ...offer,
-  };
+/** All of them go out, or none. */
+async function send(asker: Asker, { email, emails }: Addresses, offer: Offer): Promise<InvitationsSent> {
+  const to = emails ?? [email!];
+  await countMails(asker, to.length);
   const { write } = await database();
-  return write(async (tx) => {
-    await revokeOlder(tx, email, offer);
-    await tx.insert(invitations).values(row);
-    await queueMail(tx, { key: `invitation:${id}`, kind: 'invitation', to: email, ...mail(link) });
-    await record(tx, asker, {
-      action: 'invite',
-      subjectType: 'invitation',
-      subjectId: id,
-      detail: { email, ...offer },
-    });
-    const [made] = await invitationRows(tx, eq(invitations.id, id));
-    return invitationRecord(made!);
+  const items = await write(async (tx) => {
+    const made: string[] = [];
+    for (const address of to) made.push(await sendOne(tx, asker, address, offer));
+    const rows = await invitationRows(tx, inArray(invitations.id, made));
+    return made.map((id) => invitationRecord(rows.find(({ invitation }) => invitation.id === id)!));
   });
+  return emails ? { items } : items[0]!;
+}
+
+async function sendOne(tx: Tx, asker: Asker, email: string, offer: Offer): Promise<string> {
+  await revokeOlder(tx, email, offer);
+  const { token, tokenHash } = newLink();
+  const now = nowIso();
+  const facts = { id: newId(), email, tokenHash, invitedBy: asker.accountId, createdAt: now, sentAt: now };
+  const [row] = await tx
+    .insert(invitations)
+    .values({ ...facts, ...offer })
+    .returning();
+  await mailLink(tx, asker, row!, token);
+  const detail = { email, ...offer };
+  await record(tx, asker, { action: 'invite', subjectType: 'invitation', subjectId: facts.id, detail });
+  return facts.id;
 }
 
 /** The last word counts: of several invitations to one thing, an address holds one that works. */
@@ -100,15 +74,4 @@ async function revokeOlder(tx: Tx, email: string, { labId, folioId }: Offer): Pr
     .update(invitations)
     .set({ revokedAt: nowIso() })
     .where(and(eq(invitations.email, email), same, isNull(invitations.acceptedAt), isNull(invitations.revokedAt)));
-}
-
-/** Take an invitation back. @throws {HttpError} 409 when it was accepted */
-export async function revokeInvitation({ asker, invitation }: InvitationRevoke): Promise<void> {
-  const { write } = await database();
-  await write(async (tx) => {
-    const open = and(eq(invitations.id, invitation.id), isNull(invitations.acceptedAt));
-    const [row] = await tx.update(invitations).set({ revokedAt: nowIso() }).where(open).returning();
-    if (!row) throw new HttpError(409, 'It was accepted: end the access of that person instead');
-    await record(tx, asker, { action: 'revoke', subjectType: 'invitation', subjectId: invitation.id });
-  });
 }

@@ -37,51 +37,5 @@ function linkHtml({ link, label }: { link: string; label: string }): string {
 }
 
 /** "1 December 2026" in UTC, of an ISO 8601 instant. */
-const day = (iso: string) =>
+export const mailDay = (iso: string) =>
   new Date(iso).toLocaleDateString('en-GB', { day: 'numeric', month: 'long', year: 'numeric', timeZone: 'UTC' });
-
-const untilDay = (iso: string) => `The link works once, until ${day(iso)} (UTC), and only for this address.`;
-const UNEXPECTED = 'If you did not expect this, leave the link alone: without it nothing happens.';
-
-/** To someone asked to join a lab. */
-export function memberInvitation(facts: {
-  inviter: string;
-  lab: string;
-  role: 'lead' | 'contributor';
-  link: string;
-  /** When the link stops working, ISO 8601. */
-  expiresAt: string;
-}): MailContent {
-  return compose(`${facts.inviter} invites you to ${facts.lab}`, [
-    `${oneLine(facts.inviter)} invites you to join ${oneLine(facts.lab)} as ${facts.role}.`,
-    { label: 'Accept the invitation', link: facts.link },
-    untilDay(facts.expiresAt),
-    UNEXPECTED,
-  ]);
-}
-
-/** To a partner outside, asked to read a folio. */
-export function guestInvitation(facts: {
-  inviter: string;
-  folio: string;
-  level: 'view' | 'download';
-  link: string;
-  /** When the link stops working, ISO 8601. */
-  expiresAt: string;
-}): MailContent {
-  const may = facts.level === 'download' ? 'read and download' : 'read';
-  return compose(`${facts.inviter} shares "${facts.folio}" with you`, [
-    `${oneLine(facts.inviter)} invites you to ${may} the folio "${oneLine(facts.folio)}".`,
-    { label: 'Open the folio', link: facts.link },
-    untilDay(facts.expiresAt),
-    UNEXPECTED,
-  ]);
-}
-
-/** To the one who asked for a bundle. */
-export function bundleReady(facts: { title: string; link: string; size: number }): MailContent {
-  return compose(`Your bundle of "${facts.title}" is ready`, [
-    `The bundle of "${oneLine(facts.title)}" is ready, ${(facts.size / 1e6).toFixed(1)} MB.`,
-    { label: 'Fetch it (you will be asked to sign in)', link: facts.link },
-  ]);
-}

@@ -29,6 +29,38 @@ async function spareGrant(f: Fixture): Promise<string> {
   return grant(f.folio, f.people.guestNoGrant.id, 'view', f.people.lead.id, '2020-01-01T00:00:00.000Z');
 }
 
+async function northFolio(f: Fixture): Promise<string> {
+  const body = { name: f.fresh(), lab: f.north, licence: 'CC-BY-4.0' };
+  return (await json<{ id: string }>(call('POST', '/api/folios', { as: f.people.lead.token, json: body }), 201)).id;
+}
+
+/** A folio of North that the guests of the fixture read, or read until a moment ago. */
+async function guestFolio(f: Fixture, kind: Parameters<MatrixRow['send']>[1]): Promise<string> {
+  const { grant } = await import('../shared-content.ts');
+  const id = await northFolio(f);
+  const by = f.people.lead.id;
+  if (kind === 'guestView' || kind === 'guestDownload') await grant(id, f.people[kind].id, 'view', by);
+  if (kind === 'guestExpired')
+    await grant(id, f.people[kind].id, 'view', by, new Date(Date.now() - 1000).toISOString());
+  return id;
+}
+
+/** A request of a guest about North's folio that nobody answered yet, straight in the database. */
+async function request(f: Fixture): Promise<string> {
+  const { database } = await import('#src/server/database.ts');
+  const { newId, nowIso } = await import('#src/server/ids.ts');
+  const { accessRequests } = await import('#src/db/schema/index.ts');
+  const row = {
+    id: newId(),
+    accountId: f.people.guestView.id,
+    folioId: f.folio,
+    wants: 'longer' as const,
+    createdAt: nowIso(),
+  };
+  await (await database()).write((tx) => tx.insert(accessRequests).values(row));
+  return row.id;
+}
+
 /** A bundle ordered by the one who asks, or by the lead for those who may order none; never left to wait. */
 async function bundleOf(f: Fixture, accountId: string): Promise<string> {
   const { database } = await import('#src/server/database.ts');
@@ -92,6 +124,14 @@ export const rows: Record<string, MatrixRow> = {
     send: async (f) => ({ path: `/api/invitations/${await invitation(f)}` }),
     expect: northLeads(204, 404),
   },
+  readInvitation: {
+    send: async (f) => ({ path: `/api/invitations/${await invitation(f)}` }),
+    expect: northLeads(200, 404),
+  },
+  resendInvitation: {
+    send: async (f) => ({ path: `/api/invitations/${await invitation(f)}/resend` }),
+    expect: northLeads(200, 404),
+  },
   previewInvitation: {
     send: () => ({ path: '/api/invitations/preview', json: { token: 'unknown' } }),
     expect: everybody(404),
@@ -128,6 +168,46 @@ export const rows: Record<string, MatrixRow> = {
   revokeGrant: {
     send: async (f) => ({ path: `/api/folios/${f.folio}/grants/${await spareGrant(f)}` }),
     expect: northLeads(204, 404),
+  },
+  readGrant: {
+    send: async (f) => ({ path: `/api/folios/${f.folio}/grants/${await spareGrant(f)}` }),
+    expect: northLeads(200, 404),
+  },
+  changeGrant: {
+    send: async (f) => ({
+      path: `/api/folios/${f.folio}/grants/${await spareGrant(f)}`,
+      json: { level: 'download' },
+      headers: any,
+    }),
+    expect: northLeads(200, 404),
+  },
+  acceptTerms: {
+    send: (f) => ({ path: `/api/folios/${f.folio}/terms`, json: { licence: 'CC-BY-4.0' } }),
+    expect: statuses({ guests: 404, grantedGuests: 200, readToken: 403, southMembers: 404, others: 403 }),
+  },
+  askForMore: {
+    send: async (f, kind) => ({
+      path: `/api/folios/${await guestFolio(f, kind)}/requests`,
+      json: { wants: 'longer' },
+    }),
+    expect: statuses({ guests: 201, guestNoGrant: 404, readToken: 403, southMembers: 404, others: 403 }),
+  },
+  'askForMore, long after the end': {
+    send: (f) => ({ path: `/api/folios/${f.folio}/requests`, json: { wants: 'longer' } }),
+    expect: statuses({ guests: 404, grantedGuests: 201, readToken: 403, southMembers: 404, others: 403 }),
+  },
+  listAccessRequests: { send: (f) => ({ path: `/api/folios/${f.folio}/requests` }), expect: northLeads(200, 404) },
+  settleAccessRequest: {
+    send: async (f) => ({ path: `/api/requests/${await request(f)}/settle`, json: { outcome: 'declined' } }),
+    expect: northLeads(200, 404),
+  },
+  deleteFolio: {
+    send: async (f) => ({ path: `/api/folios/${await northFolio(f)}`, headers: any }),
+    expect: statuses({ guests: 403, readToken: 403, contributor: 403, southMembers: 404, others: 204 }),
+  },
+  'deleteFolio, that guests read': {
+    send: (f) => ({ path: `/api/folios/${f.folio}`, headers: any }),
+    expect: statuses({ guests: 403, readToken: 403, contributor: 403, southMembers: 404, others: 409 }),
   },
   listFolioInvitations: { send: (f) => ({ path: `/api/folios/${f.folio}/invitations` }), expect: northLeads(200, 404) },
   inviteGuest: {

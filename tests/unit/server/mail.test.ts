@@ -2,7 +2,7 @@ import { afterEach, beforeEach, expect, test } from 'vitest';
 import { type MailService, startMailService } from '#fakes/mail.ts';
 import type { Database } from '#src/db/client.ts';
 import { mails } from '#src/db/schema/index.ts';
-import { bundleReady, guestInvitation, memberInvitation } from '#src/server/mail/templates.ts';
+import { bundleReady, guestInvitation, memberInvitation } from '#src/server/mail/sharing-mails.ts';
 import {
   MAIL_TRIES,
   type MailTransport,
@@ -134,12 +134,22 @@ test('an invitation says who, what, until when, in text and in HTML', () => {
 
 test('what people typed cannot become markup or a header', () => {
   const inviter = '<img src=x onerror=alert(1)>\r\nBcc: all@demo.example';
-  const { subject, html } = guestInvitation({ inviter, folio: '"><b>', level: 'view', link, expiresAt });
+  const { subject, html } = guestInvitation({
+    inviter,
+    folio: '"><b>',
+    level: 'view',
+    licence: 'CC0-1.0',
+    link,
+    expiresAt,
+    accessUntil: expiresAt,
+  });
   expect(subject).not.toMatch(/[\r\n]/);
   expect(html).not.toMatch(/<img|<b>/);
-  expect(() => bundleReady({ title: 'x', link: 'javascript:alert(1)', size: 1 })).toThrow('begins with http');
+  expect(() => bundleReady({ title: 'x', link: 'javascript:alert(1)', size: 1, keptUntil: expiresAt })).toThrow(
+    'begins with http',
+  );
 });
 
 test('a bundle tells its size', () => {
-  expect(bundleReady({ title: 'Pigments', link, size: 12_345_678 }).text).toContain('12.3 MB');
+  expect(bundleReady({ title: 'Pigments', link, size: 12_345_678, keptUntil: expiresAt }).text).toContain('12.3 MB');
 });

@@ -9,7 +9,17 @@ import {
 } from '#src/components/folios/folio-facts.ts';
 
 const now = '2026-12-01T12:00:00.000Z';
-const grant = { id: 'g', email: 'a@b.example', name: 'A', level: 'view' as const, termsAcceptedAt: null };
+const grant = {
+  id: 'g',
+  email: 'a@b.example',
+  name: 'A',
+  level: 'view' as const,
+  termsAcceptedAt: null,
+  termsLicence: null,
+  revokedAt: null,
+  grantedBy: 'B',
+  createdAt: '2026-11-01T00:00:00.000Z',
+};
 
 test('a grant is open until its end and until it is revoked', () => {
   const grants = [
