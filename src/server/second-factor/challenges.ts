@@ -11,10 +11,11 @@ export const CHALLENGE_LIFE_MS = 5 * 60 * 1000;
 /** Keep a challenge for the one answer to it. */
 export async function keepChallenge(accountId: string, purpose: Purpose, challenge: string): Promise<void> {
   const { write } = await database();
-  const expiresAt = new Date(Date.now() + CHALLENGE_LIFE_MS).toISOString();
+  const createdAt = nowIso();
+  const expiresAt = new Date(Date.parse(createdAt) + CHALLENGE_LIFE_MS).toISOString();
   await write(async (tx) => {
-    await tx.delete(challenges).where(lt(challenges.expiresAt, nowIso()));
-    await tx.insert(challenges).values({ id: newId(), accountId, purpose, challenge, createdAt: nowIso(), expiresAt });
+    await tx.delete(challenges).where(lt(challenges.expiresAt, createdAt));
+    await tx.insert(challenges).values({ id: newId(), accountId, purpose, challenge, createdAt, expiresAt });
   });
 }
 
