@@ -84,7 +84,7 @@ describe('production', () => {
   beforeAll(async () => {
     const args = ['run', '-s', 'steward', '--', '--data', folder, '--email', 'first@lab.example', '--password-stdin'];
     const short = await runToEnd('npm', args, { env: PRODUCTION, input: 'short\n' });
-    expect(short).toMatchObject({ code: 1, stdout: '', stderr: expect.stringMatching(/^[^\n]+12 characters\.\n$/) });
+    expect(short).toMatchObject({ code: 1, stdout: '', stderr: expect.stringMatching(/^[^\n]+15 characters\.\n$/) });
     const made = await runToEnd('npm', args, { env: PRODUCTION, input: 'a long enough pass phrase\n' });
     expect(made).toMatchObject({ code: 0, stderr: '', stdout: expect.stringContaining('first@lab.example') });
     server = await startServer(folder, { env: { ...PRODUCTION, TRUST_PROXY: '1' }, headers: proxy });
