@@ -6,6 +6,8 @@ export interface DaySheet {
   toAttest: Waiting<{ id: string; title: string; formula: string; lab: string; bands: number; classes: string[] }>;
   /** Sent by the asker and still open. */
   invitations: Waiting<{ id: string; email: string; to: string; href: string; expiresAt: string }>;
+  /** Pairs of records that wait to be merged or told apart; null for everybody but a steward. */
+  mergeTasks: number | null;
   recentSpectra: {
     id: string;
     title: string;

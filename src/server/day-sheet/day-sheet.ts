@@ -1,6 +1,7 @@
 import type { DaySheet } from '#src/contracts/day-sheet.ts';
 import { type Asker, isMember } from '../access/asker.ts';
 import { listFolios } from '../folios/list.ts';
+import { countMergeTasks } from '../merges/tasks.ts';
 import { listSpectra } from '../spectra/list.ts';
 import { complexDrafts, spectrumDrafts } from './drafts.ts';
 import { invitationsOut } from './invitations-out.ts';
@@ -18,15 +19,17 @@ export async function daySheet(asker: Asker): Promise<DaySheet> {
       spectrumDrafts: nothing,
       toAttest: nothing,
       invitations: nothing,
+      mergeTasks: null,
       recentSpectra: [],
       folios,
     };
   }
-  const [drafts, unfinished, toAttest, invitations, recent] = await Promise.all([
+  const [drafts, unfinished, toAttest, invitations, mergeTasks, recent] = await Promise.all([
     complexDrafts(asker),
     spectrumDrafts(asker),
     bandsToAttest(asker),
     invitationsOut(asker),
+    countMergeTasks(asker),
     listSpectra(asker, { sort: '-created', limit: RECENT, facets: '0', state: ['registered'] }),
   ]);
   const recentSpectra = recent.items.map(({ id, title, formula, complex, lab, colour, createdAt, synthetic }) => ({
@@ -39,7 +42,7 @@ export async function daySheet(asker: Asker): Promise<DaySheet> {
     createdAt,
     synthetic,
   }));
-  return { drafts, spectrumDrafts: unfinished, toAttest, invitations, recentSpectra, folios };
+  return { drafts, spectrumDrafts: unfinished, toAttest, invitations, mergeTasks, recentSpectra, folios };
 }
 
 async function grantedFolios(asker: Asker): Promise<DaySheet['folios']> {

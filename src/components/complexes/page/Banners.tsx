@@ -2,17 +2,17 @@ import { Notice } from '#src/components/ui/StatusLine.tsx';
 import type { ComplexRecord } from '#src/contracts/complexes.ts';
 
 /** What a reader must know of the record before anything else. */
-export function Banners({ complex }: { complex: ComplexRecord }) {
-  const { mergedInto, state, withdrawnReason } = complex;
+export function Banners({ complex, alias }: { complex: ComplexRecord; alias: string | null }) {
+  const { accession, state, withdrawnReason } = complex;
   return (
     <>
-      {mergedInto && (
+      {alias && (
         <Notice title="Merged:" tone="plain">
-          this record lives on as{' '}
-          <a href={`/complexes/${mergedInto}`} className="link num">
-            {mergedInto}
+          <span className="num">{alias}</span> was merged into this record and lives on as{' '}
+          <a href={`/complexes/${accession}`} className="link num">
+            {accession}
           </a>
-          , where its spectra and preparations are.
+          .
         </Notice>
       )}
       {state === 'withdrawn' && <Notice title="Withdrawn:">{withdrawnReason ?? 'no reason is on record'}</Notice>}

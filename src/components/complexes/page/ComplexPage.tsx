@@ -31,16 +31,14 @@ export function ComplexPage({ first, ligands, answers, labs, sentences }: Comple
   const [open, setOpen] = useState<'edit' | StateChange | null>(null);
   const [said, setSaid] = useState<string | null>(null);
   const addAt =
-    complex.may.addSpectrum && !complex.mergedInto && labs !== null && labs.length > 0
-      ? `/spectra/new?complex=${complex.accession}`
-      : null;
+    complex.may.addSpectrum && labs !== null && labs.length > 0 ? `/spectra/new?complex=${complex.accession}` : null;
   const saved = (what: string) => () => {
     setSaid(what);
     void reload();
   };
   return (
     <div className="flex flex-col gap-5">
-      <Banners complex={complex} />
+      <Banners complex={complex} alias={first.alias ?? null} />
       <div className="grid items-start gap-6 lg:grid-cols-[292px_minmax(0,1fr)]">
         <aside aria-label="Identity" className="flex min-w-0 flex-col gap-5">
           <SpecimenLabel complex={complex} ligands={ligands} />

@@ -57,6 +57,7 @@ const ACTIONS: Record<string, string> = {
   withdraw: 'withdrawn',
   'add-preparation': 'preparation added',
   merge: 'merged',
+  'take-in': 'took in a merged record',
 };
 const FIELDS: Record<string, string> = {
   geometry: 'geometry',
@@ -72,6 +73,9 @@ const FIELDS: Record<string, string> = {
 export function historyText({ action, detail }: Pick<ComplexRecord['history'][number], 'action' | 'detail'>): string {
   const word = ACTIONS[action] ?? action;
   const reason = typeof detail.withdrawnReason === 'string' ? detail.withdrawnReason : null;
+  if (action === 'take-in' && typeof detail.from === 'string') return `${detail.from} was merged into this record`;
+  if (action === 'merge' && typeof detail.into === 'string')
+    return `${String(detail.accession)} was merged into ${detail.into}`;
   if (action === 'withdraw' && reason) return `${word}: ${reason}`;
   const fields = Object.keys(detail).flatMap((name) => FIELDS[name] ?? []);
   const reopened = typeof detail.reopened === 'number' && detail.reopened > 0 ? detail.reopened : null;

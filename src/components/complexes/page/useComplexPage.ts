@@ -10,6 +10,8 @@ import type { BandRecord, Points, SpectrumSummary } from '#src/contracts/spectra
 export interface FirstComplex {
   complex: ComplexRecord;
   etag: string;
+  /** The accession that was asked for, where that record was merged into this one. */
+  alias?: string | null;
   spectra: SpectrumSummary[];
   /** How many spectra there are in sight; more than `spectra` where there are very many. */
   totalSpectra: number;

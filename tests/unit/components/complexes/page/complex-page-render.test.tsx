@@ -85,10 +85,10 @@ const band = {
 } satisfies BandRecord;
 
 const sentences = { NO_CAUTION_COMPUTED: 'none computed', NO_RULE_MATCHED: 'no rule', STANDING_SENTENCE: 'standing' };
-const page = (record: ComplexRecord, labs: { id: string; name: string }[] | null) =>
+const page = (record: ComplexRecord, labs: { id: string; name: string }[] | null, alias: string | null = null) =>
   renderToStaticMarkup(
     <ComplexPage
-      first={{ complex: record, etag: '"1"', spectra: [spectrum], totalSpectra: 1, bands: { s1: [band] } }}
+      first={{ complex: record, etag: '"1"', alias, spectra: [spectrum], totalSpectra: 1, bands: { s1: [band] } }}
       ligands={[]}
       answers={{}}
       labs={labs}
@@ -128,9 +128,8 @@ test('a draft can be registered or deleted, a withdrawn record tells why and tak
   expect(withdrawn).not.toMatch(/Add a spectrum|>Withdraw<|>Edit</);
 });
 
-test('a merged record points to where it lives on', () => {
-  const may = { change: true, addSpectrum: true, download: true };
-  const html = page({ ...complex, may, mergedInto: 'ZF345002-L' }, [lab]);
-  expect(html).toContain('/complexes/ZF345002-L');
-  expect(html).not.toContain('/spectra/new');
+test('the page of an accession that was merged says where it lives on', () => {
+  const html = page(complex, [lab], 'ZF345002-L');
+  expect(text(html)).toContain(`ZF345002-L was merged into this record and lives on as ${complex.accession}`);
+  expect(text(page(complex, [lab]))).not.toContain('merged');
 });
