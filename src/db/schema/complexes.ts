@@ -236,3 +236,29 @@ export const mergeTasks = sqliteTable('merge_task', {
   outcome: text({ enum: ['merged', 'different'] }),
   reason: text(),
 });
+
+/** A fit of field and repulsion to observed bands of one centre, as it was saved. Never changed, only followed. */
+export const levelFits = sqliteTable(
+  'level_fit',
+  {
+    id: text().primaryKey(),
+    complexId: text()
+      .notNull()
+      .references(() => complexes.id),
+    centreOrdinal: integer().notNull(),
+    makerId: text()
+      .notNull()
+      .references(() => accounts.id),
+    /** What was fitted, as `derive/fit` takes it, with the spectra and bands that the wavenumbers come from. */
+    input: text({ mode: 'json' }).$type<Record<string, unknown>>().notNull(),
+    /** The candidate that was chosen, as `derive/fit` answered. */
+    result: text({ mode: 'json' }).$type<Record<string, unknown>>().notNull(),
+    /** Version of the program that computed it. */
+    release: text().notNull(),
+    note: text(),
+    visibility: text({ enum: visibilities }).notNull().default('programme'),
+    createdAt: text().notNull(),
+    withdrawnAt: text(),
+  },
+  (t) => [index('level_fit_complex').on(t.complexId, t.centreOrdinal)],
+);
