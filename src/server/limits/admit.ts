@@ -10,7 +10,8 @@ import { RequestCounter, type Standing } from './counter.ts';
 import { DERIVE_AT_ONCE, policyOf } from './policy.ts';
 
 const counter = new RequestCounter(database);
-const derivations = new AtOnce(DERIVE_AT_ONCE);
+/** Turns of the derivations of each account, in this process. */
+export const derivationTurns = new AtOnce(DERIVE_AT_ONCE);
 
 /** A request that was let in. */
 export interface Admitted {
@@ -42,7 +43,7 @@ export async function admitWithin(
     });
   }
   if (policy.name !== 'derive') return { headers, leave: () => undefined };
-  return { headers, leave: await derivations.enter(asker?.accountId ?? '', context.request.signal) };
+  return { headers, leave: await derivationTurns.enter(asker?.accountId ?? '', context.request.signal) };
 }
 
 /** Tokens ask apart from each other and from the screens; what is costly counts for the account, whichever way it came. */
