@@ -50,6 +50,7 @@ export const DiagramInput = z.strictObject({
   ratioCB: z.number().positive().max(20),
   max: z.number().positive().max(1000).optional(),
   points: z.number().int().min(2).max(2001).optional(),
+  view: z.enum(['ground', 'absolute']).optional().describe('what energies are counted from; ground unless told'),
 });
 export const DiagramResult = z
   .looseObject({
@@ -59,6 +60,61 @@ export const DiagramResult = z
     crossings: z.array(z.looseObject({ x: z.number(), from: z.string(), to: z.string() })),
   })
   .meta({ id: 'DiagramResult' });
+
+export const FitInput = z
+  .strictObject({
+    n: Electrons,
+    geometry: CubicGeometry,
+    metal: z.string().max(3).optional().describe('symbol, for the B and C/B of the free ion'),
+    oxidationState: z.number().int().min(-4).max(9).optional(),
+    spin: z.enum(['high', 'low']).optional(),
+    ratioCB: z.number().positive().max(20).optional().describe('C/B; else the free ion’s, else 4.5'),
+    bands: z
+      .array(
+        z.strictObject({
+          wavenumber: z.number().positive().max(1e6).describe('cm⁻¹'),
+          to: z.string().max(20).optional().describe('4T2g, 4T1g(P)'),
+          uncertainty: z.number().positive().max(1e6).optional().describe('standard uncertainty in cm⁻¹'),
+        }),
+      )
+      .min(1)
+      .max(12),
+  })
+  .meta({ id: 'FitInput' });
+
+const maybe = z.number().nullable();
+export const FitResult = z
+  .looseObject({
+    candidates: z.array(
+      z.looseObject({
+        delta: maybe.describe('cm⁻¹; null where no band depends on it'),
+        B: maybe,
+        C: maybe,
+        errors: z.looseObject({ delta: maybe, B: maybe, C: maybe }),
+        correlation: z.looseObject({ deltaB: maybe, deltaC: maybe, BC: maybe }),
+        beta: maybe.describe('B over that of the free ion'),
+        freeIon: z.looseObject({ B: z.number(), source: z.string() }).nullable(),
+        assignments: z.array(
+          z.looseObject({
+            wavenumber: z.number(),
+            to: z.string(),
+            level: z.number().int().describe('which level of its term above the ground, from 1'),
+            calculated: z.number(),
+            residual: z.number(),
+          }),
+        ),
+        rms: z.number(),
+        ground: z.string(),
+        spin: z.enum(['high', 'low']).nullable(),
+        ratioCB: maybe.describe('C/B of the values told'),
+        ratioSource: z.enum(['given', 'free ion', 'assumed', 'fitted']),
+        degreesOfFreedom: z.number().int(),
+        converged: z.boolean(),
+        remarks: z.array(z.string()).describe('what speaks against the candidate'),
+      }),
+    ),
+  })
+  .meta({ id: 'FitResult' });
 
 const derive = {
   tag: 'Ligand field',
@@ -83,5 +139,12 @@ export const ligandFieldRoutes = {
     summary: 'Energy-level diagram: energy/B against field/B',
     body: DiagramInput,
     answers: DiagramResult,
+  }),
+  deriveFit: route({
+    ...derive,
+    path: '/api/derive/fit',
+    summary: 'Δ, B and C from observed bands, with candidate assignments',
+    body: FitInput,
+    answers: FitResult,
   }),
 };

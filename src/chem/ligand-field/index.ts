@@ -1,6 +1,8 @@
 export { D_ORBITALS, type DOrbital } from './d-orbitals.ts';
 export { type Diagram, type DiagramRequest, diagram } from './diagram.ts';
 export { fieldLevels, type Level } from './field-levels.ts';
+export { type Fit, type FitCandidate, type FitRequest, fit } from './fit/fit.ts';
+export type { FitSpin } from './fit/ground.ts';
 export { type FreeIonTerm, freeIonTerms, hundGround, termLetter } from './free-ion.ts';
 export {
   estimateBeta,

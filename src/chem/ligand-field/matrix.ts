@@ -77,7 +77,8 @@ export function besideEachOther(parts: readonly Matrix[]): Matrix {
   );
   let at = 0;
   for (const { rows, columns, data } of parts) {
-    for (let i = 0; i < rows; i++) joined.data.set(data.subarray(i * columns, (i + 1) * columns), i * joined.columns + at);
+    for (let i = 0; i < rows; i++)
+      joined.data.set(data.subarray(i * columns, (i + 1) * columns), i * joined.columns + at);
     at += columns;
   }
   return joined;

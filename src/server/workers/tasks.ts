@@ -1,6 +1,6 @@
 import { readFormula } from '#src/chem/formula/index.ts';
 import { enumerateIsomers } from '#src/chem/geometry/index.ts';
-import { diagram, levels } from '#src/chem/ligand-field/index.ts';
+import { diagram, fit, levels } from '#src/chem/ligand-field/index.ts';
 import { type FitOptions, fitBands, type ReadOptions, readSpectrumFile } from '#src/chem/spectra/index.ts';
 
 type Rest = Parameters<typeof readFormula>;
@@ -16,6 +16,7 @@ export const tasks = {
   isomers: enumerateIsomers,
   levels,
   diagram,
+  fit,
   bands: ({ x, y, options }: { x: number[]; y: number[]; options: FitOptions }) => fitBands(x, y, options),
   spectrumFile: ({ bytes, options }: { bytes: Uint8Array; options: ReadOptions }) => readSpectrumFile(bytes, options),
 };

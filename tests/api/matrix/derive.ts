@@ -51,6 +51,13 @@ export const rows: Record<string, MatrixRow> = {
     }),
     expect: anybody,
   },
+  deriveFit: {
+    send: () => ({
+      path: '/api/derive/fit',
+      json: { n: 3, geometry: 'OC-6', bands: [{ wavenumber: 17_400, to: '4T2g' }, { wavenumber: 24_500 }] },
+    }),
+    expect: anybody,
+  },
   deriveDiagram: {
     send: () => ({ path: '/api/derive/diagram', json: { n: 3, geometry: 'OC-6', ratioCB: 4.5, max: 40, points: 11 } }),
     expect: anybody,
