@@ -1,15 +1,15 @@
 import { pageOf } from './common.ts';
 import {
-  AccountDetail,
-  AccountPatch,
-  AccountQuery,
-  AccountRecord,
   Departure,
   DepartureQuery,
   MeasuredRecord,
   MemberDetail,
   MemberInput,
   MemberPatch,
+  PersonDetail,
+  PersonPatch,
+  PersonQuery,
+  PersonRecord,
   SessionsEnded,
 } from './people.ts';
 import { route } from './route.ts';
@@ -71,40 +71,49 @@ export const peopleRoutes = {
     status: 200,
     answers: MeasuredRecord,
   }),
-  listAccounts: route({
+  listPeople: route({
     ...look,
     method: 'GET',
     path: '/api/accounts',
     summary: 'Everybody who has an account, by name',
-    query: AccountQuery,
+    query: PersonQuery,
     status: 200,
-    answers: pageOf(AccountRecord),
+    answers: pageOf(PersonRecord),
   }),
-  readAccount: route({
+  readPerson: route({
     ...look,
     method: 'GET',
     path: '/api/accounts/{id}',
     summary: 'An account',
     status: 200,
-    answers: AccountDetail,
+    answers: PersonDetail,
   }),
-  changeAccount: route({
+  changePerson: route({
     ...steward,
     method: 'PATCH',
     path: '/api/accounts/{id}',
     summary: 'Deactivate or reactivate an account, make a steward, correct a name',
-    body: AccountPatch,
+    body: PersonPatch,
     conditional: true,
     status: 200,
-    answers: AccountDetail,
+    answers: PersonDetail,
     refusals: { 409: 'Oneself, or the only steward' },
   }),
-  endAccountSessions: route({
+  endPersonSessions: route({
     ...steward,
     method: 'POST',
     path: '/api/accounts/{id}/end-sessions',
     summary: 'Sign a person out everywhere',
     status: 200,
     answers: SessionsEnded,
+  }),
+  sendPasswordReset: route({
+    ...steward,
+    method: 'POST',
+    path: '/api/accounts/{id}/password-reset',
+    summary: 'Mail a person a link to choose a new password',
+    status: 204,
+    answers: null,
+    refusals: { 409: 'The account is deactivated' },
   }),
 };

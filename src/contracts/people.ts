@@ -48,12 +48,12 @@ export const MeasuredRecord = z
   .meta({ id: 'Measured' });
 export type MeasuredRecord = z.infer<typeof MeasuredRecord>;
 
-export const AccountQuery = Paging.extend({
+export const PersonQuery = Paging.extend({
   q: z.string().trim().max(200).optional().describe('Part of a name or an address'),
   state: AccountState.optional(),
 });
-export type AccountQuery = z.infer<typeof AccountQuery>;
-export const AccountRecord = z
+export type PersonQuery = z.infer<typeof PersonQuery>;
+export const PersonRecord = z
   .object({
     id: z.string(),
     name: z.string(),
@@ -67,26 +67,29 @@ export const AccountRecord = z
     lastSignInAt: Instant.nullable().describe('Null where there was none in the last 90 days'),
     secondFactor: z.boolean(),
   })
-  .meta({ id: 'Account' });
-export type AccountRecord = z.infer<typeof AccountRecord>;
-export const AccountDetail = AccountRecord.extend({
-  drafts: z
-    .array(
-      z.object({
-        kind: z.enum(['complex', 'preparation', 'spectrum']),
-        id: z.string(),
-        name: z.string(),
-        accession: z.string(),
-        lab: LabRef,
-      }),
-    )
-    .describe('What the person began and did not register, at most 500; leads of the labs see it as well'),
-  tokens: count.describe('Access tokens that work'),
-  invitations: count.describe('Invitations sent by the person and still open'),
-}).meta({ id: 'AccountDetail' });
-export type AccountDetail = z.infer<typeof AccountDetail>;
-export const AccountPatch = z
+  .meta({ id: 'Person' });
+export type PersonRecord = z.infer<typeof PersonRecord>;
+// Without the last sign-in: otherwise every sign-in would make an ETag stale that a steward has just read.
+export const PersonDetail = PersonRecord.omit({ lastSignInAt: true })
+  .extend({
+    drafts: z
+      .array(
+        z.object({
+          kind: z.enum(['complex', 'preparation', 'spectrum']),
+          id: z.string(),
+          name: z.string(),
+          accession: z.string(),
+          lab: LabRef,
+        }),
+      )
+      .describe('What the person began and did not register, at most 500; leads of the labs see it as well'),
+    tokens: count.describe('Access tokens that work'),
+    invitations: count.describe('Invitations sent by the person and still open'),
+  })
+  .meta({ id: 'PersonDetail' });
+export type PersonDetail = z.infer<typeof PersonDetail>;
+export const PersonPatch = z
   .strictObject({ state: AccountState.optional(), steward: z.boolean().optional(), name: Name.optional() })
-  .meta({ id: 'AccountPatch' });
-export type AccountPatch = z.infer<typeof AccountPatch>;
+  .meta({ id: 'PersonPatch' });
+export type PersonPatch = z.infer<typeof PersonPatch>;
 export const SessionsEnded = z.object({ ended: count }).meta({ id: 'SessionsEnded' });

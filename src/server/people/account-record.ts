@@ -1,5 +1,5 @@
 import { and, asc, count, eq, gt, inArray, isNotNull, isNull, max, or, sql } from 'drizzle-orm';
-import type { AccountDetail, AccountRecord } from '#src/contracts/people.ts';
+import type { PersonDetail, PersonRecord } from '#src/contracts/people.ts';
 import type { Db } from '#src/db/client.ts';
 import { type accounts, folios, grants, labs, memberships, secondFactors, sessions } from '#src/db/schema/index.ts';
 import type { AccountAccess, StewardAccess } from '../access/people.ts';
@@ -11,7 +11,7 @@ import { countOpenInvitations, countTokens } from './revoke.ts';
 type Row = typeof accounts.$inferSelect;
 
 /** Accounts as stewards get them. */
-export async function accountRecords(_proof: Pick<StewardAccess, 'asker'>, rows: Row[]): Promise<AccountRecord[]> {
+export async function accountRecords(_proof: Pick<StewardAccess, 'asker'>, rows: Row[]): Promise<PersonRecord[]> {
   if (rows.length === 0) return [];
   const { db } = await database();
   const ids = rows.map(({ id }) => id);
@@ -81,7 +81,7 @@ const readableFolios = (db: Db, ids: string[]) =>
 export async function accountDetail({
   asker,
   account,
-}: Pick<AccountAccess, 'asker' | 'account'>): Promise<AccountDetail> {
+}: Pick<AccountAccess, 'asker' | 'account'>): Promise<PersonDetail> {
   const { db } = await database();
   const [[record], drafts, tokens, invitations] = await Promise.all([
     accountRecords({ asker }, [account]),
@@ -89,5 +89,6 @@ export async function accountDetail({
     countTokens(db, account.id),
     countOpenInvitations(db, account.id),
   ]);
-  return { ...record!, drafts, tokens, invitations };
+  const { lastSignInAt: _, ...facts } = record!;
+  return { ...facts, drafts, tokens, invitations };
 }

@@ -1,9 +1,10 @@
 import { and, asc, eq, ne, or, type SQL, sql } from 'drizzle-orm';
 import type { Page } from '#src/contracts/common.ts';
-import type { AccountDetail, AccountPatch, AccountQuery, AccountRecord } from '#src/contracts/people.ts';
+import type { PersonDetail, PersonPatch, PersonQuery, PersonRecord } from '#src/contracts/people.ts';
 import type { Tx } from '#src/db/client.ts';
 import { accounts } from '#src/db/schema/index.ts';
 import type { AccountAccess, StewardAccess } from '../access/people.ts';
+import { sendReset } from '../accounts/reset-password.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { nowIso } from '../ids.ts';
@@ -14,7 +15,7 @@ import { accountDetail, accountRecords } from './account-record.ts';
 import { revokeTokens, revokeUnbackedInvitations } from './revoke.ts';
 
 /** Everybody who has an account, by name. */
-export async function listAccounts({ asker }: StewardAccess, query: AccountQuery): Promise<Page<AccountRecord>> {
+export async function listAccounts({ asker }: StewardAccess, query: PersonQuery): Promise<Page<PersonRecord>> {
   const { db } = await database();
   const { q, state, limit, cursor } = query;
   const where = and(q ? named(q) : undefined, state ? eq(accounts.state, state) : undefined);
@@ -51,7 +52,7 @@ async function requireAnotherSteward(tx: Tx, accountId: string): Promise<void> {
  *
  * @throws {HttpError} 409 for deactivating oneself, for the only steward, for making a deactivated account steward; 412
  */
-export async function changeAccount({ asker, account }: AccountAccess, patch: AccountPatch): Promise<AccountDetail> {
+export async function changeAccount({ asker, account }: AccountAccess, patch: PersonPatch): Promise<PersonDetail> {
   const next = {
     state: patch.state ?? account.state,
     steward: patch.steward ?? account.steward,
@@ -110,4 +111,11 @@ export async function endAccountSessions({ asker, account }: AccountAccess): Pro
     });
     return { ended };
   });
+}
+
+/** Mail a person a link to choose a new password: nobody else ever sets one. @throws {HttpError} 409 when deactivated */
+export async function sendPasswordReset({ asker, account }: AccountAccess): Promise<void> {
+  if (account.state !== 'active') throw new HttpError(409, 'This account is deactivated: reactivate it first');
+  const { write } = await database();
+  await write((tx) => sendReset(tx, asker, account));
 }

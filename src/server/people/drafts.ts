@@ -1,5 +1,5 @@
 import { and, count, eq, sql } from 'drizzle-orm';
-import type { AccountDetail, DraftCounts } from '#src/contracts/people.ts';
+import type { DraftCounts, PersonDetail } from '#src/contracts/people.ts';
 import type { Db, Tx } from '#src/db/client.ts';
 import { complexes, labs, preparations, spectra } from '#src/db/schema/index.ts';
 import { nowIso } from '../ids.ts';
@@ -50,7 +50,7 @@ export async function handOverDrafts(
 const MOST = 500;
 
 /** What a person began in any lab and did not register: complexes, then preparations, then spectra. */
-export async function listDrafts(db: Db, makerId: string): Promise<AccountDetail['drafts']> {
+export async function listDrafts(db: Db, makerId: string): Promise<PersonDetail['drafts']> {
   const lab = { id: labs.id, name: labs.name };
   const mine = (t: Table) => and(eq(t.state, 'draft'), eq(t.makerId, makerId));
   const { accession } = complexes;

@@ -4,12 +4,12 @@ import { endpoint } from '#src/server/endpoint.ts';
 import { accountDetail } from '#src/server/people/account-record.ts';
 import { changeAccount } from '#src/server/people/accounts.ts';
 
-export const GET = endpoint(routes.readAccount, {
+export const GET = endpoint(routes.readPerson, {
   sight: ({ asker, params }) => seeAccount(asker, params.id!),
   act: ({ access }) => accountDetail(access),
 });
 
-export const PATCH = endpoint(routes.changeAccount, {
+export const PATCH = endpoint(routes.changePerson, {
   sight: ({ asker, params }) => seeAccount(asker, params.id!),
   represent: (access) => accountDetail(access),
   act: ({ access, body }) => changeAccount(access, body),

@@ -1,0 +1,9 @@
+import { routes } from '#src/contracts/routes.ts';
+import { seeAccount } from '#src/server/access/people.ts';
+import { endpoint } from '#src/server/endpoint.ts';
+import { sendPasswordReset } from '#src/server/people/accounts.ts';
+
+export const POST = endpoint(routes.sendPasswordReset, {
+  sight: ({ asker, params }) => seeAccount(asker, params.id!),
+  act: ({ access }) => sendPasswordReset(access),
+});
