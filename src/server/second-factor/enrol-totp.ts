@@ -3,6 +3,7 @@ import { toString as qrText } from 'qrcode';
 import type { RecoveryCodes, TotpConfirmation, TotpInput, TotpStarted } from '#src/contracts/second-factor.ts';
 import { secondFactors } from '#src/db/schema/index.ts';
 import type { FactorChange, FactorsChange } from '../access/second-factor.ts';
+import { forgiveProof, provePassword } from '../accounts/prove-password.ts';
 import { database } from '../database.ts';
 import { HttpError, notInSight } from '../http.ts';
 import { newId, nowIso } from '../ids.ts';
@@ -10,7 +11,6 @@ import { countAttempt } from '../rate-limit.ts';
 import { beginToCount } from './begin-to-count.ts';
 import { decipher, encipher } from './cipher.ts';
 import { requireRoom } from './factors.ts';
-import { requireOwnPassword } from './own-password.ts';
 import { groupedBase32, newTotpSecret, totpStep, totpUri } from './totp.ts';
 
 /** How long a begun factor may wait for its first code, in milliseconds. */
@@ -24,12 +24,13 @@ const BEGUN_FOR_MS = 3600 * 1000;
  * @throws {HttpError} 422 for a wrong password, 409 when there are too many factors
  */
 export async function startTotp({ asker }: FactorsChange, { name, password }: TotpInput): Promise<TotpStarted> {
-  await requireOwnPassword(asker, password);
+  await provePassword(asker, password, 'password');
   await requireRoom(asker);
   const { accountId, email } = asker;
   const [id, secret] = [newId(), newTotpSecret()];
   const { write } = await database();
   await write(async (tx) => {
+    await forgiveProof(tx, accountId);
     await tx
       .delete(secondFactors)
       .where(

@@ -4,13 +4,13 @@ import type { Tx } from '#src/db/client.ts';
 import { accounts, recoveryCodes, secondFactors, sessions } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
 import type { FactorChange, FactorsChange } from '../access/second-factor.ts';
+import { forgiveProof, provePassword } from '../accounts/prove-password.ts';
 import { database } from '../database.ts';
 import { HttpError, notInSight } from '../http.ts';
 import { newId } from '../ids.ts';
 import { factorRemoved, recoveryCodesRenewed } from '../mail/second-factor-mails.ts';
 import { queueMail } from '../mail.ts';
 import { record } from '../trail.ts';
-import { requireOwnPassword } from './own-password.ts';
 import { recoveryCodesLeft, replaceRecoveryCodes } from './recovery-codes.ts';
 import { confirmedFactors, factorRequired, hasFactor } from './rule.ts';
 
@@ -54,7 +54,7 @@ export async function requireRoom({ accountId }: Asker): Promise<void> {
  * @throws {HttpError} 422 for a wrong password, 409 for the last factor of a steward in production
  */
 export async function removeFactor({ asker, factor }: FactorChange, { password }: WithPassword): Promise<void> {
-  await requireOwnPassword(asker, password);
+  await provePassword(asker, password, 'password');
   const { accountId } = asker;
   const { id, kind, name } = factor;
   const { write } = await database();
@@ -65,6 +65,7 @@ export async function removeFactor({ asker, factor }: FactorChange, { password }
       throw new HttpError(409, 'A steward keeps at least one second factor: set up another one, then remove this one');
     const removed = await tx.delete(secondFactors).where(eq(secondFactors.id, id)).returning({ id: secondFactors.id });
     if (removed.length === 0) throw notInSight();
+    await forgiveProof(tx, accountId);
     if (!factor.confirmedAt) return;
     if (left === 0) await forgetFactors(tx, accountId);
     const entry = { action: 'second-factor.removed', subjectType: 'account' as const, subjectId: accountId };
@@ -88,12 +89,13 @@ export async function forgetFactors(tx: Tx, accountId: string): Promise<void> {
  * @throws {HttpError} 422 for a wrong password, 409 where there is no factor that they could stand in for
  */
 export async function renewRecoveryCodes({ asker }: FactorsChange, { password }: WithPassword): Promise<RecoveryCodes> {
-  await requireOwnPassword(asker, password);
+  await provePassword(asker, password, 'password');
   const { accountId, email } = asker;
   const { write } = await database();
   return write(async (tx) => {
     if (!(await hasFactor(tx, accountId)))
       throw new HttpError(409, 'Recovery codes stand in for a second factor: set one up first');
+    await forgiveProof(tx, accountId);
     const codes = await replaceRecoveryCodes(tx, accountId);
     const kind = 'recovery-codes.renewed';
     await record(tx, asker, { action: kind, subjectType: 'account', subjectId: accountId });

@@ -5,6 +5,7 @@ import type { PasskeyInput, RecoveryCodes, WithPassword } from '#src/contracts/s
 import { isUniqueViolation } from '#src/db/client.ts';
 import { secondFactors } from '#src/db/schema/index.ts';
 import type { FactorsChange } from '../access/second-factor.ts';
+import { forgiveProof, provePassword } from '../accounts/prove-password.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { newId, nowIso } from '../ids.ts';
@@ -12,7 +13,6 @@ import { log } from '../log.ts';
 import { beginToCount } from './begin-to-count.ts';
 import { CHALLENGE_LIFE_MS, keepChallenge, takeChallenge } from './challenges.ts';
 import { requireRoom } from './factors.ts';
-import { requireOwnPassword } from './own-password.ts';
 import { relyingParty } from './relying-party.ts';
 import { confirmedFactors } from './rule.ts';
 
@@ -36,7 +36,7 @@ export async function passkeysOf(accountId: string): Promise<{ id: string; trans
  * @throws {HttpError} 422 for a wrong password, 409 when there are too many factors
  */
 export async function startPasskey({ asker }: FactorsChange, { password }: WithPassword) {
-  await requireOwnPassword(asker, password);
+  await provePassword(asker, password, 'password');
   await requireRoom(asker);
   const { id, name } = relyingParty();
   const options = await generateRegistrationOptions({
@@ -52,6 +52,8 @@ export async function startPasskey({ asker }: FactorsChange, { password }: WithP
     supportedAlgorithmIDs: ALGORITHMS,
   });
   await keepChallenge(asker.accountId, 'register', options.challenge);
+  const { write } = await database();
+  await write((tx) => forgiveProof(tx, asker.accountId));
   return options;
 }
 

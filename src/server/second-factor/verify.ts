@@ -1,5 +1,5 @@
 import { and, eq, isNull, lt, or } from 'drizzle-orm';
-import { accounts, secondFactors } from '#src/db/schema/index.ts';
+import { accounts, limits, secondFactors } from '#src/db/schema/index.ts';
 import { database } from '../database.ts';
 import { newId, nowIso } from '../ids.ts';
 import { log } from '../log.ts';
@@ -40,11 +40,15 @@ export async function passesSecondFactor(
   if (given.passkey) return passesPasskey(accountId, given.passkey);
   const code = given.code?.trim();
   if (!code || code.length > 100) return false;
-  await countAttempt(`second-factor:${accountId}`, { most: 10, windowMs: QUARTER_HOUR });
+  const key = `second-factor:${accountId}`;
+  await countAttempt(key, { most: 10, windowMs: QUARTER_HOUR });
   // Three of a million codes fit at any moment: patience must not find one either.
   await countAttempt(`second-factor-day:${accountId}`, { most: 50, windowMs: DAY });
   const digits = code.replace(/[\s-]/g, '');
-  return /^\d{6}$/.test(digits) ? passesTotp(accountId, digits) : passesRecovery(accountId, code);
+  const passes = await (/^\d{6}$/.test(digits) ? passesTotp(accountId, digits) : passesRecovery(accountId, code));
+  const { write } = await database();
+  if (passes) await write((tx) => tx.delete(limits).where(eq(limits.key, key)));
+  return passes;
 }
 
 async function passesTotp(accountId: string, code: string): Promise<boolean> {
