@@ -3,6 +3,8 @@ export interface NavigationItem {
   href: string;
   label: string;
   forGuests: boolean;
+  /** For stewards alone. */
+  forStewards?: true;
 }
 
 const ITEMS: readonly NavigationItem[] = [
@@ -12,12 +14,14 @@ const ITEMS: readonly NavigationItem[] = [
   { href: '/ligands', label: 'Ligands', forGuests: false },
   { href: '/folios', label: 'Folios', forGuests: true },
   { href: '/labs', label: 'Labs', forGuests: false },
+  { href: '/trail', label: 'Trail', forGuests: false, forStewards: true },
 ];
 
 /** What stands in the head of the page for somebody; nothing for nobody. */
 export function navigationFor(role: string | undefined): readonly NavigationItem[] {
   if (role === undefined) return [];
-  return role === 'guest' ? ITEMS.filter(({ forGuests }) => forGuests) : ITEMS;
+  const open = role === 'steward' ? ITEMS : ITEMS.filter(({ forStewards }) => !forStewards);
+  return role === 'guest' ? open.filter(({ forGuests }) => forGuests) : open;
 }
 
 /** Whether a page lies under an item: the day sheet only itself, the others with all below them. */

@@ -6,7 +6,8 @@ const labels = (role: string | undefined) => navigationFor(role).map(({ label })
 test('a guest is led to complexes and folios only, nobody nowhere', () => {
   expect(labels('guest')).toEqual(['Complexes', 'Folios']);
   expect(labels('contributor')).toHaveLength(6);
-  expect(labels('steward')).toEqual(labels('lead'));
+  expect(labels('lead')).toEqual(labels('contributor'));
+  expect(labels('steward')).toEqual([...labels('lead'), 'Trail']);
   expect(labels(undefined)).toEqual([]);
 });
 
