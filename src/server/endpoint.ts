@@ -32,6 +32,11 @@ interface Handler<Query, Body, Access> {
   sight?: (step: Omit<Step<never, never>, 'query' | 'body'>) => Access | Promise<Access>;
   /** The record as this asker gets it, for the entity tag that If-Match is compared with. */
   represent?: (access: Access, asker: Asker) => unknown;
+  /**
+   * What hangs on the body and may have ended since, such as a lab or a folio that it names. It is asked before a
+   * kept answer is given again, too.
+   */
+  judge?: (step: Step<Query, Body> & { access: Access }) => unknown;
   /** The service call. */
   act: (step: Step<Query, Body> & { access: Access }) => unknown;
 }
@@ -55,11 +60,18 @@ export function endpoint<Q extends z.ZodType, B extends z.ZodType, Access = null
       const params = Object.fromEntries(Object.entries(context.params).map(([name, value]) => [name, value ?? '']));
       checkBodyKind(route, request);
       const access = (await handler.sight?.({ asker, params, context })) as Access;
-      if (route.conditional) await requireMatch(request, () => handler.represent?.(access, asker));
+      const stale = route.conditional
+        ? await requireMatch(request, () => handler.represent?.(access, asker)).then(() => null, asIs)
+        : null;
+      // A repeat of what was done meets the version that it made: its key is looked up before it is refused.
+      const mayRepeat = route.method === 'POST' && request.headers.has('idempotency-key');
+      if (stale && !mayRepeat) throw stale;
       const query = readQuery(route, context.url);
       const body = route.body ? await readBody(route.body, request, route.limit ?? JSON_LIMIT) : undefined;
       const step = { asker, params, query, body: body as z.output<B>, context, access };
+      await handler.judge?.(step);
       const run = async () => {
+        if (stale) throw stale;
         const result = await handler.act(step);
         if (request.method === 'GET') noteRead(route, step, result);
         return respond(route, request, result);
@@ -76,6 +88,8 @@ export function endpoint<Q extends z.ZodType, B extends z.ZodType, Access = null
     return response;
   };
 }
+
+const asIs = (refusal: unknown) => refusal;
 
 /** 401 and 403: who asks, and whether that role or scope can ever do this. */
 function admit(route: Route, asker: Asker | null): Asker {

@@ -74,6 +74,26 @@ export function requireLab(asker: Asker, labId: string): void {
     });
 }
 
+type Owned = Pick<typeof spectra.$inferSelect, 'visibility' | 'labId' | 'state' | 'makerId'>;
+
+/**
+ * Whether the asker sees a record in sight as a member, and not only since a folio with it was shared with them: who
+ * belongs to a lab may be a guest of another lab's folio, and is told of its records what guests are told.
+ */
+export function seesAsMember(asker: Asker, ...records: Owned[]): boolean {
+  const one = ({ visibility, labId, state, makerId }: Owned) =>
+    state === 'draft'
+      ? makerId === asker.accountId || asker.labs.get(labId) === 'lead'
+      : visibility === 'programme' || asker.labs.has(labId);
+  return asker.steward || (asker.labs.size > 0 && records.every(one));
+}
+
+/** @throws {HttpError} 403 for who sees a complex as a guest only */
+export function requireMemberSight(asker: Asker, complex: Owned): void {
+  if (!seesAsMember(asker, complex))
+    throw new HttpError(403, 'You see this complex as a guest of a folio: guests read only');
+}
+
 async function findComplex(condition: SQL | undefined) {
   const { db } = await database();
   const [row] = await db.select().from(complexes).where(condition);
@@ -175,9 +195,9 @@ export async function mayProposeBands(asker: Asker, id: string): Promise<Spectru
   return grant({ asker, complex: seen.complex, spectrum: seen.spectrum });
 }
 
-/** A lead who sees a band, or a contributor of another lab where the measuring lab allows it. */
-export async function canJudge(asker: Asker, spectrum: typeof spectra.$inferSelect): Promise<boolean> {
-  if (!asker.scopes.has('write')) return false;
+/** A lead who sees a band as a member, or a contributor of another lab where the measuring lab allows it. */
+export async function canJudge(asker: Asker, { complex, spectrum }: Pick<SpectrumAccess, 'complex' | 'spectrum'>) {
+  if (!asker.scopes.has('write') || !seesAsMember(asker, complex, spectrum)) return false;
   if ([...asker.labs.values()].includes('lead')) return true;
   if (asker.labs.size === 0 || asker.labs.has(spectrum.labId)) return false;
   const { db } = await database();
@@ -197,7 +217,7 @@ export async function mayJudgeBand(asker: Asker, id: string): Promise<BandJudge>
   if (!row) throw notInSight();
   if (row.band.proposedBy === asker.accountId)
     throw new HttpError(403, 'You proposed this assignment: another person must judge it');
-  if (!(await canJudge(asker, row.spectrum)))
+  if (!(await canJudge(asker, row)))
     throw new HttpError(403, 'A lead, or a contributor of another lab where the measuring lab allows it, may judge');
   return grant({ asker, complex: row.complex, spectrum: row.spectrum, band: row.band });
 }

@@ -63,14 +63,15 @@ export function complexDownload(asker: Asker): SQL {
 
 /** Preparations in sight, of complexes in sight. A query that uses it has both tables in its FROM. */
 export function preparationSight(asker: Asker): SQL {
-  // Guests see no preparations of their own: what they need of one stands in its spectra.
-  return isMember(asker) ? all(complexSight(asker), memberSight(asker, preparations)) : never;
+  // Guests see none, nor do members of complexes that they see as guests: what they need stands in the spectra.
+  return isMember(asker) ? all(living(), memberSight(asker, complexes), memberSight(asker, preparations)) : never;
 }
 
-/** Spectra that one grant opens, of complexes that it opens. */
+/** Spectra that one grant opens, of complexes that this same grant opens. */
 function grantedSpectra(grant: Asker['grants'][number]): SQL {
-  const listed = sql`exists (select 1 from ${folioItems} where ${folioItems.folioId} = ${grant.folioId}
-    and ${folioItems.complexId} = ${spectra.complexId}
+  const listed = sql`exists (select 1 from ${folioItems} join ${complexes} shared on shared.id = ${folioItems.complexId}
+    where ${folioItems.folioId} = ${grant.folioId} and ${folioItems.complexId} = ${spectra.complexId}
+    and (shared.visibility = 'programme' or shared.lab_id = ${grant.labId})
     and (${folioItems.spectra} is null or exists (select 1 from json_each(${folioItems.spectra}) where value = ${spectra.id})))`;
   const shareable = any(eq(spectra.visibility, 'programme'), eq(spectra.labId, grant.labId));
   return all(eq(spectra.state, 'registered'), shareable, listed);

@@ -25,17 +25,23 @@ export function requireDownload(asker: Asker): void {
 }
 
 /**
- * Order a bundle. What it will hold is judged when it is built, and again when it is fetched.
+ * What a bundle is ordered of.
  *
- * @throws {HttpError} 404 for a folio out of sight, 403 where the asker may only look, 422 for a complex out of sight,
- *   429 when too many are in the making
+ * @throws {HttpError} 404 for a folio out of sight, 403 where the asker may only look, 422 for a complex out of sight
+ */
+export async function requireContent(asker: Asker, input: BundleInput): Promise<void> {
+  if (!('folio' in input)) return requireComplexes(asker, input.complexes);
+  const { folio } = await seeFolio(asker, input.folio);
+  if (guestLevel(asker, folio) === 'view') throw readOnly();
+}
+
+/**
+ * Order a bundle of what `requireContent` let pass. What it will hold is judged when it is built, and again when it is
+ * fetched.
+ *
+ * @throws {HttpError} 429 when too many are in the making
  */
 export async function orderBundle(asker: Asker, input: BundleInput): Promise<BundleRecord> {
-  if ('folio' in input) {
-    const { folio } = await seeFolio(asker, input.folio);
-    if (guestLevel(asker, folio) === 'view') throw readOnly();
-  } else await requireComplexes(asker, input.complexes);
-
   const row = {
     id: newId(),
     requestedBy: asker.accountId,

@@ -4,7 +4,7 @@ import type { ComplexFilters } from '../../contracts/complexes.ts';
 import type { Db } from '../../db/client.ts';
 import { bands, centres, complexes, complexLigands, labs, spectra } from '../../db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
-import { bandSightWithin } from '../access/sight.ts';
+import { bandSightWithin, spectrumSightWithin } from '../access/sight.ts';
 import { type Conditions, filterConditions, whereOf } from './filters.ts';
 
 /** Width of a bin of the band histogram, nm; it runs from 200 to 1100. */
@@ -43,7 +43,9 @@ function facetsFor(asker: Asker): Record<string, Facet> {
     lab: {
       own: 'lab',
       pairs: (hits) =>
-        sql`select hit.id, ${labs.id} as value, ${labs.name} as label from ${hits} hit join ${labs} on ${labs.id} = hit.lab_id`,
+        sql`select hit.id, ${labs.id} as value, ${labs.name} as label from ${hits} hit join ${labs} on ${labs.id} = hit.lab_id
+          union select hit.id, ${labs.id}, ${labs.name} from ${hits} hit join ${spectra} on ${spectra.complexId} = hit.id
+          join ${labs} on ${labs.id} = ${spectra.labId} where ${spectrumSightWithin(asker)}`,
     },
     band: {
       own: 'bandWindow',

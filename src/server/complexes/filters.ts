@@ -1,7 +1,7 @@
 import { and, eq, inArray, type SQL, sql } from 'drizzle-orm';
 import type { ComplexFilters } from '../../contracts/complexes.ts';
 import { bands, centres, complexes, complexLigands, folioItems, spectra } from '../../db/schema/index.ts';
-import type { Asker } from '../access/asker.ts';
+import { type Asker, isMember } from '../access/asker.ts';
 import { bandSightWithin, complexSight, spectrumSightWithin } from '../access/sight.ts';
 
 /** A filter of the table of complexes: what it is called in the query, and its condition. */
@@ -28,6 +28,15 @@ function bandCondition(asker: Asker, { bandFrom, bandTo, minEpsilon, bandClass }
 
 const likeText = (text: string) => `%${text.toLowerCase().replace(/[\\%_]/g, '\\$&')}%`;
 
+/**
+ * The text that a search looks in. What was typed at registration, counter-ions and all, is for members: guests find by
+ * what they are shown.
+ */
+const searched = (asker: Asker): SQL =>
+  isMember(asker)
+    ? sql`${complexes.search}`
+    : sql`lower(${complexes.accession} || ' ' || ${complexes.formula} || ' ' || coalesce(${complexes.descriptor}, '') || ' ' || ${complexes.hill} || ' ' || coalesce((select group_concat(${complexLigands.abbreviation}, ' ') from ${complexLigands} where ${complexLigands.complexId} = ${complexes.id}), '') || ' ' || coalesce((select group_concat(merged.accession, ' ') from ${complexes} merged where merged.merged_into = ${complexes.accession}), ''))`;
+
 /** The conditions that a query sets, one a filter, so that a facet can leave its own out. */
 export function filterConditions(asker: Asker, f: ComplexFilters): Conditions {
   const conditions: Conditions = {};
@@ -46,7 +55,7 @@ export function filterConditions(asker: Asker, f: ComplexFilters): Conditions {
     conditions.folio = sql`${complexes.id} in (select ${folioItems.complexId} from ${folioItems} where ${and(eq(folioItems.folioId, f.folio), folioInSight(asker))})`;
   const band = bandCondition(asker, f);
   if (band) conditions.bandWindow = band;
-  if (f.q) conditions.q = sql`${complexes.search} like ${likeText(f.q)} escape '\\'`;
+  if (f.q) conditions.q = sql`${searched(asker)} like ${likeText(f.q)} escape '\\'`;
   conditions.state = f.state?.length ? inArray(complexes.state, f.state) : sql`${complexes.state} <> 'withdrawn'`;
   return conditions;
 }

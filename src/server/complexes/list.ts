@@ -14,7 +14,7 @@ import { summaries } from './summary.ts';
 /** What a sort orders by. Null sorts first, as an empty text or −1, so that the order is total. */
 function sortValue(asker: Asker, name: string): SQL<string | number> {
   const counted = (what: SQL) =>
-    sql<number>`(select count(${what}) from ${spectra} where ${and(eq(spectra.complexId, complexes.id), spectrumSight(asker))})`;
+    sql<number>`(select count(${what}) from ${spectra} where ${and(eq(spectra.complexId, complexes.id), eq(spectra.state, 'registered'), spectrumSight(asker))})`;
   switch (name) {
     case 'formula':
       return sql`${complexes.formula}`;

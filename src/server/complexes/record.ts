@@ -1,8 +1,7 @@
 import { and, asc, desc, eq, inArray, ne, or } from 'drizzle-orm';
 import type { ComplexRecord } from '../../contracts/complexes.ts';
 import { accounts, complexes, preparations, trail } from '../../db/schema/index.ts';
-import { isMember } from '../access/asker.ts';
-import { type ComplexAccess, canChangeComplex } from '../access/records.ts';
+import { type ComplexAccess, canChangeComplex, seesAsMember } from '../access/records.ts';
 import { complexDownload, complexSight, preparationSight } from '../access/sight.ts';
 import { database } from '../database.ts';
 import { preparationRecords } from '../preparations/record.ts';
@@ -31,7 +30,7 @@ export async function complexRecord(access: ComplexAccess): Promise<ComplexRecor
       .where(and(eq(complexes.id, complex.id), complexDownload(asker))),
     countDoubts(access),
   ]);
-  const member = isMember(asker);
+  const member = seesAsMember(asker, complex);
   return {
     ...summary!,
     ...(alias ? { mergedInto: complex.accession } : {}),
@@ -40,7 +39,10 @@ export async function complexRecord(access: ComplexAccess): Promise<ComplexRecor
     cautions: formulaCautions(complex.formula, complex.answers),
     doubts,
     evidence: [],
-    preparations: await preparationRecords(prepared.map(({ preparation }) => preparation)),
+    preparations: await preparationRecords(
+      asker,
+      prepared.map(({ preparation }) => preparation),
+    ),
     history,
     siblings,
     may: {
@@ -84,6 +86,7 @@ async function siblingsOf({ asker, complex }: ComplexAccess): Promise<ComplexRec
  */
 async function historyOf({ asker, complex }: ComplexAccess): Promise<ComplexRecord['history']> {
   const { db } = await database();
+  const member = seesAsMember(asker, complex);
   const own = eq(trail.subjectId, complex.id);
   const mergedHere = db.select({ id: complexes.id }).from(complexes).where(eq(complexes.mergedInto, complex.accession));
   const subject = asker.steward ? or(own, inArray(trail.subjectId, mergedHere)) : own;
@@ -91,8 +94,8 @@ async function historyOf({ asker, complex }: ComplexAccess): Promise<ComplexReco
     .select({ at: trail.at, action: trail.action, detail: trail.detail, who: accounts.name })
     .from(trail)
     .leftJoin(accounts, eq(accounts.id, trail.actorId))
-    .where(and(eq(trail.subjectType, 'complex'), subject, isMember(asker) ? undefined : ne(trail.action, 'take-in')))
+    .where(and(eq(trail.subjectType, 'complex'), subject, member ? undefined : ne(trail.action, 'take-in')))
     .orderBy(desc(trail.seq))
     .limit(100);
-  return isMember(asker) ? rows : rows.map(({ at, action }) => ({ at, action, who: null, detail: {} }));
+  return member ? rows : rows.map(({ at, action }) => ({ at, action, who: null, detail: {} }));
 }

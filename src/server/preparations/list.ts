@@ -42,7 +42,10 @@ export async function listPreparations(
     id: preparation.id,
   }));
   return {
-    items: await preparationRecords(rows.map(({ preparation }) => preparation)),
+    items: await preparationRecords(
+      asker,
+      rows.map(({ preparation }) => preparation),
+    ),
     total: counted[0]?.total ?? 0,
     next,
   };

@@ -1,13 +1,15 @@
-import { eq, inArray } from 'drizzle-orm';
+import { and, eq, inArray } from 'drizzle-orm';
 import type { PreparationRecord } from '../../contracts/complexes.ts';
 import { complexes, labs, preparationComponents, type preparations } from '../../db/schema/index.ts';
+import type { Asker } from '../access/asker.ts';
+import { complexSight } from '../access/sight.ts';
 import { formulaCautions } from '../complexes/formula-cautions.ts';
 import { database } from '../database.ts';
 
 type Row = typeof preparations.$inferSelect;
 
-/** Preparations as the wire has them, in the order given. */
-export async function preparationRecords(rows: readonly Row[]): Promise<PreparationRecord[]> {
+/** Preparations as the wire has them, in the order given; of a double salt, the complexes in the asker's sight. */
+export async function preparationRecords(asker: Asker, rows: readonly Row[]): Promise<PreparationRecord[]> {
   if (rows.length === 0) return [];
   const { db } = await database();
   const [labRows, parts, owners] = await Promise.all([
@@ -21,9 +23,12 @@ export async function preparationRecords(rows: readonly Row[]): Promise<Preparat
       .from(preparationComponents)
       .innerJoin(complexes, eq(complexes.id, preparationComponents.complexId))
       .where(
-        inArray(
-          preparationComponents.preparationId,
-          rows.map((row) => row.id),
+        and(
+          inArray(
+            preparationComponents.preparationId,
+            rows.map((row) => row.id),
+          ),
+          complexSight(asker),
         ),
       ),
     db

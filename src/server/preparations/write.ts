@@ -4,7 +4,7 @@ import type { PreparationInput, PreparationPatch } from '../../contracts/complex
 import type { Tx } from '../../db/client.ts';
 import { complexes, preparationComponents, preparations, spectra } from '../../db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
-import { type ComplexAccess, type PreparationChange, requireLab } from '../access/records.ts';
+import { type ComplexAccess, type PreparationChange, requireLab, requireMemberSight } from '../access/records.ts';
 import { complexSight } from '../access/sight.ts';
 import { connectivityOf } from '../complexes/derive-identity.ts';
 import { database } from '../database.ts';
@@ -84,6 +84,7 @@ const storeComponents = async (tx: Tx, preparationId: string, unit: FormulaUnit)
 /** Add a preparation of a complex in sight, for a lab of the asker's. @returns its id */
 export async function createPreparation({ asker, complex }: ComplexAccess, input: PreparationInput): Promise<string> {
   requireLab(asker, input.lab);
+  requireMemberSight(asker, complex);
   if (complex.state === 'withdrawn') throw new HttpError(409, 'The complex is withdrawn');
   const { write } = await database();
   const id = newId();

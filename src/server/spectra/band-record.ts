@@ -1,7 +1,7 @@
 import { and, asc, eq } from 'drizzle-orm';
 import type { BandRecord } from '#src/contracts/spectra.ts';
 import { bands, centres, complexes, spectra, spectrumSolvents } from '#src/db/schema/index.ts';
-import { type BandJudge, canJudge, type SpectrumAccess } from '#src/server/access/records.ts';
+import { type BandJudge, canJudge, type SpectrumAccess, seesAsMember } from '#src/server/access/records.ts';
 import { bandSight } from '#src/server/access/sight.ts';
 import { database } from '#src/server/database.ts';
 import { notInSight } from '#src/server/http.ts';
@@ -36,16 +36,16 @@ export async function describeJudged(access: BandJudge): Promise<BandRecord> {
   return record;
 }
 
-async function describe({ asker, spectrum }: SpectrumAccess, rows: Band[]): Promise<BandRecord[]> {
+async function describe({ asker, complex, spectrum }: SpectrumAccess, rows: Band[]): Promise<BandRecord[]> {
   if (rows.length === 0) return [];
   const { db } = await database();
   const [centreRows, solvents, judges, nameOf] = await Promise.all([
     db.select().from(centres).where(eq(centres.complexId, spectrum.complexId)),
     db.select().from(spectrumSolvents).where(eq(spectrumSolvents.spectrumId, spectrum.id)),
-    canJudge(asker, spectrum),
+    canJudge(asker, { complex, spectrum }),
     namesFor(
       db,
-      asker,
+      seesAsMember(asker, complex, spectrum),
       rows.flatMap(({ proposedBy, judgedBy }) => [proposedBy, judgedBy]),
     ),
   ]);

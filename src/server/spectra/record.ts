@@ -1,13 +1,13 @@
 import { and, eq } from 'drizzle-orm';
 import type { SpectrumRecord } from '#src/contracts/spectra.ts';
 import { complexes, files, instruments, labs, spectra, spectrumSpecies } from '#src/db/schema/index.ts';
-import { isMember } from '#src/server/access/asker.ts';
 import {
   canChangeSpectrum,
   canJudge,
   canPropose,
   canTakeSpectrum,
   type SpectrumAccess,
+  seesAsMember,
 } from '#src/server/access/records.ts';
 import { complexSight } from '#src/server/access/sight.ts';
 import { database } from '#src/server/database.ts';
@@ -37,7 +37,7 @@ export async function describeSpectrum(access: SpectrumAccess): Promise<Spectrum
     speciesInSight(access),
     describeBands(fresh),
     canTakeSpectrum(asker, id),
-    canJudge(asker, spectrum),
+    canJudge(asker, fresh),
   ]);
   const solvent = solventOf(id);
   const { pH, ionicStrength, electrolyte, atmosphere, age } = spectrum;
@@ -54,9 +54,9 @@ export async function describeSpectrum(access: SpectrumAccess): Promise<Spectrum
     polarisation: spectrum.polarisation,
     species,
     instrument: row.instrument,
-    operator: isMember(asker) ? spectrum.operator : null,
+    operator: seesAsMember(asker, fresh.complex, spectrum) ? spectrum.operator : null,
     visibility: spectrum.visibility,
-    notes: isMember(asker) ? spectrum.notes : null,
+    notes: seesAsMember(asker, fresh.complex, spectrum) ? spectrum.notes : null,
     withdrawnReason: spectrum.withdrawnReason,
     fileName: spectrum.fileName,
     sha256: spectrum.fileSha256,

@@ -3,7 +3,7 @@ import { normaliseAccession } from '#src/contracts/accession.ts';
 import type { SpectrumMetadata } from '#src/contracts/spectra.ts';
 import { type complexes, labs, preparationComponents, type preparations } from '#src/db/schema/index.ts';
 import type { Asker } from '#src/server/access/asker.ts';
-import { requireLab, seeComplex, seePreparation } from '#src/server/access/records.ts';
+import { requireLab, requireMemberSight, seeComplex, seePreparation } from '#src/server/access/records.ts';
 import { database } from '#src/server/database.ts';
 import { HttpError } from '#src/server/http.ts';
 import { requireInstrument, type SpeciesRow, speciesRows } from './conditions.ts';
@@ -29,6 +29,7 @@ export async function resolveTarget(asker: Asker, metadata: SpectrumMetadata): P
     ? (await orRefuse(seePreparation(asker, metadata.preparation), '#/preparation', 'preparation')).preparation
     : null;
   const complex = await targetComplex(asker, metadata, preparation);
+  requireMemberSight(asker, complex);
   if (complex.state === 'withdrawn') throw refuse('#/complex', 'This complex is withdrawn: nothing is added to it');
   await requireInstrument(metadata.instrument);
   const species = await speciesRows(asker, metadata.species ?? null, complex.id);

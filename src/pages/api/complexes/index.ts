@@ -1,5 +1,5 @@
 import { routes } from '#src/contracts/routes.ts';
-import { seeComplex } from '#src/server/access/records.ts';
+import { requireLab, seeComplex } from '#src/server/access/records.ts';
 import { listComplexes } from '#src/server/complexes/list.ts';
 import { complexRecord } from '#src/server/complexes/record.ts';
 import { registerComplex } from '#src/server/complexes/register.ts';
@@ -14,6 +14,7 @@ export const GET = endpoint(routes.listComplexes, {
 });
 
 export const POST = endpoint(routes.createComplex, {
+  judge: ({ asker, body }) => requireLab(asker, body.lab),
   act: async ({ asker, body }) => {
     const accession = await registerComplex(asker, body);
     const complex = await complexRecord(await seeComplex(asker, accession));

@@ -1,4 +1,5 @@
 import { routes } from '#src/contracts/routes.ts';
+import { requireLab } from '#src/server/access/records.ts';
 import { Answer, endpoint } from '#src/server/endpoint.ts';
 import { createFolio } from '#src/server/folios/change.ts';
 import { listFolios } from '#src/server/folios/list.ts';
@@ -12,6 +13,7 @@ export const GET = endpoint(routes.listFolios, {
 });
 
 export const POST = endpoint(routes.createFolio, {
+  judge: ({ asker, body }) => requireLab(asker, body.lab),
   act: async ({ asker, body }) => {
     const folio = await createFolio(asker, body);
     return new Answer(folio, { headers: { location: `/api/folios/${folio.id}` } });

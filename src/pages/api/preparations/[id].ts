@@ -4,7 +4,8 @@ import { endpoint } from '#src/server/endpoint.ts';
 import { preparationRecords } from '#src/server/preparations/record.ts';
 import { changePreparation, deletePreparation } from '#src/server/preparations/write.ts';
 
-const represent = async ({ preparation }: PreparationAccess) => (await preparationRecords([preparation]))[0];
+const represent = async ({ asker, preparation }: PreparationAccess) =>
+  (await preparationRecords(asker, [preparation]))[0];
 
 export const GET = endpoint(routes.readPreparation, {
   sight: ({ asker, params }) => seePreparation(asker, params.id ?? ''),

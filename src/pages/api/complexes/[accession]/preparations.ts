@@ -1,5 +1,11 @@
 import { routes } from '#src/contracts/routes.ts';
-import { accessionParam, seeComplex, seePreparation } from '#src/server/access/records.ts';
+import {
+  accessionParam,
+  requireLab,
+  requireMemberSight,
+  seeComplex,
+  seePreparation,
+} from '#src/server/access/records.ts';
 import { Answer, endpoint } from '#src/server/endpoint.ts';
 import { linkHeader } from '#src/server/paging.ts';
 import { listPreparations } from '#src/server/preparations/list.ts';
@@ -16,10 +22,14 @@ export const GET = endpoint(routes.listPreparations, {
 
 export const POST = endpoint(routes.createPreparation, {
   sight: ({ asker, params }) => seeComplex(asker, accessionParam(params)),
+  judge: ({ asker, access, body }) => {
+    requireLab(asker, body.lab);
+    requireMemberSight(asker, access.complex);
+  },
   act: async ({ asker, access, body }) => {
     const id = await createPreparation(access, body);
     const { preparation } = await seePreparation(asker, id);
-    const [record] = await preparationRecords([preparation]);
+    const [record] = await preparationRecords(asker, [preparation]);
     return new Answer(record, { headers: { location: `/api/preparations/${id}` } });
   },
 });
