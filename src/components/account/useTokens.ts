@@ -24,5 +24,13 @@ export function useTokens(first: TokenRecord[]) {
     { mutationFn: (id: string) => sendJson('DELETE', `/api/tokens/${id}`), onSuccess: again },
     queryClient,
   );
-  return { tokens, make, revoke };
+  const revokeAll = useMutation(
+    {
+      // Those shown: one that was made elsewhere since is not ended unseen.
+      mutationFn: (until: string) => sendJson('DELETE', `/api/tokens?until=${encodeURIComponent(until)}`),
+      onSuccess: again,
+    },
+    queryClient,
+  );
+  return { tokens, make, revoke, revokeAll };
 }

@@ -99,7 +99,7 @@ export const actionWords = (action: string): string => spelledOut(action);
 
 /** What the record is called: by its name of today, by what the row itself tells, or by its kind alone. */
 export function subjectWords({ actor, subject, detail }: Pick<Deed, 'actor' | 'subject' | 'detail'>): string {
-  if (subject.type === 'account' && subject.id === actor?.id) return 'the own account';
+  if (subject.type === 'account' && subject.id === actor?.id) return 'their account';
   if (subject.label !== null) return subject.label;
   if (subject.type === 'registry') return 'the registry';
   const told = [detail.accession, detail.label, detail.title, detail.name, detail.email].find(

@@ -17,7 +17,7 @@ test.each([
   [row('attest', 'band', null), 'Ada attested a band that is gone'],
   [row('create', 'token', 'Instrument of Ada'), 'Ada made the access token Instrument of Ada'],
   [row('create', 'folio', 'Aqua ions'), 'Ada made the folio Aqua ions'],
-  [row('sign-in', 'account', 'Ada, ada@test.example', { id: 'a' }), 'Ada signed in to the own account'],
+  [row('sign-in', 'account', 'Ada, ada@test.example', { id: 'a' }), 'Ada signed in to their account'],
   [
     row('delete-draft', 'complex', null, { detail: { accession: 'ZF000042-X' } }),
     'Ada deleted the draft of ZF000042-X (deleted since)',
