@@ -8,6 +8,15 @@ export interface DaySheet {
   invitations: Waiting<{ id: string; email: string; to: string; href: string; expiresAt: string }>;
   /** Pairs of records that wait to be merged or told apart; null for everybody but a steward. */
   mergeTasks: number | null;
+  /** Asked by guests of folios of labs that the asker leads, and not answered yet. */
+  requests: Waiting<{
+    id: string;
+    name: string;
+    wants: 'download' | 'longer' | 'other';
+    folio: string;
+    folioId: string;
+    createdAt: string;
+  }>;
   recentSpectra: {
     id: string;
     title: string;
@@ -28,6 +37,8 @@ export interface DaySheet {
     access: 'view' | 'download';
     expires: string | null;
   }[];
+  /** Folios that were granted and whose access ended lately. */
+  ended: { id: string; name: string; lab: string; endedAt: string; contact: string | null }[];
 }
 
 /** The first few, and how many there are in all. */

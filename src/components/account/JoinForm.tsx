@@ -1,4 +1,5 @@
 import type { InvitationPreview } from '../../contracts/invitations.ts';
+import { LicenceTerms } from '../folios/LicenceTerms.tsx';
 import { Button, ButtonLink } from '../ui/Button.tsx';
 import { longDay } from '../ui/dates.ts';
 import { EmptyState } from '../ui/EmptyState.tsx';
@@ -47,6 +48,7 @@ function Offer({ preview }: { preview: InvitationPreview }) {
         folio ? ['Folio', folio.name] : null,
         ['Lab', lab.name],
         folio ? ['You may', level === 'download' ? 'read and download' : 'read'] : ['As', role],
+        preview.accessUntil ? ['Until', longDay(preview.accessUntil)] : null,
         ['For', preview.email],
         ['Link works', `until ${longDay(preview.expiresAt)}`],
       ]}
@@ -61,7 +63,7 @@ interface StepProps extends Props {
 
 function Step({ preview, signedInAs, today, join }: StepProps) {
   const { email } = preview;
-  const terms = preview.folio && <Terms today={today} />;
+  const terms = preview.folio && <Terms today={today} licence={preview.folio.licence} until={preview.accessUntil} />;
   switch (joinStep(preview, signedInAs)) {
     case 'sign-in':
       return (
@@ -91,7 +93,7 @@ function Step({ preview, signedInAs, today, join }: StepProps) {
           {terms}
           <Problem problem={join.accept.error} />
           <Button kind="primary" disabled={join.accept.isPending} onClick={() => join.accept.mutate(null)}>
-            Accept the invitation
+            {preview.folio ? 'Accept the terms and open the folio' : 'Accept the invitation'}
           </Button>
         </>
       );
@@ -100,12 +102,16 @@ function Step({ preview, signedInAs, today, join }: StepProps) {
   }
 }
 
-function Terms({ today }: { today: string }) {
+function Terms({ today, licence, until }: { today: string; licence: string; until: string | null }) {
   return (
-    <p className="border-l-2 border-hairline pl-3 text-xs text-ink-soft">
-      Accepting on {longDay(today)}, you agree to read-only access to this folio, and to use what you find in it under
-      its licence, which is named on its page and in every download. The day is recorded. The lab may end the access at
-      any time.
-    </p>
+    <section aria-labelledby="terms" className="border border-hairline bg-zaffre-wash px-4 py-3">
+      <h2 id="terms" className="mb-1.5 font-semibold">
+        Terms
+      </h2>
+      <LicenceTerms licence={licence} until={until} />
+      <p className="mt-2 text-xs text-ink-soft">
+        Accepting on {longDay(today)}, you agree to these. The day and the licence are recorded.
+      </p>
+    </section>
   );
 }

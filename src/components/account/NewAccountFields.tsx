@@ -55,7 +55,7 @@ export function NewAccountFields({ email, terms, join }: Props) {
       {terms}
       {!isTold && <Problem problem={accept.error} />}
       <Button type="submit" kind="primary" disabled={accept.isPending}>
-        {accept.isPending ? 'Making the account' : 'Make the account and accept'}
+        {accept.isPending ? 'Making the account' : `Make the account and accept${terms ? ' the terms' : ''}`}
       </Button>
     </form>
   );

@@ -39,11 +39,14 @@ export function useJoin() {
   const accept = useMutation(
     {
       mutationFn: async (account: { name: string; password: string } | null) => {
-        const accepted = await sendJson<Accepted>('POST', '/api/invitations/accept', { token, ...account });
+        const shown = preview.data?.folio ? { terms: true, licence: preview.data.folio.licence } : {};
+        const accepted = await sendJson<Accepted>('POST', '/api/invitations/accept', { token, ...account, ...shown });
         forgetInvitation();
         const isIn = account === null || (await signIn(accepted.email, account.password).catch(() => '')) === null;
         location.assign(isIn ? landing(accepted) : signInPath(landing(accepted)));
       },
+      // The licence changed since it was shown: the page must show the present one before it is accepted.
+      onError: (error) => error instanceof ProblemError && error.status === 409 && void preview.refetch(),
     },
     queryClient,
   );

@@ -1,58 +1,79 @@
-import { type FormEvent, useMemo, useState } from 'react';
+import { useState } from 'react';
 import type { GrantRecord } from '../../contracts/grants.ts';
-import type { GuestInvitation } from '../../contracts/invitations.ts';
 import type { FolioRecord } from '../../contracts/sharing.ts';
-import { InvitationTable } from '../labs/InvitationTable.tsx';
-import { Sent } from '../labs/LabInvitations.tsx';
-import { useInvitations } from '../labs/useInvitations.ts';
 import { Button } from '../ui/Button.tsx';
-import { Select, TextInput } from '../ui/controls.tsx';
 import { DataTable } from '../ui/DataTable.tsx';
 import { Dialog } from '../ui/Dialog.tsx';
-import { dayLater, shortDay } from '../ui/dates.ts';
+import { shortDay } from '../ui/dates.ts';
 import { Panel } from '../ui/Panel.tsx';
 import { Problem } from '../ui/Problem.tsx';
-import { ProblemError } from '../ui/problem-error.ts';
-import { StatusLine } from '../ui/StatusLine.tsx';
 import type { DataColumn } from '../ui/table-csv.ts';
-import { useDraft } from '../ui/useDraft.ts';
-import { openGrants } from './folio-facts.ts';
+import { ChangeGrant } from './ChangeGrant.tsx';
+import { endedGrants, openGrants } from './folio-facts.ts';
 import type { useFolio } from './useFolio.ts';
 
-const LEVELS = [
-  { value: 'view', label: 'Read on screen' },
-  { value: 'download', label: 'Read and download files' },
-];
+function columns(licence: string): DataColumn<GrantRecord>[] {
+  return [
+    { id: 'name', header: 'Name', value: (grant) => grant.name },
+    { id: 'email', header: 'Address', value: (grant) => grant.email },
+    { id: 'level', header: 'May', value: (grant) => (grant.level === 'download' ? 'read and download' : 'read') },
+    {
+      id: 'until',
+      header: 'Until',
+      value: (grant) => grant.expires.slice(0, 10),
+      cell: (grant) => shortDay(grant.expires),
+    },
+    {
+      id: 'terms',
+      header: 'Terms accepted',
+      value: (grant) => grant.termsAcceptedAt?.slice(0, 10) ?? null,
+      cell: (grant) => <Terms grant={grant} licence={licence} />,
+    },
+    { id: 'by', header: 'By', value: (grant) => grant.grantedBy },
+  ];
+}
 
-const COLUMNS: DataColumn<GrantRecord>[] = [
+/** The day, and the licence where it is not the folio's present one. */
+function Terms({ grant, licence }: { grant: GrantRecord; licence: string }) {
+  if (!grant.termsAcceptedAt) return '–';
+  const isOlder = grant.termsLicence !== null && grant.termsLicence !== licence;
+  return (
+    <>
+      {shortDay(grant.termsAcceptedAt)}
+      {isOlder && <span className="text-alert"> under {grant.termsLicence}</span>}
+    </>
+  );
+}
+
+const ENDED: DataColumn<GrantRecord>[] = [
   { id: 'name', header: 'Name', value: (grant) => grant.name },
   { id: 'email', header: 'Address', value: (grant) => grant.email },
-  { id: 'level', header: 'May', value: (grant) => (grant.level === 'download' ? 'read and download' : 'read') },
   {
-    id: 'until',
-    header: 'Until',
-    value: (grant) => grant.expires.slice(0, 10),
-    cell: (grant) => shortDay(grant.expires),
+    id: 'ended',
+    header: 'Ended',
+    value: (grant) => (grant.revokedAt ?? grant.expires).slice(0, 10),
+    cell: (grant) => shortDay(grant.revokedAt ?? grant.expires),
   },
-  {
-    id: 'terms',
-    header: 'Terms accepted',
-    value: (grant) => grant.termsAcceptedAt?.slice(0, 10) ?? null,
-    cell: (grant) => (grant.termsAcceptedAt ? shortDay(grant.termsAcceptedAt) : '–'),
-  },
+  { id: 'how', header: 'How', value: (grant) => (grant.revoked ? 'by hand' : 'by its time') },
 ];
 
 interface Props {
   folio: FolioRecord;
   revokeGrant: ReturnType<typeof useFolio>['revokeGrant'];
+  changeGrant: ReturnType<typeof useFolio>['changeGrant'];
   now: string;
-  isDemo: boolean;
 }
 
-/** Who may read a folio besides the members of its lab, and who was asked to. */
-export function FolioReaders({ folio, revokeGrant, now, isDemo }: Props) {
+/** Who may read a folio besides the members of its lab, and who might once. */
+export function FolioReaders({ folio, revokeGrant, changeGrant, now }: Props) {
   const [asked, setAsked] = useState<GrantRecord | null>(null);
+  const [changed, setChanged] = useState<GrantRecord | null>(null);
   const readers = openGrants(folio, now);
+  const ended = endedGrants(folio, now);
+  const change = (grant: GrantRecord) => {
+    changeGrant.reset();
+    setChanged(grant);
+  };
   return (
     <>
       <Panel title="Who may read it" aside={`besides the members of ${folio.lab.name}`}>
@@ -62,25 +83,52 @@ export function FolioReaders({ folio, revokeGrant, now, isDemo }: Props) {
         ) : (
           <DataTable
             name="Readers"
-            columns={COLUMNS}
+            columns={columns(folio.licence)}
             rows={readers}
             rowId={(grant) => grant.id}
             tools={readers.length > 8}
             compact
             actions={(grant) => (
-              <Button size="small" kind="danger" onClick={() => setAsked(grant)} aria-label={`Revoke ${grant.email}`}>
-                Revoke
-              </Button>
+              <span className="inline-flex gap-1.5">
+                <Button size="small" onClick={() => change(grant)} aria-label={`Change ${grant.email}`}>
+                  Change
+                </Button>
+                <Button size="small" kind="danger" onClick={() => setAsked(grant)} aria-label={`Revoke ${grant.email}`}>
+                  Revoke
+                </Button>
+              </span>
             )}
           />
         )}
+        {ended.length > 0 && (
+          <details className="mt-3">
+            <summary className="min-h-6 cursor-pointer text-ink-soft">Access that ended ({ended.length})</summary>
+            <div className="mt-2">
+              <DataTable
+                name="Access that ended"
+                columns={ENDED}
+                rows={ended}
+                rowId={(grant) => grant.id}
+                tools={ended.length > 8}
+                compact
+                actions={(grant) =>
+                  !grant.revoked && (
+                    <Button size="small" onClick={() => change(grant)} aria-label={`Renew ${grant.email}`}>
+                      Renew
+                    </Button>
+                  )
+                }
+              />
+            </div>
+          </details>
+        )}
       </Panel>
-      <GuestInvitations folio={folio} now={now} isDemo={isDemo} />
+      {changed && <ChangeGrant grant={changed} changeGrant={changeGrant} now={now} onClose={() => setChanged(null)} />}
       <Dialog
         open={asked !== null}
         onOpenChange={(open) => !open && setAsked(null)}
         title="End this access"
-        description={`${asked?.name} (${asked?.email}) sees nothing of this folio from the next request on. What was downloaded stays with them.`}
+        description={`${asked?.name} (${asked?.email}) sees nothing of this folio from the next request on, and is told by mail. What was downloaded stays with them.`}
         actions={
           <>
             <Button onClick={() => setAsked(null)}>Keep it</Button>
@@ -98,59 +146,5 @@ export function FolioReaders({ folio, revokeGrant, now, isDemo }: Props) {
         }
       />
     </>
-  );
-}
-
-function GuestInvitations({ folio, now, isDemo }: Pick<Props, 'folio' | 'now' | 'isDemo'>) {
-  const { sent, invite, revoke } = useInvitations<GuestInvitation>(`/api/folios/${folio.id}`);
-  const nobody = useMemo(
-    () => ({ email: '', level: 'view' as 'view' | 'download', expires: dayLater(now, 365) }),
-    [now],
-  );
-  const { draft, change, clear } = useDraft(`invite-guest:${folio.id}`, nobody);
-  const submit = (event: FormEvent) => {
-    event.preventDefault();
-    invite.mutate({ ...draft, email: draft.email.trim() }, { onSuccess: clear });
-  };
-  const refused = invite.error instanceof ProblemError ? invite.error : null;
-  const isTold = refused?.about('email') ?? refused?.about('expires');
-  return (
-    <Panel title="Invite a guest" aside="Read-only, this folio and nothing else">
-      <form onSubmit={submit} className="flex flex-wrap items-start gap-3" aria-label="Invite a guest">
-        <TextInput
-          label="E-mail address"
-          type="email"
-          required
-          autoComplete="off"
-          className="min-w-56 flex-1"
-          error={refused?.about('email')}
-          value={draft.email}
-          onChange={(event) => change({ email: event.target.value })}
-        />
-        <Select
-          label="May"
-          className="min-w-44"
-          options={LEVELS}
-          value={draft.level}
-          onChange={(event) => change({ level: event.target.value as 'view' | 'download' })}
-        />
-        <TextInput
-          label="Until"
-          type="date"
-          required
-          min={dayLater(now, 0)}
-          error={refused?.about('expires')}
-          value={draft.expires}
-          onChange={(event) => change({ expires: event.target.value })}
-        />
-        <Button type="submit" kind="primary" className="mt-[22px]" disabled={invite.isPending}>
-          Invite
-        </Button>
-      </form>
-      {!isTold && <Problem problem={invite.error} />}
-      <StatusLine>{invite.data && <Sent email={invite.data.email} isDemo={isDemo} />}</StatusLine>
-      <Problem problem={sent.error} onRetry={() => void sent.refetch()} />
-      {sent.data && sent.data.length > 0 && <InvitationTable invitations={sent.data} revoke={revoke} />}
-    </Panel>
   );
 }

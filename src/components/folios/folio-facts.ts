@@ -12,6 +12,10 @@ export function ownAccess({ level, expires }: Pick<FolioRecord, 'level' | 'expir
 export const openGrants = (folio: Pick<FolioRecord, 'grants'>, now: string) =>
   folio.grants.filter((grant) => !grant.revoked && grant.expires > now);
 
+/** Grants that opened it once: revoked, or past their end. */
+export const endedGrants = (folio: Pick<FolioRecord, 'grants'>, now: string) =>
+  folio.grants.filter((grant) => grant.revoked || grant.expires <= now);
+
 /** Whether guests are kept out until a day that is still to come. */
 export const isUnderEmbargo = ({ embargoUntil }: Pick<FolioRecord, 'embargoUntil'>, now: string): boolean =>
   embargoUntil !== null && embargoUntil > now;

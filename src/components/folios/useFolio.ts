@@ -1,18 +1,30 @@
 import { useMutation, useQuery } from '@tanstack/react-query';
+import type { GrantPatch, GrantRecord } from '../../contracts/grants.ts';
 import type { FolioPatch, FolioRecord } from '../../contracts/sharing.ts';
-import { getJson, getVersioned, sendJson } from '../ui/http.ts';
+import { getJson, getVersioned, ProblemError, sendJson } from '../ui/http.ts';
 import { queryClient } from '../ui/query-client.ts';
 import { withItem, withoutItem } from './folio-facts.ts';
 
-/** A folio, and the changes to it. */
+/** How often a guest's page looks whether its access still holds, in milliseconds. */
+const LOOK_AGAIN_MS = 30_000;
+
+/** A folio, and the changes to it. `isGone` once it is no longer in sight. */
 export function useFolio(first: FolioRecord) {
   const url = `/api/folios/${first.id}`;
   const key = ['folio', first.id];
-  const { data: folio } = useQuery(
-    { queryKey: key, queryFn: ({ signal }) => getJson<FolioRecord>(url, signal), initialData: first },
+  const isGuest = first.level !== null;
+  const { data: folio, error } = useQuery(
+    {
+      queryKey: key,
+      queryFn: ({ signal }) => getJson<FolioRecord>(url, signal),
+      initialData: first,
+      refetchInterval: ({ state }) => (isGuest && !isMissing(state.error) ? LOOK_AGAIN_MS : false),
+      ...(isGuest ? { refetchOnWindowFocus: 'always' as const } : {}),
+    },
     queryClient,
   );
   const keep = (changed: FolioRecord) => queryClient.setQueryData(key, changed);
+  const again = () => queryClient.invalidateQueries({ queryKey: key, exact: true });
 
   // The list is sent whole, so it is read once more right before: what others put in meanwhile stays in.
   const editItems = useMutation(
@@ -39,12 +51,41 @@ export function useFolio(first: FolioRecord) {
     },
     queryClient,
   );
-  const revokeGrant = useMutation(
+  const remove = useMutation(
     {
-      mutationFn: (grant: string) => sendJson('DELETE', `${url}/grants/${grant}`),
-      onSuccess: () => queryClient.invalidateQueries({ queryKey: key, exact: true }),
+      mutationFn: async () => {
+        const { etag } = await getVersioned<FolioRecord>(url);
+        await sendJson('DELETE', url, undefined, { ifMatch: etag });
+        location.assign('/folios');
+      },
     },
     queryClient,
   );
-  return { folio, editItems, change, revokeGrant };
+  const changeGrant = useMutation(
+    {
+      mutationFn: async ({ id, patch }: { id: string; patch: GrantPatch }) => {
+        const grant = `${url}/grants/${id}`;
+        const { etag } = await getVersioned<GrantRecord>(grant);
+        return sendJson<GrantRecord>('PATCH', grant, patch, { ifMatch: etag });
+      },
+      onSuccess: again,
+    },
+    queryClient,
+  );
+  const revokeGrant = useMutation(
+    { mutationFn: (grant: string) => sendJson('DELETE', `${url}/grants/${grant}`), onSuccess: again },
+    queryClient,
+  );
+  const acceptTerms = useMutation(
+    {
+      mutationFn: (licence: string) => sendJson<FolioRecord>('POST', `${url}/terms`, { licence }),
+      onSuccess: keep,
+      // The licence may have changed once more: what is asked for must be the present one.
+      onError: again,
+    },
+    queryClient,
+  );
+  return { folio, isGone: isMissing(error), editItems, change, remove, changeGrant, revokeGrant, acceptTerms };
 }
+
+const isMissing = (error: unknown): boolean => error instanceof ProblemError && error.status === 404;

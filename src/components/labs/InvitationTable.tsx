@@ -5,12 +5,28 @@ import { DataTable } from '../ui/DataTable.tsx';
 import { Dialog } from '../ui/Dialog.tsx';
 import { shortDay } from '../ui/dates.ts';
 import { Problem } from '../ui/Problem.tsx';
+import { StatusLine } from '../ui/StatusLine.tsx';
 import type { DataColumn } from '../ui/table-csv.ts';
 
+interface Act {
+  mutate: (id: string) => void;
+  error: unknown;
+  isPending: boolean;
+}
 interface Props {
   invitations: InvitationRecord[];
-  revoke: { mutate: (id: string) => void; error: unknown; isPending: boolean };
+  resend: Act & { data: InvitationRecord | undefined };
+  revoke: Act;
 }
+
+/** When it came into its state. */
+function since(row: InvitationRecord): string {
+  if (row.state === 'accepted') return row.acceptedAt ?? row.sentAt;
+  if (row.state === 'revoked') return row.revokedAt ?? row.sentAt;
+  return row.state === 'lapsed' ? row.expiresAt : row.sentAt;
+}
+
+const STATE_COLOUR = { accepted: 'text-attest', lapsed: 'text-alert', sent: '', revoked: 'text-ink-soft' } as const;
 
 const COLUMNS: DataColumn<InvitationRecord>[] = [
   { id: 'email', header: 'Address', value: (row) => row.email },
@@ -19,24 +35,33 @@ const COLUMNS: DataColumn<InvitationRecord>[] = [
     id: 'state',
     header: 'State',
     value: (row) => row.state,
-    cell: ({ state }) => <span className={state === 'accepted' ? 'text-attest' : ''}>{state}</span>,
+    cell: (row) => <span className={STATE_COLOUR[row.state]}>{row.state}</span>,
+  },
+  { id: 'since', header: 'Since', value: (row) => since(row).slice(0, 10), cell: (row) => shortDay(since(row)) },
+  {
+    id: 'sends',
+    header: 'Sent',
+    value: (row) => row.sends,
+    cell: ({ sends }) => (sends === 1 ? 'once' : `${sends} ×`),
   },
   { id: 'by', header: 'By', value: (row) => row.invitedBy },
-  { id: 'sent', header: 'Sent', value: (row) => row.createdAt.slice(0, 10), cell: (row) => shortDay(row.createdAt) },
   {
     id: 'ends',
     header: 'Link until',
-    value: (row) => row.expiresAt.slice(0, 10),
-    cell: (row) => shortDay(row.expiresAt),
+    value: (row) => (row.state === 'sent' ? row.expiresAt.slice(0, 10) : null),
+    cell: (row) => (row.state === 'sent' ? shortDay(row.expiresAt) : '–'),
   },
 ];
 
-/** Invitations with what became of them; those still out can be taken back. */
-export function InvitationTable({ invitations, revoke }: Props) {
+/** Invitations with what became of them; those still out can be taken back, and those unused be sent again. */
+export function InvitationTable({ invitations, resend, revoke }: Props) {
   const [asked, setAsked] = useState<InvitationRecord | null>(null);
   return (
     <>
-      <Problem problem={revoke.error} />
+      <Problem problem={resend.error ?? revoke.error} />
+      <StatusLine>
+        {resend.data && `Sent to ${resend.data.email} again with a new link. The older link no longer works.`}
+      </StatusLine>
       <DataTable
         name="Invitations"
         columns={COLUMNS}
@@ -45,10 +70,22 @@ export function InvitationTable({ invitations, revoke }: Props) {
         tools={invitations.length > 8}
         compact
         actions={(row) =>
-          row.state === 'sent' && (
-            <Button size="small" kind="danger" onClick={() => setAsked(row)} aria-label={`Revoke ${row.email}`}>
-              Revoke
-            </Button>
+          (row.state === 'sent' || row.state === 'lapsed') && (
+            <span className="inline-flex gap-1.5">
+              <Button
+                size="small"
+                disabled={resend.isPending}
+                onClick={() => resend.mutate(row.id)}
+                aria-label={`Send again to ${row.email}`}
+              >
+                Send again
+              </Button>
+              {row.state === 'sent' && (
+                <Button size="small" kind="danger" onClick={() => setAsked(row)} aria-label={`Revoke ${row.email}`}>
+                  Revoke
+                </Button>
+              )}
+            </span>
           )
         }
       />

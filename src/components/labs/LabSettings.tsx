@@ -10,20 +10,21 @@ import { ProblemError } from '../ui/problem-error.ts';
 import { queryClient } from '../ui/query-client.ts';
 import { StatusLine } from '../ui/StatusLine.tsx';
 
-/** Name, place and the rule of attesting, for leads of the lab. */
+/** Name, place, the rule of attesting and whether it is a facility, for leads of the lab. */
 export function LabSettings({ lab }: { lab: LabRecord }) {
   const [form, setForm] = useState({
     name: lab.name,
     place: lab.place ?? '',
     description: lab.description ?? '',
     outsideAttest: lab.outsideAttest,
+    facility: lab.facility,
   });
   const url = `/api/labs/${lab.id}`;
   const save = useMutation(
     {
       mutationFn: async () => {
         const { data, etag } = await getVersioned<LabRecord>(url);
-        const isStale = (['name', 'place', 'description', 'outsideAttest'] as const).some(
+        const isStale = (['name', 'place', 'description', 'outsideAttest', 'facility'] as const).some(
           (field) => data[field] !== lab[field],
         );
         if (isStale) {
@@ -78,6 +79,12 @@ export function LabSettings({ lab }: { lab: LabRecord }) {
           hint="Bands measured by this lab. Leads always may; who proposed a band never."
           checked={form.outsideAttest}
           onChange={(event) => change({ outsideAttest: event.target.checked })}
+        />
+        <Checkbox
+          label="Facility"
+          hint="Measures what other labs made. Everybody sees it; it changes nobody’s rights."
+          checked={form.facility}
+          onChange={(event) => change({ facility: event.target.checked })}
         />
         {!nameFault && <Problem problem={save.error} />}
         <div className="flex items-center gap-3">

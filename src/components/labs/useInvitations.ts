@@ -1,10 +1,10 @@
 import { useMutation, useQuery } from '@tanstack/react-query';
-import type { InvitationRecord } from '../../contracts/invitations.ts';
+import type { InvitationRecord, InvitationsSent } from '../../contracts/invitations.ts';
 import { getJson, sendJson } from '../ui/http.ts';
 import { queryClient } from '../ui/query-client.ts';
 
 /**
- * Invitations into a lab or to a folio: those sent, sending one, taking one back.
+ * Invitations into a lab or to a folio: those sent, sending some, sending one again, taking one back.
  *
  * @param owner - `/api/labs/{id}` or `/api/folios/{id}`
  */
@@ -16,12 +16,26 @@ export function useInvitations<Input>(owner: string) {
     queryClient,
   );
   const invite = useMutation(
-    { mutationFn: (input: Input) => sendJson<InvitationRecord>('POST', url, input), onSuccess: again },
+    {
+      mutationFn: async (input: Input) => {
+        const answer = await sendJson<InvitationsSent>('POST', url, input);
+        return 'items' in answer ? answer.items : [answer];
+      },
+      onSuccess: again,
+    },
+    queryClient,
+  );
+  const resend = useMutation(
+    {
+      mutationFn: (id: string) => sendJson<InvitationRecord>('POST', `/api/invitations/${id}/resend`),
+      // Also after a refusal: it was accepted or revoked meanwhile, which the table should show.
+      onSettled: again,
+    },
     queryClient,
   );
   const revoke = useMutation(
-    { mutationFn: (id: string) => sendJson('DELETE', `/api/invitations/${id}`), onSuccess: again },
+    { mutationFn: (id: string) => sendJson('DELETE', `/api/invitations/${id}`), onSettled: again },
     queryClient,
   );
-  return { sent, invite, revoke };
+  return { sent, invite, resend, revoke };
 }

@@ -1,10 +1,12 @@
 import type { DaySheet } from '#src/contracts/day-sheet.ts';
 import { type Asker, isMember } from '../access/asker.ts';
+import { endedFolios } from '../folios/ended.ts';
 import { listFolios } from '../folios/list.ts';
 import { countMergeTasks } from '../merges/tasks.ts';
 import { listSpectra } from '../spectra/list.ts';
 import { complexDrafts, spectrumDrafts } from './drafts.ts';
 import { invitationsOut } from './invitations-out.ts';
+import { requestsOpen } from './requests-open.ts';
 import { bandsToAttest } from './to-attest.ts';
 
 const RECENT = 8;
@@ -12,23 +14,26 @@ const nothing = { items: [], total: 0 };
 
 /** The first page of somebody: what waits for them, all of it within their sight. Guests get their folios alone. */
 export async function daySheet(asker: Asker): Promise<DaySheet> {
-  const folios = await grantedFolios(asker);
+  const [folios, ended] = await Promise.all([grantedFolios(asker), endedFolios(asker)]);
   if (!isMember(asker)) {
     return {
       drafts: nothing,
       spectrumDrafts: nothing,
       toAttest: nothing,
       invitations: nothing,
+      requests: nothing,
       mergeTasks: null,
       recentSpectra: [],
       folios,
+      ended,
     };
   }
-  const [drafts, unfinished, toAttest, invitations, mergeTasks, recent] = await Promise.all([
+  const [drafts, unfinished, toAttest, invitations, requests, mergeTasks, recent] = await Promise.all([
     complexDrafts(asker),
     spectrumDrafts(asker),
     bandsToAttest(asker),
     invitationsOut(asker),
+    requestsOpen(asker),
     countMergeTasks(asker),
     listSpectra(asker, { sort: '-created', limit: RECENT, facets: '0', state: ['registered'] }),
   ]);
@@ -42,7 +47,8 @@ export async function daySheet(asker: Asker): Promise<DaySheet> {
     createdAt,
     synthetic,
   }));
-  return { drafts, spectrumDrafts: unfinished, toAttest, invitations, mergeTasks, recentSpectra, folios };
+  const waiting = { drafts, spectrumDrafts: unfinished, toAttest, invitations, requests, mergeTasks };
+  return { ...waiting, recentSpectra, folios, ended };
 }
 
 async function grantedFolios(asker: Asker): Promise<DaySheet['folios']> {

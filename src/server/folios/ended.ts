@@ -1,10 +1,12 @@
 import { and, desc, eq, inArray, lte, sql } from 'drizzle-orm';
 import { normaliseAccession } from '#src/contracts/accession.ts';
+import type { AskedForMore } from '#src/contracts/grants.ts';
 import { accessLog, complexes, folioItems, type folios, labs, spectra, trail } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
 import { type EndedAccess, endedAccess, isLongAgo } from '../access/grants.ts';
 import { database } from '../database.ts';
 import { contactOf } from '../grants/contact.ts';
+import { openRequests } from '../grants/requests.ts';
 
 /** What somebody is told who once read a folio: what they knew of it, when it ended, and who can renew it. */
 export interface EndedFolio {
@@ -16,6 +18,8 @@ export interface EndedFolio {
   contact: string | null;
   /** Whether they may still ask for it here. */
   mayAsk: boolean;
+  /** Their own requests that wait for an answer. */
+  asked: AskedForMore[];
 }
 
 /** Folios that the asker read until lately, the last ended first. */
@@ -76,14 +80,23 @@ async function openedRecord(kind: string, id: string): Promise<{ subjectId: stri
   return row ? { subjectId: id, complexId: row.complexId } : null;
 }
 
-async function describe({ folio, endedAt: at }: EndedAccess): Promise<EndedFolio> {
+async function describe({ asker, folio, endedAt: at }: EndedAccess): Promise<EndedFolio> {
   const { db } = await database();
-  const [[lab], contact, name] = await Promise.all([
+  const [[lab], contact, name, asked] = await Promise.all([
     db.select({ name: labs.name }).from(labs).where(eq(labs.id, folio.labId)),
     contactOf(db, folio.labId),
     nameAt(folio, at),
+    openRequests(asker, [folio.id]),
   ]);
-  return { id: folio.id, name, lab: lab!.name, endedAt: at, contact: contact?.name ?? null, mayAsk: !isLongAgo(at) };
+  return {
+    id: folio.id,
+    name,
+    lab: lab!.name,
+    endedAt: at,
+    contact: contact?.name ?? null,
+    mayAsk: !isLongAgo(at),
+    asked: asked.map(({ id, wants, createdAt }) => ({ id, wants, createdAt })),
+  };
 }
 
 /** The name that the folio had when access ended: a later one is none of theirs to learn. */

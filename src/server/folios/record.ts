@@ -1,15 +1,6 @@
-import { and, asc, eq, inArray, isNull, max, sql } from 'drizzle-orm';
+import { and, asc, eq, inArray, max, sql } from 'drizzle-orm';
 import type { FolioRecord } from '#src/contracts/sharing.ts';
-import {
-  accessRequests,
-  complexes,
-  editions,
-  folioItems,
-  type folios,
-  grants,
-  labs,
-  spectra,
-} from '#src/db/schema/index.ts';
+import { complexes, editions, folioItems, type folios, grants, labs, spectra } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
 import { leads } from '../access/records.ts';
 import { canChangeFolio, type FolioAccess, guestLevel } from '../access/sharing.ts';
@@ -17,6 +8,7 @@ import { complexSight, spectrumSight } from '../access/sight.ts';
 import { database } from '../database.ts';
 import { contactsOf } from '../grants/contact.ts';
 import { grantRows } from '../grants/record.ts';
+import { openRequests } from '../grants/requests.ts';
 
 type Row = typeof folios.$inferSelect;
 
@@ -36,7 +28,7 @@ export async function folioRecords(asker: Asker, rows: Row[]): Promise<FolioReco
       .where(inArray(editions.folioId, ids))
       .groupBy(editions.folioId),
     ownGrants(asker, ids),
-    openRequests(asker, ids),
+    asker.grants.length > 0 ? openRequests(asker, ids) : [],
     contactsOf(asker.grants.length > 0 ? rows.map((folio) => folio.labId) : []),
   ]);
   return rows.map((folio) => {
@@ -127,19 +119,4 @@ function ownTerms(held: Grant[], licence: string): FolioRecord['terms'] {
   // Grants of before the licence was noted with them have none: what was accepted then cannot be told from here.
   const isCurrent = last.termsAcceptedAt !== null && (last.termsLicence ?? licence) === licence;
   return { acceptedAt: last.termsAcceptedAt, licence: last.termsLicence, isCurrent };
-}
-
-async function openRequests(asker: Asker, folioIds: string[]) {
-  if (asker.grants.length === 0) return [];
-  const { db } = await database();
-  return db
-    .select()
-    .from(accessRequests)
-    .where(
-      and(
-        eq(accessRequests.accountId, asker.accountId),
-        inArray(accessRequests.folioId, folioIds),
-        isNull(accessRequests.settledAt),
-      ),
-    );
 }

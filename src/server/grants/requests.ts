@@ -1,7 +1,8 @@
-import { and, count, desc, eq, isNull, type SQL } from 'drizzle-orm';
+import { and, count, desc, eq, inArray, isNull, type SQL } from 'drizzle-orm';
 import type { AccessRequestInput, AccessRequestRecord } from '#src/contracts/grants.ts';
 import type { Db, Tx } from '#src/db/client.ts';
 import { accessRequests, accounts, folios } from '#src/db/schema/index.ts';
+import type { Asker } from '../access/asker.ts';
 import type { AskForMore } from '../access/grants.ts';
 import type { FolioInvite } from '../access/sharing.ts';
 import { database } from '../database.ts';
@@ -42,6 +43,21 @@ export async function requestRows(db: Db | Tx, where: SQL | undefined): Promise<
 /** What guests of a folio asked for, the newest first. */
 export async function listRequests({ folio }: FolioInvite): Promise<AccessRequestRecord[]> {
   return requestRows((await database()).db, eq(accessRequests.folioId, folio.id));
+}
+
+/** The asker's own requests about folios that wait for an answer. */
+export async function openRequests(asker: Asker, folioIds: string[]) {
+  const { db } = await database();
+  return db
+    .select()
+    .from(accessRequests)
+    .where(
+      and(
+        eq(accessRequests.accountId, asker.accountId),
+        inArray(accessRequests.folioId, folioIds),
+        isNull(accessRequests.settledAt),
+      ),
+    );
 }
 
 /**
