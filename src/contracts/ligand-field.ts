@@ -25,7 +25,8 @@ export const LevelsInput = z
     ]),
     B: perCm,
     C: perCm,
-    zeta: z.literal(0, 'Spin–orbit coupling is not computed yet: leave zeta out, or send 0').optional(),
+    zeta: z.number().min(-10_000).max(10_000).optional().describe('one-electron spin–orbit parameter ζ in cm⁻¹'),
+    alpha: z.number().min(-1000).max(1000).optional().describe('Trees’ correction α L(L + 1), α in cm⁻¹'),
   })
   .meta({ id: 'LevelsInput' });
 
@@ -39,6 +40,9 @@ export const LevelsResult = z
         multiplicity: z.number().int().nullable(),
         irrep: z.string().nullable(),
         label: z.string().nullable(),
+        configurations: z.array(z.looseObject({ configuration: z.string(), share: z.number() })).optional(),
+        symmetry: z.string().nullable().optional().describe('irrep of the double group by its least j'),
+        composition: z.array(z.looseObject({ term: z.string(), share: z.number() })).optional(),
       }),
     ),
   })

@@ -14,6 +14,8 @@ export interface CubicBlock {
   /** Irrep of O, or of Td: no `g`. */
   irrep: CubicIrrep;
   dimension: number;
+  /** All d electrons. */
+  electrons: number;
   /** Electrons in e of each basis state, rising: the rows are states of one configuration t2^(n−m) e^m. */
   upper: number[];
   /** Field per unit of Δ, e above t2, centre of gravity of the orbitals at 0; diagonal. */
@@ -76,8 +78,8 @@ export function blockMatrix(block: CubicBlock, { delta, B, C, alpha = 0 }: Stren
  * L of the free-ion terms from which the levels of a block rise, in the order of its levels: roots of one spin and
  * irrep never cross. Null where terms of different L coincide in the free ion.
  */
-export function blockParents(block: CubicBlock, B: number, C: number): (number | null)[] {
-  const { values, vectors } = symmetricEigen(blockMatrix(block, { delta: 0, B, C }));
+export function blockParents(block: CubicBlock, B: number, C: number, alpha = 0): (number | null)[] {
+  const { values, vectors } = symmetricEigen(blockMatrix(block, { delta: 0, B, C, alpha }));
   const tolerance = 1e-9 * (B + C);
   const momenta = within(vectors, block.orbitalSquared);
   return values.map((value) => {
@@ -106,6 +108,7 @@ function build(space: ConfigurationSpace): CubicBlock[] {
         multiplicity,
         irrep,
         dimension: IRREP_DIMENSION[irrep],
+        electrons: space.n,
         upper,
         field: diagonal(upper.map((electrons) => electrons - 0.4 * space.n)),
         B: within(basis, space.B),

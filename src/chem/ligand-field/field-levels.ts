@@ -1,20 +1,21 @@
 import { reduce } from '../symmetry/products.ts';
-import { type ConfigurationSpace, configurationSpace, oneElectron } from './configuration-space.ts';
-import { combine, identity, type Matrix, pickColumns, product, within } from './matrix.ts';
+import { configurationSpace } from './configuration-space.ts';
+import { type Matrix, product } from './matrix.ts';
 import type { FieldSetting } from './overlap-group.ts';
-import { quantumNumber, splitBy } from './subspaces.ts';
+import { type Repulsion, type SpinSpace, spinMatrix, spinSpaces } from './spin-spaces.ts';
 import { symmetricEigen } from './symmetric-eigen.ts';
-import { turnOfSpace } from './turns.ts';
+import { turnStates } from './turns.ts';
 
 export interface Level {
   /** Above the lowest level, in the unit of the request. */
   energy: number;
   /** Spin components counted. */
   degeneracy: number;
-  /** 2S + 1. */
-  multiplicity: number;
+  /** 2S + 1; null where spin–orbit coupling mixes spins. */
+  multiplicity: number | null;
+  /** Of the point group; with spin–orbit coupling of its double group, after Bethe: `Γ8+`. */
   irrep: string | null;
-  /** Multiplicity with irrep: `4T1g`. */
+  /** Multiplicity with irrep: `4T1g`; with spin–orbit coupling the irrep alone. */
   label: string | null;
   /** Letter of the free-ion term it rises from, `F` in 4T1g(F); null where that cannot be told. */
   parent: string | null;
@@ -22,6 +23,11 @@ export interface Level {
 
 /** Levels of one spin nearer than this share of field and repulsion are one: angles come with few decimals. */
 const COINCIDENT = 1e-6;
+
+/** Energy difference up to which levels of this field and repulsion count as one. */
+export function coincidence(field: Matrix, { B, C }: Repulsion): number {
+  return COINCIDENT * (Math.max(...field.data.map(Math.abs)) + B + C);
+}
 
 /**
  * Levels of dⁿ in any one-electron field, a symmetric 5 × 5 matrix over z², x²−y², xy, xz, yz; ascending.
@@ -32,60 +38,98 @@ const COINCIDENT = 1e-6;
 export function fieldLevels(
   n: number,
   field: Matrix,
-  B: number,
-  C: number,
+  repulsion: Repulsion,
   setting: FieldSetting | null = null,
 ): Level[] {
-  const space = configurationSpace(n);
-  const tolerance = COINCIDENT * (Math.max(...field.data.map(Math.abs)) + B + C);
-  const hamiltonian = combine([
-    [1, oneElectron(field, space.substitutions)],
-    [B, space.B],
-    [C, space.C],
-  ]);
-  const turns = setting?.representatives.map((orbitals) => turnOfSpace(space, orbitals)) ?? [];
-  const found = spinSpaces(space).flatMap(({ multiplicity, basis }) => {
-    const { values, vectors } = symmetricEigen(within(basis, hamiltonian));
-    const states = product(basis, vectors);
-    const turned = turns.map((turn) => product(turn, states));
-    return groupsOf(values, tolerance).flatMap((members) => {
-      const energy = members.reduce((sum, i) => sum + values[i]!, 0) / members.length;
-      const characters = turned.map((images) => overlapSum(states, images, members));
-      const parts = setting ? irrepsOf(setting, characters, members.length) : null;
-      return (parts ?? [{ irrep: null, dimension: members.length }]).map(({ irrep, dimension }) => ({
+  const found = fieldStates(n, field, repulsion, setting).flatMap(({ space: { multiplicity }, groups }) =>
+    groups.flatMap(({ energy, members, parts }) =>
+      (parts ?? [{ irrep: null, dimension: members.length }]).map(({ irrep, dimension }) => ({
         energy,
         degeneracy: multiplicity * dimension,
         multiplicity,
         irrep,
         label: irrep === null ? null : `${multiplicity}${irrep}`,
         parent: null,
-      }));
-    });
-  });
+      })),
+    ),
+  );
   return fromLowest(found);
 }
 
-/** Levels with energies counted from the lowest, ascending. */
-export function fromLowest(found: readonly Level[]): Level[] {
-  const lowest = Math.min(...found.map(({ energy }) => energy));
-  return found
-    .map((level) => ({ ...level, energy: level.energy - lowest }))
-    .sort((a, b) => a.energy - b.energy || b.multiplicity - a.multiplicity);
+/** The eigenstates of one spin. */
+export interface FieldStates {
+  space: SpinSpace;
+  values: number[];
+  /** Over the basis of the space, by column. */
+  vectors: Matrix;
+  /** States that coincide, with the irreps they form; null without a group, or in a field lower than its group. */
+  groups: { energy: number; members: number[]; parts: { irrep: string; dimension: number }[] | null }[];
 }
 
-/** Indices of ascending values, parted where they lie apart. */
-function groupsOf(values: readonly number[], tolerance: number): number[][] {
-  const starts = values.flatMap((e, i) => (i === 0 || e - values[i - 1]! > tolerance ? [i] : []));
-  return starts.map((start, k) => {
-    const end = starts[k + 1] ?? values.length;
-    return Array.from({ length: end - start }, (_, i) => start + i);
+/** Eigenstates of dⁿ in a field, spin by spin. */
+export function fieldStates(
+  n: number,
+  field: Matrix,
+  repulsion: Repulsion,
+  setting: FieldSetting | null,
+): FieldStates[] {
+  const tolerance = coincidence(field, repulsion);
+  return spinSpaces(n).map((space) => {
+    const { values, vectors } = symmetricEigen(spinMatrix(space, field, repulsion));
+    const groups = groupsOf(values, tolerance);
+    const characters = setting ? charactersOf(n, product(space.basis, vectors), groups, setting) : null;
+    return {
+      space,
+      values,
+      vectors,
+      groups: groups.map((members, g) => ({
+        energy: members.reduce((sum, i) => sum + values[i]!, 0) / members.length,
+        members,
+        parts: setting && characters ? irrepsOf(setting, characters[g]!, members.length) : null,
+      })),
+    };
   });
 }
 
-/** Σ ⟨state|turned state⟩ over the members: the character of the level. */
-function overlapSum(states: Matrix, images: Matrix, members: readonly number[]): number {
-  const [a, b] = [pickColumns(states, members).data, pickColumns(images, members).data];
-  return a.reduce((sum, x, i) => sum + x * b[i]!, 0);
+/** Levels with energies counted from the lowest, ascending. */
+export function fromLowest<L extends Level>(found: readonly L[]): L[] {
+  const lowest = Math.min(...found.map(({ energy }) => energy));
+  return found
+    .map((level) => ({ ...level, energy: level.energy - lowest }))
+    .sort((a, b) => a.energy - b.energy || (b.multiplicity ?? 0) - (a.multiplicity ?? 0));
+}
+
+/** Indices of ascending values, parted where they lie apart. */
+export function groupsOf(values: ArrayLike<number>, tolerance: number): number[][] {
+  const groups: number[][] = [];
+  for (let i = 0; i < values.length; i++) {
+    if (i > 0 && values[i]! - values[i - 1]! <= tolerance) groups.at(-1)!.push(i);
+    else groups.push([i]);
+  }
+  return groups;
+}
+
+/** Character of each group of states, by class: Σ ⟨state|turned state⟩ over its members. */
+function charactersOf(n: number, states: Matrix, groups: readonly number[][], setting: FieldSetting): number[][] {
+  const space = configurationSpace(n);
+  const groupOf = new Int32Array(states.columns);
+  for (const [g, members] of groups.entries()) for (const i of members) groupOf[i] = g;
+  const known = new Map<string, Float64Array>();
+  const byClass = setting.representatives.map((orbitals) => {
+    // Operations that differ by inversion do the same to d orbitals.
+    const key = orbitals.data.map((x) => Math.round(x * 1e6) || 0).join();
+    const characters = known.get(key) ?? new Float64Array(groups.length);
+    if (known.has(key)) return characters;
+    known.set(key, characters);
+    const turned = turnStates(space, orbitals, states).data;
+    for (let at = 0; at < turned.length; at += states.columns) {
+      for (let k = 0; k < states.columns; k++) {
+        characters[groupOf[k]!] = characters[groupOf[k]!]! + states.data[at + k]! * turned[at + k]!;
+      }
+    }
+    return characters;
+  });
+  return groups.map((_, g) => byClass.map((characters) => characters[g]!));
 }
 
 /** The irreps of a level, each by itself; null where they do not add up, as in a field lower than its group. */
@@ -99,18 +143,4 @@ function irrepsOf(
     return Array.from({ length: Math.max(0, count) }, () => ({ irrep, dimension }));
   });
   return parts.reduce((sum, { dimension }) => sum + dimension, 0) === size ? parts : null;
-}
-
-const spins = new Map<number, { multiplicity: number; basis: Matrix }[]>();
-
-/** The space of dⁿ by spin, built once for each n. */
-function spinSpaces(space: ConfigurationSpace): { multiplicity: number; basis: Matrix }[] {
-  const spaces =
-    spins.get(space.n) ??
-    splitBy(space.spinSquared, identity(space.size)).map(({ value, basis }) => ({
-      multiplicity: Math.round(2 * quantumNumber(value)) + 1,
-      basis,
-    }));
-  spins.set(space.n, spaces);
-  return spaces;
 }

@@ -1,6 +1,7 @@
 import { dot, type Matrix3, type Vector3 } from '../geometry/vector.ts';
 import { type Embedding, embeddings } from '../symmetry/embedding.ts';
 import { type FiniteGroup, finiteGroup } from '../symmetry/finite-group.ts';
+import { IDENTITY } from '../symmetry/matrices.ts';
 import { isLinear, permutingOperations } from '../symmetry/permuting-operations.ts';
 import { schoenflies } from '../symmetry/point-group.ts';
 import { rotateOrbitals } from './d-orbitals.ts';
@@ -68,4 +69,18 @@ function bestSetting(settings: readonly Embedding[], points: readonly Vector3[])
   return settings
     .filter(({ frame }) => z && isZero(dot(frame[2], z) - 1))
     .reduce<Embedding | undefined>((best, other) => (!best || score(other) > score(best) ? other : best), undefined);
+}
+
+const cubic = new Map<string, FieldSetting>();
+
+/** The group of a cubic field with its axes along x, y and z. */
+export function cubicFieldSetting(symbol: 'Oh' | 'Td'): FieldSetting {
+  const group = finiteGroup(symbol)!;
+  const setting = cubic.get(symbol) ?? {
+    group,
+    axes: IDENTITY,
+    representatives: group.classes.map(({ representative }) => rotateOrbitals(representative)),
+  };
+  cubic.set(symbol, setting);
+  return setting;
 }

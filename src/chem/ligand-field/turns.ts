@@ -3,20 +3,60 @@ import { type Matrix, zeros } from './matrix.ts';
 
 /** What a transformation of the orbitals does to the determinants of dⁿ. */
 export function turnOfSpace(space: ConfigurationSpace, orbitals: Matrix): Matrix {
-  const up = minors(orbitals, space.ups);
-  const down = minors(orbitals, space.downs);
+  const { up, down } = turnFactors(space, orbitals);
   const turn = zeros(space.size);
   const d = space.downs.length;
   for (let i = 0; i < space.size; i++) {
-    const [ups, downs] = [up[Math.floor(i / d)]!, down[i % d]!];
-    for (let j = 0; j < space.size; j++) turn.data[i * space.size + j] = ups[Math.floor(j / d)]! * downs[j % d]!;
+    const [ups, downs] = [Math.floor(i / d) * space.ups.length, (i % d) * d];
+    for (let j = 0; j < space.size; j++) {
+      turn.data[i * space.size + j] = up.data[ups + Math.floor(j / d)]! * down.data[downs + (j % d)]!;
+    }
   }
   return turn;
 }
 
+/** The same as two factors, over the choices of spin-up orbitals and of spin-down orbitals. */
+export function turnFactors(space: ConfigurationSpace, orbitals: Matrix): { up: Matrix; down: Matrix } {
+  return { up: minors(orbitals, space.ups), down: minors(orbitals, space.downs) };
+}
+
+/** The columns of `states` turned: by one factor, then by the other, which is far less work than by their product. */
+export function turnStates(space: ConfigurationSpace, orbitals: Matrix, states: Matrix): Matrix {
+  const { up, down } = turnFactors(space, orbitals);
+  const d = space.downs.length;
+  const half = zeros(states.rows, states.columns);
+  const turned = zeros(states.rows, states.columns);
+  for (let u = 0; u < up.rows; u++) {
+    for (let to = 0; to < d; to++) {
+      for (let from = 0; from < d; from++) {
+        addRow(half, u * d + to, states, u * d + from, down.data[to * d + from]!);
+      }
+    }
+  }
+  for (let to = 0; to < up.rows; to++) {
+    for (let from = 0; from < up.rows; from++) {
+      const factor = up.data[to * up.rows + from]!;
+      for (let k = 0; k < d; k++) addRow(turned, to * d + k, half, from * d + k, factor);
+    }
+  }
+  return turned;
+}
+
+function addRow(target: Matrix, to: number, source: Matrix, from: number, factor: number): void {
+  if (factor === 0) return;
+  const [t, s] = [to * target.columns, from * source.columns];
+  for (let k = 0; k < target.columns; k++) target.data[t + k] = target.data[t + k]! + factor * source.data[s + k]!;
+}
+
 /** How a transformation acts on antisymmetric products of orbitals: by its minors. */
-function minors(orbitals: Matrix, sets: readonly number[][]): number[][] {
-  return sets.map((rows) => sets.map((columns) => minor(orbitals, rows, columns)));
+function minors(orbitals: Matrix, sets: readonly number[][]): Matrix {
+  const all = zeros(sets.length);
+  sets.forEach((rows, i) => {
+    sets.forEach((columns, j) => {
+      all.data[i * sets.length + j] = minor(orbitals, rows, columns);
+    });
+  });
+  return all;
 }
 
 function minor(m: Matrix, rows: readonly number[], columns: readonly number[]): number {

@@ -3,10 +3,5 @@ import { endpoint } from '#src/server/endpoint.ts';
 import { runInWorker } from '#src/server/worker-pool.ts';
 
 export const POST = endpoint(routes.deriveLevels, {
-  act: ({ body, context }) =>
-    runInWorker(
-      'levels',
-      { n: body.n, field: body.field, B: body.B, C: body.C },
-      { field: 'n', signal: context.request.signal },
-    ),
+  act: ({ body, context }) => runInWorker('levels', body, { field: 'n', signal: context.request.signal }),
 });

@@ -49,7 +49,7 @@ describe('cubic fields', () => {
     const { levels: strong } = cubic(n, 'OC-6');
     const { levels: none } = cubic(n, 'OC-6', 0);
     // Energies count from the lowest level; the highest spin alone has a centre of gravity that B and C fix.
-    const top = Math.max(...strong.map(({ multiplicity }) => multiplicity));
+    const top = Math.max(...strong.map(({ multiplicity }) => multiplicity ?? 0));
     const spread = (all: Level[]): number =>
       mean(all.filter(({ multiplicity }) => multiplicity === top)) -
       mean(all.filter(({ multiplicity }) => multiplicity !== top));
@@ -197,7 +197,7 @@ describe('overlap fields', () => {
   test.each(COUNTS)('no field leaves the terms of d%i, a low field their states', (n) => {
     const states = (all: Level[]): number => all.reduce((sum, { degeneracy }) => sum + degeneracy, 0);
     expect(states(levels({ n, field: { kind: 'overlap', ligands: twisted }, B, C }).levels)).toBe(choose(10, n));
-    const free = fieldLevels(n, zeros(5), B, C);
+    const free = fieldLevels(n, zeros(5), { B, C });
     expect(states(free)).toBe(choose(10, n));
     expect(free).toHaveLength({ 1: 1, 2: 5, 3: 7, 4: 16, 5: 16, 6: 16, 7: 7, 8: 5, 9: 1 }[n]!);
   });
