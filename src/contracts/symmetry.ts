@@ -4,6 +4,7 @@ import { route } from './route.ts';
 const GroupSymbol = z.string().min(1).max(10).describe('Schoenflies symbol in plain text: Oh, D4h, Cinfv');
 const Irrep = z.string().min(1).max(20);
 const IrrepCount = z.object({ irrep: z.string(), count: z.number().int() });
+const Vector = z.tuple([z.number(), z.number(), z.number()]);
 const PerAxis = z.object({ x: z.boolean(), y: z.boolean(), z: z.boolean() });
 const irrepsPerAxis = z.object({ x: z.array(z.string()), y: z.array(z.string()), z: z.array(z.string()) });
 
@@ -33,10 +34,35 @@ export const DescentInput = z.strictObject({
   along: z.string().max(100).optional().describe("A choice of axes, or one class in it, such as C2''"),
 });
 export const SplittingInput = z.strictObject({ group: GroupSymbol, term: z.string().min(1).max(10) });
-export const VibrationsInput = z.strictObject({
-  geometry: z.string().min(1).max(10),
-  sites: z.array(z.string().min(1).max(40)).min(1).max(12),
+const Atom = z.strictObject({
+  element: z.string().min(1).max(10).describe('Atoms of one symbol are alike'),
+  x: z.number().describe('Å, in any frame'),
+  y: z.number(),
+  z: z.number(),
 });
+export const VibrationsInput = z
+  .strictObject({
+    geometry: z.string().min(1).max(10).optional().describe('Polyhedral symbol, with sites'),
+    sites: z.array(z.string().min(1).max(40)).min(1).max(12).optional(),
+    links: z
+      .array(z.tuple([z.number().int(), z.number().int()]))
+      .max(12)
+      .optional()
+      .describe('Pairs of sites, counted from 0, that a chelate ring joins'),
+    coordinates: z.array(Atom).min(1).max(200).optional().describe('In place of geometry and sites'),
+    tolerance: z.number().optional().describe('Å, default 0.1: about how far atoms may lie from exact symmetry'),
+  })
+  .superRefine((input, context) => {
+    const refuse = (field: string, message: string) => context.addIssue({ code: 'custom', path: [field], message });
+    if (input.coordinates) {
+      if (input.geometry || input.sites || input.links)
+        refuse('coordinates', 'Send coordinates or a geometry, not both');
+      return;
+    }
+    if (!input.geometry) refuse('geometry', 'Send geometry and sites, or coordinates');
+    if (!input.sites) refuse('sites', 'Send geometry and sites, or coordinates');
+    if (input.tolerance !== undefined) refuse('tolerance', 'A tolerance goes with coordinates');
+  });
 export const SelectionInput = z.strictObject({
   group: GroupSymbol,
   from: z.string().min(1).max(30),
@@ -110,6 +136,14 @@ export const symmetryRoutes = {
       group: z.string(),
       total: z.array(IrrepCount),
       vibrations: z.array(IrrepCount.extend({ infrared: z.boolean(), raman: z.boolean() })),
+      stretches: z.array(IrrepCount).nullable(),
+      bends: z.array(IrrepCount).nullable(),
+      permutation: z.array(IrrepCount).describe('Irreps of the atoms as the operations permute them'),
+      axes: z.string(),
+      orientation: z
+        .object({ x: Vector, y: Vector, z: Vector, centre: Vector })
+        .optional()
+        .describe('For coordinates: the axes of the labels in the frame given'),
     }),
   }),
   deriveSelection: route({

@@ -52,3 +52,28 @@ test('what is no group or no irrep is refused with its place', async () => {
   const refused = await post('/api/derive/product', { group: 'Oh', irreps: ['T3g'] }, 422);
   expect(refused.errors).toMatchObject([{ pointer: '#/irreps' }]);
 });
+
+test('vibrations of coordinates in place of a geometry', async () => {
+  const octahedron = [
+    [0, 0, 0],
+    [2, 0.04, 0],
+    [-2, 0, 0.03],
+    [0, 2.03, 0],
+    [0, -2, 0],
+    [0.02, 0, 2],
+    [0, -0.04, -1.97],
+  ].map(([x, y, z], i) => ({ element: i === 0 ? 'Co' : 'N', x, y, z }));
+  const found = await post('/api/derive/vibrations', { coordinates: octahedron });
+  const ideal = await post('/api/derive/vibrations', { geometry: 'OC-6', sites: [...'AAAAAA'] });
+  expect(found).toMatchObject({ group: 'Oh', vibrations: ideal.vibrations, total: ideal.total, tolerance: 0.1 });
+  expect(await post('/api/derive/vibrations', { coordinates: octahedron, tolerance: 0.005 })).not.toMatchObject({
+    group: 'Oh',
+  });
+  const both = await post('/api/derive/vibrations', { coordinates: octahedron, geometry: 'OC-6' }, 422);
+  expect(both.errors).toMatchObject([{ pointer: '#/coordinates' }]);
+  const neither = await post('/api/derive/vibrations', {}, 422);
+  expect(neither.errors).toMatchObject([{ pointer: '#/geometry' }, { pointer: '#/sites' }]);
+  const twice = [...octahedron, octahedron[0]];
+  const refused = await post('/api/derive/vibrations', { coordinates: twice }, 422);
+  expect(refused.errors).toMatchObject([{ pointer: '#/coordinates', detail: expect.stringContaining('1 and 8') }]);
+});

@@ -29,10 +29,15 @@ export function embeddings(group: FiniteGroup, operations: readonly Matrix3[]): 
 /** An operation of the standard setting, in the frame that its axes are given in. */
 const carried = (m: Matrix3, frame: Matrix3): Matrix3 => multiply(transpose(frame), multiply(m, frame));
 
+/** Radians; below the angle between any two axes of a group in the list. */
+const NEARLY = 0.05;
+
 function frames(operations: readonly Matrix3[]): Matrix3[] {
   const standard: Vector3[] = [IDENTITY[2], IDENTITY[0], IDENTITY[1]];
   const axes = operations.map((m) => operationKind(m).axis).filter((axis) => axis !== null);
-  const directions = distinct([...standard, ...axes]);
+  // Axes found in coordinates may lie nearly along x, y or z, and then stand for these.
+  const snapped = standard.map((d) => axes.find((axis) => length(cross(axis, d)) < NEARLY) ?? d);
+  const directions = distinct([...snapped, ...axes]);
   return directions.flatMap((z) => {
     const across = directions.flatMap((d): Vector3[] => {
       const other = cross(d, z);
@@ -46,6 +51,6 @@ function frames(operations: readonly Matrix3[]): Matrix3[] {
 /** Directions that differ, one of each opposite pair. */
 function distinct(directions: readonly Vector3[]): Vector3[] {
   const kept: Vector3[] = [];
-  for (const d of directions) if (!kept.some((k) => Math.abs(Math.abs(dot(k, d)) - 1) < 1e-6)) kept.push(d);
+  for (const d of directions) if (!kept.some((k) => length(cross(k, d)) < 1e-6)) kept.push(d);
   return kept;
 }

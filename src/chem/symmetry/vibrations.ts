@@ -1,14 +1,10 @@
 import { DomainError } from '../errors.ts';
 import { findGeometry, operationsOf } from '../geometry/catalogue.ts';
-import type { Matrix3, Vector3 } from '../geometry/vector.ts';
-import { apply, determinant, dot, length, subtract, trace } from '../geometry/vector.ts';
-import { type Embedding, embeddings } from './embedding.ts';
-import type { FiniteGroup } from './finite-group.ts';
 import { type IrrepCount, requireFinite } from './groups.ts';
 import { linearVibrations } from './linear-vibrations.ts';
+import { modesOfAtoms } from './modes-of-atoms.ts';
 import { isLinear } from './permuting-operations.ts';
 import { pointGroup, stabiliser } from './point-group.ts';
-import { reduce } from './products.ts';
 
 /** A skeleton of metal and donor atoms. */
 export interface Skeleton {
@@ -35,8 +31,12 @@ export interface SkeletonVibrations {
   total: IrrepCount[];
   /** Without translations and rotations. */
   vibrations: Vibration[];
-  /** Stretches of the bonds from metal to donor; these are among the vibrations. */
+  /** Stretches of the bonds, in a skeleton those from metal to donor; these are among the vibrations. */
   stretches: IrrepCount[];
+  /** The vibrations that are left: changes of angles. Null where the bonds close so many rings that none are left. */
+  bends: IrrepCount[] | null;
+  /** Irreps of the atoms as such, which the operations permute. */
+  permutation: IrrepCount[];
   /** Which axes the labels hang on. */
   axes: string;
 }
@@ -64,50 +64,9 @@ export function vibrations({ geometry: symbol, sites, links = [] }: Skeleton): S
   const group = pointGroup(operationsOf(geometry), points, linear);
   if (linear) return linearVibrations(group, n + 1);
   const matrices = stabiliser(operationsOf(geometry), points).map(({ matrix }) => matrix);
-  return finiteVibrations(requireFinite(group, 'geometry'), matrices, vertices);
-}
-
-function finiteVibrations(
-  group: FiniteGroup,
-  matrices: readonly Matrix3[],
-  vertices: readonly Vector3[],
-): SkeletonVibrations {
-  const { frame, images } = bestSetting(group, matrices, vertices);
-  const operations = group.classes.map(({ representative }) => images[group.operations.indexOf(representative)]!);
-  const stays = operations.map((m) => vertices.filter((v) => length(subtract(apply(m, v), v)) < 1e-4).length);
-  const vector = operations.map(trace);
-  const axial = operations.map((m) => trace(m) * Math.sign(determinant(m)));
-  // Γ(3N): each atom that stays put gives the character of a vector, and the metal always stays.
-  const all = vector.map((x, c) => x * (stays[c]! + 1));
-  const squares = group.powerClass(2);
-  const quadratic = vector.map((x, c) => (x * x + vector[squares[c]!]!) / 2);
-  const [polar, tensor] = [vector, quadratic].map((row) => new Set(reduce(group, row).map(({ irrep }) => irrep)));
-  return {
-    group: group.symbol,
-    total: reduce(group, all),
-    vibrations: reduce(
-      group,
-      all.map((x, c) => x - vector[c]! - axial[c]!),
-    ).map((term) => ({
-      ...term,
-      infrared: polar!.has(term.irrep),
-      raman: tensor!.has(term.irrep),
-    })),
-    stretches: reduce(group, stays),
-    axes: axesText(frame, vertices),
-  };
-}
-
-/** The setting whose plane xz holds the most donors, then whose x does; the polyhedron's own axes win a tie. */
-function bestSetting(group: FiniteGroup, matrices: readonly Matrix3[], vertices: readonly Vector3[]): Embedding {
-  const score = ({ frame: [x, y] }: Embedding): number =>
-    vertices.reduce((sum, v) => sum + (Math.abs(dot(v, y)) < 1e-4 ? 10 : 0) + (onAxis(v, x) ? 1 : 0), 0);
-  return embeddings(group, matrices).reduce((best, other) => (score(other) > score(best) ? other : best));
-}
-
-const onAxis = (v: Vector3, axis: Vector3): boolean => Math.abs(Math.abs(dot(v, axis)) - length(v)) < 1e-4;
-
-function axesText([x, y, z]: Matrix3, vertices: readonly Vector3[]): string {
-  const on = (axis: Vector3): string => `${vertices.filter((v) => onAxis(v, axis)).length}`;
-  return `Donors on the axes of the labels: ${on(x)} on x, ${on(y)} on y, ${on(z)} on z.`;
+  return modesOfAtoms(requireFinite(group, 'geometry'), matrices, {
+    positions: [[0, 0, 0], ...vertices],
+    bonds: vertices.map((_, i) => [0, i + 1]),
+    guides: vertices,
+  }).modes;
 }

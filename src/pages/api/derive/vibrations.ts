@@ -1,7 +1,8 @@
-import { vibrations } from '#src/chem/symmetry/index.ts';
+import { vibrations, vibrationsOfAtoms } from '#src/chem/symmetry/index.ts';
 import { routes } from '#src/contracts/routes.ts';
 import { endpoint } from '#src/server/endpoint.ts';
 
 export const POST = endpoint(routes.deriveVibrations, {
-  act: ({ body }) => vibrations(body),
+  act: ({ body: { coordinates, tolerance, geometry = '', sites = [], links = [] } }) =>
+    coordinates ? vibrationsOfAtoms(coordinates, tolerance) : vibrations({ geometry, sites, links }),
 });
