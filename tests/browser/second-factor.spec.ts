@@ -77,7 +77,7 @@ test('an authenticator app, a passkey and recovery codes', async ({ page, contex
     await nameAndPassword(page, 'Phone');
     const dialog = page.getByRole('dialog');
     await expect(dialog.getByRole('img', { name: /QR code/ })).toBeVisible();
-    secret = await dialog.locator('code').innerText();
+    secret = (await dialog.locator('code').textContent()) ?? '';
     await expectNoSeriousFault(page);
     await dialog.getByLabel('Code of the app').fill('000000');
     await dialog.getByRole('button', { name: 'Confirm' }).click();
@@ -85,7 +85,7 @@ test('an authenticator app, a passkey and recovery codes', async ({ page, contex
     await dialog.getByLabel('Code of the app').fill(codeOf(secret));
     await dialog.getByRole('button', { name: 'Confirm' }).click();
     const shown = page.getByRole('region', { name: 'Your recovery codes' });
-    codes = (await shown.locator('code').innerText()).split(/\s+/).filter((code) => code !== '');
+    codes = ((await shown.locator('code').textContent()) ?? '').split(/\s+/).filter((code) => code !== '');
     expect(codes).toHaveLength(10);
     const download = page.waitForEvent('download');
     await shown.getByRole('button', { name: 'Download as text' }).click();
