@@ -3,8 +3,7 @@ import { Button } from '../ui/Button.tsx';
 import { TextInput } from '../ui/controls.tsx';
 import { Problem } from '../ui/Problem.tsx';
 import { ProblemError } from '../ui/problem-error.ts';
-import { missingCharacters, SHORTEST_PASSWORD } from './join-step.ts';
-import { PasswordInput } from './PasswordInput.tsx';
+import { NewPasswordInput, UsernameForManagers } from './NewPasswordInput.tsx';
 import type { useJoin } from './useJoin.ts';
 
 interface Props {
@@ -17,8 +16,6 @@ interface Props {
 export function NewAccountFields({ email, terms, join }: Props) {
   const { name, password, accept } = join;
   const refused = accept.error instanceof ProblemError ? accept.error : null;
-  const missing = missingCharacters(password);
-  const length = `At least ${SHORTEST_PASSWORD} characters; several words are easiest to keep.`;
   const faults = { name: refused?.about('name'), password: refused?.about('password') };
   const isTold = faults.name !== undefined || faults.password !== undefined;
   return (
@@ -30,8 +27,7 @@ export function NewAccountFields({ email, terms, join }: Props) {
         accept.mutate({ name: name.trim(), password });
       }}
     >
-      {/* Password managers file the new password under this address. */}
-      <input type="hidden" name="username" autoComplete="username" value={email} readOnly />
+      <UsernameForManagers email={email} />
       <TextInput
         label="Your name"
         hint="Others see it beside what you do."
@@ -42,16 +38,7 @@ export function NewAccountFields({ email, terms, join }: Props) {
         value={name}
         onChange={(event) => join.setName(event.target.value)}
       />
-      <PasswordInput
-        label="New password"
-        hint={password && missing > 0 ? `${length} ${missing} more.` : length}
-        error={faults.password}
-        autoComplete="new-password"
-        required
-        minLength={SHORTEST_PASSWORD}
-        value={password}
-        onChange={(event) => join.setPassword(event.target.value)}
-      />
+      <NewPasswordInput value={password} onChange={join.setPassword} error={faults.password} />
       {terms}
       {!isTold && <Problem problem={accept.error} />}
       <Button type="submit" kind="primary" disabled={accept.isPending}>

@@ -15,15 +15,20 @@ interface Props {
   next: string;
   email: string;
   fault: string | null;
+  /** Whether a second factor is asked for, as told to a browser without script. */
+  asksFactor: boolean;
   /** For a browser without script, which posts the form itself. */
   csrfToken: string;
   /** The invented accounts of demo mode with their common password, or null. */
   demo: { accounts: readonly DemoAccount[]; password: string } | null;
 }
 
-/** Address and password. Without script it is an ordinary form. */
-export function SignInForm({ next, email, fault, csrfToken, demo }: Props) {
-  const form = useSignIn({ email, fault, next });
+/**
+ * Address and password, and the second factor once the server asks for it. Without script it is an ordinary form, which
+ * then shows all three fields.
+ */
+export function SignInForm({ next, email, fault, asksFactor, csrfToken, demo }: Props) {
+  const form = useSignIn({ email, fault, asksFactor, next });
   return (
     <div className="flex flex-col gap-5">
       <form
@@ -35,23 +40,8 @@ export function SignInForm({ next, email, fault, csrfToken, demo }: Props) {
       >
         <input type="hidden" name="csrfToken" value={csrfToken} />
         <input type="hidden" name="callbackUrl" value={next} />
-        <TextInput
-          label="E-mail address"
-          type="email"
-          name="email"
-          autoComplete="username"
-          required
-          value={form.email}
-          onChange={(event) => form.setEmail(event.target.value)}
-        />
-        <PasswordInput
-          label="Password"
-          name="password"
-          autoComplete="current-password"
-          required
-          value={form.password}
-          onChange={(event) => form.setPassword(event.target.value)}
-        />
+        {!form.isProved && <AddressAndPassword form={form} />}
+        {form.asksFactor && <SecondFactorFields form={form} />}
         <div role="alert">
           {form.fault && (
             <p className="border border-alert-line border-l-3 border-l-alert bg-alert-wash px-4 py-2.5 text-alert">
@@ -63,8 +53,87 @@ export function SignInForm({ next, email, fault, csrfToken, demo }: Props) {
         <Button type="submit" kind="primary" disabled={form.busy}>
           {form.busy ? 'Signing in' : 'Sign in'}
         </Button>
+        {form.isProved && <OtherWays form={form} />}
       </form>
-      {demo && <DemoAccounts demo={demo} onChoose={form.fill} ready={form.ready} />}
+      {demo && !form.isProved && <DemoAccounts demo={demo} onChoose={form.fill} ready={form.ready} />}
+    </div>
+  );
+}
+
+type Form = ReturnType<typeof useSignIn>;
+
+function AddressAndPassword({ form }: { form: Form }) {
+  return (
+    <>
+      <TextInput
+        label="E-mail address"
+        type="email"
+        name="email"
+        autoComplete="username"
+        required
+        value={form.email}
+        onChange={(event) => form.setEmail(event.target.value)}
+      />
+      <div className="flex flex-col gap-1">
+        <PasswordInput
+          label="Password"
+          name="password"
+          autoComplete="current-password"
+          required
+          value={form.password}
+          onChange={(event) => form.setPassword(event.target.value)}
+        />
+        <a href="/reset" className="link self-start text-xs">
+          Forgotten your password?
+        </a>
+      </div>
+    </>
+  );
+}
+
+function SecondFactorFields({ form }: { form: Form }) {
+  return (
+    <>
+      <p role="status">
+        {form.isProved ? (
+          <>
+            The password of <b className="font-semibold break-words">{form.email.trim()}</b> is right. This account has
+            a second factor, too.
+          </>
+        ) : (
+          'This account has a second factor. Type the password once more, and the code with it.'
+        )}
+      </p>
+      <TextInput
+        label="Code"
+        hint="The six digits that your app shows now, or one of your recovery codes."
+        name="code"
+        autoComplete="one-time-code"
+        autoCapitalize="none"
+        spellCheck={false}
+        maxLength={100}
+        figures
+        required
+        autoFocus={form.isProved}
+        value={form.code}
+        onChange={(event) => form.setCode(event.target.value)}
+      />
+    </>
+  );
+}
+
+/** By passkey in place of a code, or as somebody else. */
+function OtherWays({ form }: { form: Form }) {
+  return (
+    <div className="flex flex-wrap items-center justify-between gap-2">
+      {form.hasPasskeys && (
+        <Button disabled={form.busy} onClick={form.usePasskey}>
+          Use a passkey
+        </Button>
+      )}
+      <Button kind="quiet" disabled={form.busy} onClick={form.startAgain}>
+        Sign in as somebody else
+      </Button>
     </div>
   );
 }

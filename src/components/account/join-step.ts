@@ -16,7 +16,7 @@ export const SHORTEST_PASSWORD = 15;
 
 /** How many characters are still missing, as the person counts them: an accented letter or a sign is one. */
 export function missingCharacters(password: string): number {
-  return Math.max(0, SHORTEST_PASSWORD - password.length);
+  return Math.max(0, SHORTEST_PASSWORD - [...password.normalize('NFKC')].length);
 }
 
 /** Where an accepted invitation leads: to the folio it opened, or to the day sheet. */

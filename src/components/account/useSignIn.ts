@@ -1,35 +1,80 @@
 import { type FormEvent, useEffect, useState } from 'react';
+import { askPasskey, knowsPasskeys } from './passkey.ts';
 import { signIn } from './sign-in.ts';
 
-/** The state of the sign-in form. A refusal keeps the address and empties the password. */
-export function useSignIn(first: { email: string; fault: string | null; next: string }) {
+interface First {
+  email: string;
+  fault: string | null;
+  asksFactor: boolean;
+  next: string;
+}
+
+/**
+ * The state of the sign-in form. A refusal keeps the address and empties the password, unless only the second factor
+ * is missing: then both stay, since all of it goes in one request.
+ */
+export function useSignIn(first: First) {
   const [email, setEmail] = useState(first.email);
   const [password, setPassword] = useState('');
+  const [code, setCode] = useState('');
   const [fault, setFault] = useState(first.fault);
+  const [asksFactor, setAsksFactor] = useState(first.asksFactor);
   const [problem, setProblem] = useState<unknown>(null);
   const [busy, setBusy] = useState(false);
   const [ready, setReady] = useState(false);
-  useEffect(() => setReady(true), []);
+  const [hasPasskeys, setHasPasskeys] = useState(false);
+  // The password was right a moment ago, and waits in this page.
+  const [isProved, setIsProved] = useState(false);
+  useEffect(() => {
+    setReady(true);
+    setHasPasskeys(knowsPasskeys());
+  }, []);
 
-  const submit = async (event: FormEvent) => {
-    event.preventDefault();
+  const attempt = async (factor: () => Promise<Parameters<typeof signIn>[2] | 'given up'>) => {
     setBusy(true);
     setFault(null);
     setProblem(null);
     try {
-      const refused = await signIn(email.trim(), password);
-      if (refused === null) return location.assign(first.next);
-      setFault(refused);
-      setPassword('');
+      const shown = await factor();
+      if (shown === 'given up') setFault('No passkey was used. Try again, or type a code.');
+      else {
+        const refused = await signIn(email.trim(), password, shown);
+        if (refused === null) return location.assign(first.next);
+        setFault(refused.fault);
+        setAsksFactor(refused.asksFactor);
+        setIsProved(refused.asksFactor);
+        setCode('');
+        if (!refused.asksFactor) setPassword('');
+      }
     } catch (error) {
       setProblem(error);
     }
     setBusy(false);
   };
+  const submit = (event: FormEvent) => {
+    event.preventDefault();
+    return attempt(async () => (code.trim() ? { code: code.trim() } : null));
+  };
+  const usePasskey = () =>
+    attempt(async () => {
+      const passkey = await askPasskey(email.trim(), password);
+      return passkey ? { passkey } : 'given up';
+    });
+  const startAgain = () => {
+    setAsksFactor(false);
+    setIsProved(false);
+    setPassword('');
+    setCode('');
+    setFault(null);
+    setProblem(null);
+  };
   const fill = (person: { email: string; password: string }) => {
+    startAgain();
     setEmail(person.email);
     setPassword(person.password);
-    setFault(null);
   };
-  return { email, setEmail, password, setPassword, fault, problem, busy, ready, submit, fill };
+  return {
+    ...{ email, setEmail, password, setPassword, code, setCode, fault, problem, busy, ready },
+    ...{ asksFactor, isProved, hasPasskeys, submit, usePasskey, startAgain, fill },
+  };
 }

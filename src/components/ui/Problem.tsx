@@ -12,6 +12,12 @@ export function readPointer(pointer: string): string {
     }, '');
 }
 
+/** The sign-in page, which leads back here. */
+function signInHere(): string {
+  if (typeof location === 'undefined') return '/signin';
+  return `/signin?${new URLSearchParams({ next: location.pathname + location.search })}`;
+}
+
 /** A refusal with its reasons. `onRetry` where another try may help. */
 export function Problem({ problem, onRetry }: { problem: unknown; onRetry?: () => void }) {
   if (!problem) return null;
@@ -31,6 +37,14 @@ export function Problem({ problem, onRetry }: { problem: unknown; onRetry?: () =
             </li>
           ))}
         </ul>
+      )}
+      {status === 401 && (
+        <p className="mt-1.5">
+          <a href={signInHere()} className="link">
+            Sign in again
+          </a>{' '}
+          and come back to this page.
+        </p>
       )}
       {onRetry && (status === 0 || status >= 500 || status === 429) && (
         <button type="button" onClick={onRetry} className="link mt-1.5">

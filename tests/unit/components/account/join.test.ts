@@ -23,6 +23,8 @@ test('fifteen characters are enough', () => {
   expect(missingCharacters('')).toBe(15);
   expect(missingCharacters('x'.repeat(14))).toBe(1);
   expect(missingCharacters('x'.repeat(15))).toBe(0);
+  expect(missingCharacters('🜁'.repeat(14))).toBe(1);
+  expect(missingCharacters('e\u0301'.repeat(14))).toBe(1);
 });
 
 test('a guest lands on the folio, a member on the day sheet', () => {
