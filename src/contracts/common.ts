@@ -44,6 +44,8 @@ export const Email = z
 export const Name = z.string().trim().min(1).max(200);
 export const LabRef = z.object({ id: z.string(), name: z.string() });
 export const Instant = z.iso.datetime().meta({ description: 'ISO 8601 instant in UTC' });
+/** When something ends: an instant, or a day, whose last moment (UTC) it then is. */
+export const Expiry = z.union([Instant, z.iso.date().transform((day) => `${day}T23:59:59.999Z`)]);
 export const Visibility = z.enum(['programme', 'lab']);
 export const RecordState = z.enum(['draft', 'registered', 'withdrawn']);
 export const Caution = z
