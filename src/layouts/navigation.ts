@@ -14,6 +14,7 @@ const ITEMS: readonly NavigationItem[] = [
   { href: '/ligands', label: 'Ligands', forGuests: false },
   { href: '/folios', label: 'Folios', forGuests: true },
   { href: '/labs', label: 'Labs', forGuests: false },
+  { href: '/people', label: 'People', forGuests: false, forStewards: true },
   { href: '/trail', label: 'Trail', forGuests: false, forStewards: true },
 ];
 

@@ -7,7 +7,7 @@ test('a guest is led to complexes and folios only, nobody nowhere', () => {
   expect(labels('guest')).toEqual(['Complexes', 'Folios']);
   expect(labels('contributor')).toHaveLength(6);
   expect(labels('lead')).toEqual(labels('contributor'));
-  expect(labels('steward')).toEqual([...labels('lead'), 'Trail']);
+  expect(labels('steward')).toEqual([...labels('lead'), 'People', 'Trail']);
   expect(labels(undefined)).toEqual([]);
 });
 
