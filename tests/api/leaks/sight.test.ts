@@ -177,8 +177,10 @@ describe.each(askers)('%s', (asker) => {
       const response = await ask(asker, path);
       const seen = sight.spectra.includes(spectrum);
       expect(response.status, `${spectrum.title} ${spectrum.lab}`).toBe(seen ? 200 : 404);
-      // What hangs on a hidden spectrum goes by the same condition: one of four is asked for it.
-      const asked = seen || world.spectra.indexOf(spectrum) % 4 === 0 ? ['bands', 'points', 'file', 'jcamp'] : [];
+      // What hangs on a spectrum goes by the same conditions: of most, some parts are asked for.
+      const all = ['bands', 'points', 'file', 'jcamp'];
+      const turn = world.spectra.indexOf(spectrum) % 4;
+      const asked = seen ? (turn === 0 ? all : ['bands', 'file']) : turn === 0 ? all : [];
       const parts = await Promise.all(asked.map((part) => ask(asker, `${path}/${part}`)));
       const statuses = parts.map(({ status }) => status);
       if (!seen) {
@@ -187,7 +189,8 @@ describe.each(askers)('%s', (asker) => {
         continue;
       }
       const taken = sight.takes.includes(spectrum) ? 200 : 403;
-      expect(statuses, spectrum.title).toEqual([200, 200, taken, taken]);
+      const expected = asked.map((part) => (part === 'bands' || part === 'points' ? 200 : taken));
+      expect(statuses, spectrum.title).toEqual(expected);
       const record = (await response.json()) as SpectrumRecord;
       const bands = (await parts[0]!.json()) as BandRecord[];
       const asMember = spectrumAsMember(asker, spectrum);
@@ -197,7 +200,7 @@ describe.each(askers)('%s', (asker) => {
       for (const band of bands) expect(band.proposedBy).toBe(asMember ? spectrum.maker : null);
       expect(record.species.map(({ accession }) => accession)).toEqual([spectrum.complex.accession]);
     }
-  });
+  }, 120_000);
 
   test('opens preparations in sight alone, of double salts the complexes in sight', async () => {
     const absent = await (await ask(asker, '/api/preparations/00000000-0000-7000-8000-000000000000')).text();
@@ -278,6 +281,8 @@ describe.each(askers)('%s', (asker) => {
       ]),
       ...sight.preparations.flatMap((p) => [p.id, p.label]),
       ...sight.folios.map((f) => f.id),
+      // What became of a record that was merged away the steward reads in the history of the one that lives on.
+      ...(isSteward(asker) ? world.complexes.filter((c) => c.mergedInto).map((c) => c.note) : []),
     ]);
     const secrets = [
       ...world.complexes.flatMap((c) => [c.id, c.accession, c.note]),
