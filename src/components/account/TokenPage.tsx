@@ -67,8 +67,8 @@ export function TokenPage({ tokens: first, labs, mayMake, now }: Props) {
   const [making, setMaking] = useState(false);
   return (
     <>
-      <header className="mb-5 flex flex-wrap items-center gap-4">
-        <div>
+      <header className="mb-5 flex flex-wrap items-start gap-4">
+        <div className="max-w-3xl min-w-64 flex-1">
           <h1 className="text-xl font-semibold">Access tokens</h1>
           <p className="text-ink-soft">
             For scripts and instruments that use the{' '}

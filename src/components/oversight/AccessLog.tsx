@@ -2,7 +2,7 @@ import type { Page } from '../../contracts/common.ts';
 import type { AccessLogRow } from '../../contracts/oversight.ts';
 import { formatNumber } from '../notation/quantity.ts';
 import { Chip } from '../ui/Chip.tsx';
-import { minute, shortDay } from '../ui/dates.ts';
+import { minute } from '../ui/dates.ts';
 import { EmptyState } from '../ui/EmptyState.tsx';
 import { CONTROL } from '../ui/Field.tsx';
 import { Problem } from '../ui/Problem.tsx';
@@ -18,6 +18,7 @@ import {
 } from './access-query.ts';
 import { Days } from './Choose.tsx';
 import { Pages } from './Pages.tsx';
+import { SubjectName } from './SubjectName.tsx';
 import { useViewedList } from './useViewedList.ts';
 import { KINDS } from './words.ts';
 
@@ -42,11 +43,11 @@ export function AccessLog({ first, ofAll }: Props) {
   const one = view.folio || view.complex || view.spectrum;
   return (
     <div className="flex flex-col gap-4">
-      <p className="max-w-prose text-ink-soft">
+      <p className="max-w-3xl text-ink-soft">
         Single records that were opened and files that were taken away, {ofAll ? 'of all labs' : 'of the labs you lead'}
         , by day (UTC). Lists are not counted. Everybody is told of this when they join.
       </p>
-      <div className="flex flex-wrap items-end gap-3 border border-hairline bg-glaze px-4 py-3">
+      <div className="flex flex-wrap items-center gap-3 border border-hairline bg-glaze px-4 py-3">
         <input
           type="search"
           aria-label="Search for a person by name or address"
@@ -105,7 +106,7 @@ export function AccessLog({ first, ofAll }: Props) {
             <caption className="sr-only">Who looked and who downloaded, the latest first</caption>
             <thead>
               <tr>
-                {['Last', 'Who', 'Address', 'Did', 'Record', 'Kind', 'Day'].map((head) => (
+                {['Last that day', 'Who', 'Address', 'Did', 'Record', 'Kind'].map((head) => (
                   <th key={head} scope="col">
                     {head}
                   </th>
@@ -128,7 +129,6 @@ export function AccessLog({ first, ofAll }: Props) {
                     <SubjectLink row={row} />
                   </td>
                   <td>{KINDS[row.subject.type] ?? row.subject.type}</td>
-                  <td>{shortDay(row.day)}</td>
                   <td className="num text-right!">{row.count}</td>
                 </tr>
               ))}
@@ -155,7 +155,7 @@ function SubjectLink({ row: { subject } }: { row: AccessLogRow }) {
   if (!subject.href) return <span className="block max-w-80 truncate">{name}</span>;
   return (
     <a href={subject.href} className="link block max-w-80 truncate" title={name}>
-      {name}
+      <SubjectName type={subject.type} name={name} />
     </a>
   );
 }

@@ -39,6 +39,9 @@ export function Days({ from, to, onChange }: DaysProps) {
   return (
     <fieldset className="flex items-center gap-2">
       <legend className="sr-only">Days, UTC</legend>
+      <span aria-hidden="true" className="text-xs text-ink-soft">
+        from
+      </span>
       <input
         type="date"
         aria-label="From the day, UTC"
@@ -47,8 +50,8 @@ export function Days({ from, to, onChange }: DaysProps) {
         onChange={(event) => onChange({ from: event.currentTarget.value })}
         className={`${CONTROL} w-auto!`}
       />
-      <span aria-hidden="true" className="text-ink-soft">
-        –
+      <span aria-hidden="true" className="text-xs text-ink-soft">
+        to
       </span>
       <input
         type="date"

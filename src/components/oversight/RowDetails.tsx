@@ -6,7 +6,8 @@ import { getJson } from '../ui/http.ts';
 import { Facts } from '../ui/Panel.tsx';
 import { Problem } from '../ui/Problem.tsx';
 import { queryClient } from '../ui/query-client.ts';
-import { changesOf, fieldWords, sentenceOf, subjectWords, valueWords } from './words.ts';
+import { SubjectName } from './SubjectName.tsx';
+import { changesOf, deedWords, fieldWords, subjectWords, valueWords } from './words.ts';
 
 /** One row of the trail in full: who, when, by what, and what it changed. */
 export function RowDetails({ row, onClose }: { row: TrailRow; onClose: () => void }) {
@@ -19,7 +20,17 @@ export function RowDetails({ row, onClose }: { row: TrailRow; onClose: () => voi
   );
   const { subject } = row;
   return (
-    <Dialog open onOpenChange={(open) => !open && onClose()} width="wide" title={sentenceOf(row)}>
+    <Dialog
+      open
+      onOpenChange={(open) => !open && onClose()}
+      width="wide"
+      title={
+        <>
+          {row.actor?.name ?? 'The program'} {deedWords(row)}{' '}
+          <SubjectName type={subject.type} name={subjectWords(row)} />
+        </>
+      }
+    >
       <Facts
         facts={[
           ['Row', <span className="num">{row.seq}</span>],
@@ -30,7 +41,7 @@ export function RowDetails({ row, onClose }: { row: TrailRow; onClose: () => voi
             ? [
                 'Record',
                 <a href={subject.href} className="link">
-                  {subjectWords(row)}
+                  <SubjectName type={subject.type} name={subjectWords(row)} />
                 </a>,
               ]
             : null,

@@ -44,7 +44,7 @@ export function TrailList({ first }: { first: { search: string; page: Page<Trail
     <>
       <ChainVerdict />
       <div className="flex flex-col gap-4">
-        <div className="flex flex-wrap items-end gap-3 border border-hairline bg-glaze px-4 py-3">
+        <div className="flex flex-wrap items-center gap-3 border border-hairline bg-glaze px-4 py-3">
           <input
             type="search"
             aria-label="Search in records, people, actions and details, or for a hash"

@@ -1,6 +1,7 @@
 import type { ReactNode } from 'react';
 import type { TrailRow } from '../../contracts/oversight.ts';
 import { minute } from '../ui/dates.ts';
+import { SubjectName } from './SubjectName.tsx';
 import { deedWords, KINDS, subjectWords } from './words.ts';
 
 /** A column of the trail. */
@@ -33,9 +34,12 @@ export const TRAIL_COLUMNS: readonly TrailColumn[] = [
       <button
         type="button"
         onClick={open}
-        className="block min-h-6 max-w-[34rem] min-w-64 text-left whitespace-normal hover:text-zaffre"
+        className="block min-h-6 max-w-[34rem] min-w-64 text-left whitespace-normal hover:text-zaffre hover:underline"
       >
-        {deedWords(row)} <span className="font-medium">{subjectWords(row)}</span>
+        {deedWords(row)}{' '}
+        <span className="font-medium">
+          <SubjectName type={row.subject.type} name={subjectWords(row)} />
+        </span>
         <span className="sr-only">, row {row.seq}: details</span>
       </button>
     ),

@@ -83,10 +83,6 @@ const DEEDS: Record<string, string> = {
 /** An action as a person reads it where nothing better is known: "erase-cell.started" is "erase cell started". */
 const spelledOut = (action: string): string => action.replace(/[-._]+/g, ' ');
 
-/** The whole sentence: "Ada registered ZF000042-X [Co(NH3)6]3+". */
-export const sentenceOf = (row: Deed): string =>
-  `${row.actor?.name ?? 'The program'} ${deedWords(row)} ${subjectWords(row)}`;
-
 /** What was done, as it stands before the record: "registered", "attested the band at". */
 export function deedWords({ action, subject }: Pick<Deed, 'action' | 'subject'>): string {
   const deed = DEEDS[`${subject.type} ${action}`] ?? DEEDS[action] ?? spelledOut(action);

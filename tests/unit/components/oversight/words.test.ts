@@ -1,7 +1,7 @@
 import { expect, test } from 'vitest';
 import { accessAddress, accessFrom, accessRequest } from '#src/components/oversight/access-query.ts';
 import { addressOf, exportOf, narrowed, requestOf, toggled, viewFrom } from '#src/components/oversight/trail-query.ts';
-import { changesOf, deedWords, fieldWords, sentenceOf, valueWords } from '#src/components/oversight/words.ts';
+import { changesOf, deedWords, fieldWords, subjectWords, valueWords } from '#src/components/oversight/words.ts';
 
 const ada = { id: 'a', name: 'Ada', email: 'ada@test.example' };
 const row = (action: string, type: string, label: string | null, more: { id?: string; detail?: object } = {}) => ({
@@ -24,7 +24,9 @@ test.each([
   ],
   [row('some-new.deed', 'lab', 'North'), 'Ada some new deed North'],
   [{ ...row('load-demo', 'registry', null), actor: null }, 'The program loaded the demo data into the registry'],
-])('%# reads as a sentence', (entry, sentence) => expect(sentenceOf(entry)).toBe(sentence));
+])('%# reads as a sentence', (entry, sentence) =>
+  expect(`${entry.actor?.name ?? 'The program'} ${deedWords(entry)} ${subjectWords(entry)}`).toBe(sentence),
+);
 
 test('the same action says another thing of another kind of record', () => {
   expect(deedWords(row('revoke', 'invitation', 'x'))).not.toBe(deedWords(row('revoke', 'token', 'x')));
