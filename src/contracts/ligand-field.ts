@@ -14,6 +14,7 @@ const OverlapLigand = z.strictObject({
   ePiX: perCm.optional(),
   ePiY: perCm.optional(),
   psi: z.number().optional(),
+  eDs: perCm.min(0).optional().describe('mixing of s and d'),
 });
 
 export const LevelsInput = z

@@ -41,6 +41,11 @@ export function fieldLevels(
   repulsion: Repulsion,
   setting: FieldSetting | null = null,
 ): Level[] {
+  return fromLowest(fieldEnergies(n, field, repulsion, setting));
+}
+
+/** The same, with energies as they are: the field's own and the repulsion with Racah's A = 0. */
+export function fieldEnergies(n: number, field: Matrix, repulsion: Repulsion, setting: FieldSetting | null): Level[] {
   const found = fieldStates(n, field, repulsion, setting).flatMap(({ space: { multiplicity }, groups }) =>
     groups.flatMap(({ energy, members, parts }) =>
       (parts ?? [{ irrep: null, dimension: members.length }]).map(({ irrep, dimension }) => ({
@@ -53,7 +58,7 @@ export function fieldLevels(
       })),
     ),
   );
-  return fromLowest(found);
+  return rising(found);
 }
 
 /** The eigenstates of one spin. */
@@ -94,9 +99,11 @@ export function fieldStates(
 /** Levels with energies counted from the lowest, ascending. */
 export function fromLowest<L extends Level>(found: readonly L[]): L[] {
   const lowest = Math.min(...found.map(({ energy }) => energy));
-  return found
-    .map((level) => ({ ...level, energy: level.energy - lowest }))
-    .sort((a, b) => a.energy - b.energy || (b.multiplicity ?? 0) - (a.multiplicity ?? 0));
+  return rising(found.map((level) => ({ ...level, energy: level.energy - lowest })));
+}
+
+function rising<L extends Level>(levels: readonly L[]): L[] {
+  return [...levels].sort((a, b) => a.energy - b.energy || (b.multiplicity ?? 0) - (a.multiplicity ?? 0));
 }
 
 /** Indices of ascending values, parted where they lie apart. */

@@ -64,11 +64,15 @@ function reflect(
   const u = i * n;
   for (let j = 0; j < i; j++) {
     const row = j * n;
-    const [ur, ui] = [re[u + j]!, im[u + j]!];
-    let [sr, si] = [0, 0];
+    const ur = re[u + j]!;
+    const ui = im[u + j]!;
+    let sr = 0;
+    let si = 0;
     for (let k = 0; k < j; k++) {
-      const [ar, ai] = [re[row + k]!, im[row + k]!];
-      const [vr, vi] = [re[u + k]!, im[u + k]!];
+      const ar = re[row + k]!;
+      const ai = im[row + k]!;
+      const vr = re[u + k]!;
+      const vi = im[u + k]!;
       sr += ar * vr - ai * vi;
       si += ar * vi + ai * vr;
       // Element (k, j) is the conjugate of (j, k).
@@ -87,9 +91,15 @@ function reflect(
   }
   for (let j = 0; j < i; j++) {
     const row = j * n;
-    const [ur, ui, pr, pi] = [re[u + j]!, im[u + j]!, qRe[j]!, qIm[j]!];
+    const ur = re[u + j]!;
+    const ui = im[u + j]!;
+    const pr = qRe[j]!;
+    const pi = qIm[j]!;
     for (let k = 0; k <= j; k++) {
-      const [vr, vi, wr, wi] = [re[u + k]!, im[u + k]!, qRe[k]!, qIm[k]!];
+      const vr = re[u + k]!;
+      const vi = im[u + k]!;
+      const wr = qRe[k]!;
+      const wi = qIm[k]!;
       re[row + k] = re[row + k]! - (ur * wr + ui * wi) - (pr * vr + pi * vi);
       im[row + k] = im[row + k]! - (ui * wr - ur * wi) - (pi * vr - pr * vi);
     }
@@ -110,7 +120,8 @@ function reflections(
   for (let i = 0; i < n; i++) {
     const size = i > 0 ? Math.hypot(linkRe[i]!, linkIm[i]!) : 0;
     if (size > 0) {
-      const [c, s] = [linkRe[i]! / size, -linkIm[i]! / size];
+      const c = linkRe[i]! / size;
+      const s = -linkIm[i]! / size;
       [cos, sin] = [cos * c - sin * s, cos * s + sin * c];
     }
     rows.re[i * n + i] = cos;
@@ -120,15 +131,21 @@ function reflections(
     const h = scales[i]!;
     if (h === 0) continue;
     for (let r = 0; r < i; r++) {
-      let [sr, si] = [0, 0];
+      let sr = 0;
+      let si = 0;
       for (let k = 0; k < i; k++) {
-        const [xr, xi, ur, ui] = [rows.re[r * n + k]!, rows.im[r * n + k]!, re[i * n + k]!, im[i * n + k]!];
+        const xr = rows.re[r * n + k]!;
+        const xi = rows.im[r * n + k]!;
+        const ur = re[i * n + k]!;
+        const ui = im[i * n + k]!;
         sr += xr * ur + xi * ui;
         si += xi * ur - xr * ui;
       }
-      [sr, si] = [sr / h, si / h];
+      sr /= h;
+      si /= h;
       for (let k = 0; k < i; k++) {
-        const [ur, ui] = [re[i * n + k]!, im[i * n + k]!];
+        const ur = re[i * n + k]!;
+        const ui = im[i * n + k]!;
         rows.re[r * n + k] = rows.re[r * n + k]! - (sr * ur - si * ui);
         rows.im[r * n + k] = rows.im[r * n + k]! - (sr * ui + si * ur);
       }

@@ -18,6 +18,8 @@ export interface OverlapLigand {
   ePiY?: number | undefined;
   /** Degrees; 0 unless told. */
   psi?: number | undefined;
+  /** Mixing of the metal's s into its d orbitals by the σ bond, 0 or more; 0 unless told. */
+  eDs?: number | undefined;
 }
 
 export interface OrbitalEnergy {
@@ -47,21 +49,25 @@ const turnY = (angle: number): Matrix3 => {
 /**
  * One-electron field of the ligands in the basis z², x²−y², xy, xz, yz; 5 × 5, symmetric, unit of the parameters.
  *
- * Ligand frame Rz(φ)·Ry(θ)·Rz(ψ). No δ overlap and no mixing of s and d.
+ * Ligand frame Rz(φ)·Ry(θ)·Rz(ψ). No δ overlap. The mixing of s and d lowers the field by
+ * u uᵀ, u being the sum over the ligands of √eDs times the d orbital that points at them: in a square plane z² by 4 eDs.
  *
  * @throws DomainError `out-of-range` where a number is missing or not finite, or there is no ligand (field `ligands`)
+ * @see L. G. Vanquickenborne, A. Ceulemans, Inorg. Chem. 20 (1981) 796, for eDs (from memory)
  * @see C. E. Schäffer, C. K. Jørgensen, Mol. Phys. 9 (1965) 401; E. Larsen, G. N. La Mar, J. Chem. Educ. 51 (1974) 633 (from memory)
  */
 export function overlapField(ligands: readonly OverlapLigand[]): Matrix {
   if (ligands.length === 0) throw new DomainError('out-of-range', 'Give at least one ligand.', 'ligands');
   const field = zeros(5);
+  const mixing = new Float64Array(5);
   ligands.forEach((ligand, index) => {
-    const { theta, phi, psi = 0, eSigma } = ligand;
+    const { theta, phi, psi = 0, eSigma, eDs = 0 } = ligand;
     const ePiX = ligand.ePiX ?? ligand.ePi ?? 0;
     const ePiY = ligand.ePiY ?? ligand.ePi ?? 0;
-    if (![theta, phi, psi, eSigma, ePiX, ePiY].every(Number.isFinite)) {
+    if (![theta, phi, psi, eSigma, ePiX, ePiY, eDs].every(Number.isFinite)) {
       throw new DomainError('out-of-range', `Ligand ${index + 1} needs finite angles and parameters.`, 'ligands');
     }
+    if (eDs < 0) throw new DomainError('out-of-range', `eDs of ligand ${index + 1} must be 0 or more.`, 'ligands');
     const local = rotateOrbitals(multiply(multiply(turnZ(phi), turnY(theta)), turnZ(psi)));
     const strengths: [DOrbital, number][] = [
       ['z2', eSigma],
@@ -69,7 +75,9 @@ export function overlapField(ligands: readonly OverlapLigand[]): Matrix {
       ['yz', ePiY],
     ];
     for (const [orbital, strength] of strengths) addProjection(field, local, D_ORBITALS.indexOf(orbital), strength);
+    for (let a = 0; a < 5; a++) mixing[a]! += Math.sqrt(eDs) * local.data[a * 5 + D_ORBITALS.indexOf('z2')]!;
   });
+  for (let a = 0; a < 5; a++) for (let b = 0; b < 5; b++) field.data[a * 5 + b]! -= mixing[a]! * mixing[b]!;
   return field;
 }
 

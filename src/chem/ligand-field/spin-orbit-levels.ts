@@ -98,7 +98,8 @@ function compositionOf(
       const at = member * size + offset;
       const [a, b] = [new Float64Array(rows), new Float64Array(rows)];
       for (let i = 0; i < rows; i++) {
-        const [x, y] = [re[at + i]!, im[at + i]!];
+        const x = re[at + i]!;
+        const y = im[at + i]!;
         if (x === 0 && y === 0) continue;
         for (let k = 0; k < rows; k++) {
           const v = vectors.data[i * rows + k]!;
@@ -176,15 +177,18 @@ function overlap(re: Float64Array, im: Float64Array, at: number, { offsets, orbi
   for (let m = 0; m < count; m++) {
     const from = at + offsets[m]!;
     for (let i = 0; i < rows; i++) {
-      let [x, y] = [0, 0];
+      let x = 0;
+      let y = 0;
       for (let j = 0; j < rows; j++) {
         const u = orbital.data[i * rows + j]!;
         x += u * re[from + j]!;
         y += u * im[from + j]!;
       }
       for (let to = 0; to < count; to++) {
-        const [dr, di] = [spin.re[to * count + m]!, spin.im[to * count + m]!];
-        const [cr, ci] = [re[at + offsets[to]! + i]!, im[at + offsets[to]! + i]!];
+        const dr = spin.re[to * count + m]!;
+        const di = spin.im[to * count + m]!;
+        const cr = re[at + offsets[to]! + i]!;
+        const ci = im[at + offsets[to]! + i]!;
         sum += cr * (dr * x - di * y) + ci * (dr * y + di * x);
       }
     }
