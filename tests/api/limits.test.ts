@@ -202,18 +202,6 @@ describe('two processes on one database', () => {
   });
 });
 
-test('old counts are forgotten, those that still hold are not', async () => {
-  const { database } = await import('#src/server/database.ts');
-  const { limits } = await import('#src/db/schema/index.ts');
-  const { forgetOldCounts } = await import('#src/server/limits/counter.ts');
-  const { db, write } = await database();
-  await write((tx) => tx.insert(limits).values({ key: 'old', count: 1, until: Date.now() - 2 * 24 * 3600 * 1000 }));
-  await write(forgetOldCounts);
-  const keys = (await db.select().from(limits)).map(({ key }) => key);
-  expect(keys).not.toContain('old');
-  expect(keys).toContain(`bundle:${ada.id}`);
-});
-
 test('production has no switch for its limits', async () => {
   const { readSettings } = await import('#src/server/settings.ts');
   const production = {

@@ -75,8 +75,8 @@ export function TokenPage({ tokens: first, labs, mayMake, now }: Props) {
             <a href="/api-reference" className="link">
               API
             </a>{' '}
-            in your place. A token never invites, makes tokens, changes roles or reads the trail. Its owner is told by
-            mail a week before it ends.
+            in your place. A token never invites, makes tokens, changes roles or reads the trail. You are told by mail a
+            week before one ends.
           </p>
         </div>
         <div className="ml-auto flex gap-2">

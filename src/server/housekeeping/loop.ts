@@ -1,6 +1,7 @@
 import type { Database } from '#src/db/client.ts';
 import { forgetOldFiles } from '../bundles/forget.ts';
 import { log } from '../log.ts';
+import { tokenExpiryMails } from '../oversight/token-expiry.ts';
 import { cleanUp } from './clean-up.ts';
 import { tellEnded, tellEndsSoon } from './ends.ts';
 import { tellLapsed } from './lapses.ts';
@@ -16,6 +17,7 @@ const STEPS: Record<string, (database: Database) => Promise<unknown>> = {
   ended: (database) => tellEnded(database),
   'ends soon': (database) => tellEndsSoon(database),
   lapsed: (database) => tellLapsed(database),
+  'tokens end': () => tokenExpiryMails(),
   'clean-up': (database) => cleanUp(database),
   'bundle files': () => forgetOldFiles(),
 };

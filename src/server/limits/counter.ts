@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { lt, sql } from 'drizzle-orm';
+import { sql } from 'drizzle-orm';
 import type { Database, Tx } from '#src/db/client.ts';
 import { limits } from '#src/db/schema/index.ts';
 import type { RatePolicy } from './policy.ts';
@@ -116,9 +116,4 @@ async function addCount(tx: Tx, key: string, until: number, more: number): Promi
     })
     .returning({ count: limits.count });
   return row!.count;
-}
-
-/** Forget counts whose window ended more than a day ago. */
-export async function forgetOldCounts(tx: Tx): Promise<void> {
-  await tx.delete(limits).where(lt(limits.until, Date.now() - 24 * 3600 * 1000));
 }
