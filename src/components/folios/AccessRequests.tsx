@@ -26,7 +26,6 @@ export function AccessRequests({ folio }: { folio: string }) {
   return (
     <Panel title="Requests for more" aside={open.length > 0 ? `${open.length} to answer` : 'none to answer'}>
       <Problem problem={settle.error} />
-      <StatusLine>{settle.data && `${settle.data.name} was told by mail: ${settle.data.outcome}.`}</StatusLine>
       <ul className="flex flex-col divide-y divide-faint">
         {open.map((request) => (
           <Open key={request.id} request={request} settle={settle} />
@@ -45,6 +44,7 @@ export function AccessRequests({ folio }: { folio: string }) {
           </ul>
         </details>
       )}
+      <StatusLine>{settle.data && `${settle.data.name} was told by mail: ${settle.data.outcome}.`}</StatusLine>
     </Panel>
   );
 }

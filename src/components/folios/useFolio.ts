@@ -1,4 +1,5 @@
 import { useMutation, useQuery } from '@tanstack/react-query';
+import { useEffect } from 'react';
 import type { GrantPatch, GrantRecord } from '../../contracts/grants.ts';
 import type { FolioPatch, FolioRecord } from '../../contracts/sharing.ts';
 import { getJson, getVersioned, ProblemError, sendJson } from '../ui/http.ts';
@@ -13,16 +14,26 @@ export function useFolio(first: FolioRecord) {
   const url = `/api/folios/${first.id}`;
   const key = ['folio', first.id];
   const isGuest = first.level !== null;
-  const { data: folio, error } = useQuery(
+  const {
+    data: folio,
+    error,
+    refetch,
+  } = useQuery(
     {
       queryKey: key,
       queryFn: ({ signal }) => getJson<FolioRecord>(url, signal),
       initialData: first,
       refetchInterval: ({ state }) => (isGuest && !isMissing(state.error) ? LOOK_AGAIN_MS : false),
-      ...(isGuest ? { refetchOnWindowFocus: 'always' as const } : {}),
     },
     queryClient,
   );
+  useEffect(() => {
+    if (!isGuest) return;
+    // Who comes back to a page that lay open must not read on in what was ended meanwhile.
+    const look = () => document.visibilityState === 'visible' && void refetch();
+    document.addEventListener('visibilitychange', look);
+    return () => document.removeEventListener('visibilitychange', look);
+  }, [isGuest, refetch]);
   const keep = (changed: FolioRecord) => queryClient.setQueryData(key, changed);
   const again = () => queryClient.invalidateQueries({ queryKey: key, exact: true });
 

@@ -55,10 +55,13 @@ export function AddressField({ value, onChange, refused, wasTried, className }: 
   );
 }
 
+/** Faults that are told in full; more of them are counted. */
+const TOLD = 4;
+
 function faultText(count: number, faults: string[], wasTried: boolean): string | undefined {
   if (count > MOST_AT_ONCE) return `${count} addresses; at most ${MOST_AT_ONCE} go out at once`;
-  if (faults.length > 0)
-    return faults.length === 1 ? faults[0] : `${faults.length} entries cannot be used: mend or remove them`;
+  const more = faults.length > TOLD ? `; and ${faults.length - TOLD} more` : '';
+  if (faults.length > 0) return `${faults.slice(0, TOLD).join('; ')}${more}. Mend or remove it.`;
   return wasTried && count === 0 ? 'Give at least one address' : undefined;
 }
 
@@ -69,7 +72,7 @@ function AddressChip({ address, fault, onRemove }: { address: Address; fault: st
       type="button"
       onClick={onRemove}
       title={fault ?? undefined}
-      aria-label={`Remove ${address.email}${fault ? `: ${fault}` : ''}`}
+      aria-label={`Remove ${address.email}`}
       className={`inline-flex min-h-6 max-w-72 items-center gap-1 rounded border px-2 py-0.5 text-xs hover:text-ink ${looks}`}
     >
       {fault && <span aria-hidden="true">▲</span>}

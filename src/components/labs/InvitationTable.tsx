@@ -59,9 +59,6 @@ export function InvitationTable({ invitations, resend, revoke }: Props) {
   return (
     <>
       <Problem problem={resend.error ?? revoke.error} />
-      <StatusLine>
-        {resend.data && `Sent to ${resend.data.email} again with a new link. The older link no longer works.`}
-      </StatusLine>
       <DataTable
         name="Invitations"
         columns={COLUMNS}
@@ -89,6 +86,9 @@ export function InvitationTable({ invitations, resend, revoke }: Props) {
           )
         }
       />
+      <StatusLine>
+        {resend.data && `Sent to ${resend.data.email} again with a new link. The older link no longer works.`}
+      </StatusLine>
       <Dialog
         open={asked !== null}
         onOpenChange={(open) => !open && setAsked(null)}

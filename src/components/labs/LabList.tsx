@@ -25,7 +25,7 @@ const COLUMNS: DataColumn<LabRecord>[] = [
     ),
   },
   { id: 'place', header: 'Place', value: (lab) => lab.place },
-  { id: 'kind', header: 'Kind', value: (lab) => (lab.facility ? 'facility' : 'lab') },
+  { id: 'kind', header: 'Kind', value: (lab) => (lab.facility ? 'facility' : null) },
   { id: 'role', header: 'Your role', value: (lab) => lab.role },
   { id: 'members', header: 'Members', value: (lab) => lab.members, figures: true },
   { id: 'complexes', header: 'Complexes', value: (lab) => lab.complexes, figures: true },

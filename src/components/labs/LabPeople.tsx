@@ -103,7 +103,6 @@ export function LabPeople({ lab, first, leads, me }: Props) {
   return (
     <Panel title="People" aside={leads ? 'A change takes effect with the person’s next request' : undefined}>
       <Problem problem={role.error ?? error} />
-      <StatusLine>{done}</StatusLine>
       {data.length === 0 ? (
         <EmptyState title="Nobody yet">{leads ? 'Invite its lead below.' : 'A steward invites its lead.'}</EmptyState>
       ) : (
@@ -117,6 +116,7 @@ export function LabPeople({ lab, first, leads, me }: Props) {
           {...(mayAct ? { actions } : {})}
         />
       )}
+      <StatusLine>{done}</StatusLine>
       {leaving && (
         <DepartureDialog
           lab={lab}

@@ -1,6 +1,7 @@
-import { and, eq, sql } from 'drizzle-orm';
+import { and, eq, isNotNull, isNull, sql } from 'drizzle-orm';
 import type { FolioInput, FolioItem, FolioPatch, FolioRecord } from '#src/contracts/sharing.ts';
-import { folios } from '#src/db/schema/index.ts';
+import type { Tx } from '#src/db/client.ts';
+import { folios, grants } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
 import { requireLab } from '../access/records.ts';
 import type { FolioChange } from '../access/sharing.ts';
@@ -62,10 +63,17 @@ export async function changeFolio({ asker, folio }: FolioChange, patch: FolioPat
       .where(and(eq(folios.id, folio.id), eq(folios.version, folio.version)))
       .returning();
     if (!row) throw changedMeanwhile();
+    if (row.licence !== folio.licence) await noteAccepted(tx, folio);
     await record(tx, asker, { action: 'change', subjectType: 'folio', subjectId: folio.id, detail: { ...patch } });
     return row;
   });
   return folioRecord({ asker, folio: changed });
+}
+
+/** Terms accepted without their licence being noted, as it once was, were those of the licence that held until now. */
+async function noteAccepted(tx: Tx, { id, licence }: FolioChange['folio']): Promise<void> {
+  const unnoted = and(eq(grants.folioId, id), isNull(grants.termsLicence), isNotNull(grants.termsAcceptedAt));
+  await tx.update(grants).set({ termsLicence: licence }).where(unnoted);
 }
 
 /** Replace the content of a folio. @throws {HttpError} 422 for items out of sight */

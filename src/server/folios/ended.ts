@@ -71,7 +71,7 @@ async function holding(asker: Asker, ended: EndedAccess[], kind: string, id: str
 async function openedRecord(kind: string, id: string): Promise<{ subjectId: string; complexId: string } | null> {
   const { db } = await database();
   if (kind === 'complexes') {
-    const accession = normaliseAccession(decodeURIComponent(id)) ?? '';
+    const accession = normaliseAccession(id) ?? '';
     const [row] = await db.select({ id: complexes.id }).from(complexes).where(eq(complexes.accession, accession));
     return row ? { subjectId: row.id, complexId: row.id } : null;
   }
