@@ -31,7 +31,8 @@ export function createAppServer(
   });
   server.maxHeadersCount = 100;
   server.on('request', (request, response) => {
-    if (!trustProxy)
+    if (trustProxy) keepLastForwarded(request);
+    else
       for (const name of Object.keys(request.headers))
         if (name === 'forwarded' || name.startsWith('x-forwarded-')) delete request.headers[name];
     keepProxysWord(request);
@@ -60,6 +61,16 @@ export function createAppServer(
  */
 function keepProxysWord({ headers }: IncomingMessage): void {
   const last = [headers['x-forwarded-for']].flat().join(',').split(',').at(-1)?.trim();
+  if (last) headers['x-forwarded-for'] = last;
+}
+
+/**
+ * Of X-Forwarded-For only the last entry is the proxy's word; those before it came with the request and may be invented
+ * by a client that wants to be counted as somebody else. The framework takes the first.
+ */
+function keepLastForwarded({ headers }: IncomingMessage): void {
+  const told = headers['x-forwarded-for'];
+  const last = (Array.isArray(told) ? told.join(',') : told)?.split(',').at(-1)?.trim();
   if (last) headers['x-forwarded-for'] = last;
 }
 

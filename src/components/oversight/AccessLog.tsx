@@ -45,7 +45,7 @@ export function AccessLog({ first, ofAll }: Props) {
     <div className="flex flex-col gap-4">
       <p className="max-w-3xl text-ink-soft">
         Single records that were opened and files that were taken away, {ofAll ? 'of all labs' : 'of the labs you lead'}
-        , by day (UTC). Lists are not counted. Everybody is told of this when they join.
+        , by day (UTC). Lists are not counted. Guests agree to it with the terms of their folio.
       </p>
       <div className="flex flex-wrap items-center gap-3 border border-hairline bg-glaze px-4 py-3">
         <input
