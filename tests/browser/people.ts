@@ -4,7 +4,7 @@ import { type BrowserContext, test as base, expect, type Page } from '@playwrigh
 const PASSWORD = 'cobalt-blue-demo';
 
 /** Console errors that belong to an answer which the test asked for: a page that is not there, a refused request. */
-const EXPECTED = /Failed to load resource: the server responded with a status of 40[134]/;
+const EXPECTED = /Failed to load resource: the server responded with a status of (?:40[134]|422)/;
 
 /** Every page complains to a list; at the end of the test it must be empty. That holds the CSP, too. */
 export const test = base.extend<{ complaints: string[] }>({

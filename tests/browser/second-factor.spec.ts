@@ -37,6 +37,8 @@ async function newPerson(page: Page, origin: string): Promise<void> {
 async function showPassword(context: BrowserContext, page: Page): Promise<void> {
   await context.clearCookies();
   await page.goto('/signin');
+  // Enabled once the form listens: what is typed before that may be lost.
+  await expect(page.getByRole('button', { name: /fill in guest/ })).toBeEnabled();
   await page.getByLabel('E-mail address').fill(EMAIL);
   await page.getByLabel('Password', { exact: true }).fill(PASSWORD);
   await page.getByRole('button', { name: 'Sign in', exact: true }).click();

@@ -85,6 +85,9 @@ export function AddApp({ factors: { startApp, confirmApp }, first, onDone, onClo
 
 const about = (error: unknown, field: string) => (error instanceof ProblemError ? error.about(field) : undefined);
 
+/** Four groups a line, so that no line ends within a group; where it is pasted into one line, the break falls away. */
+const inLines = (secret: string) => secret.replace(/((?:\S+ ){3}\S+) /g, '$1\n');
+
 function Secret({ started: { qr, secret } }: { started: TotpStarted }) {
   return (
     <div className="grid items-center gap-x-5 gap-y-4 sm:grid-cols-[auto_1fr]">
@@ -96,7 +99,7 @@ function Secret({ started: { qr, secret } }: { started: TotpStarted }) {
         height={176}
         className="rounded border border-hairline"
       />
-      <CopyText label="Or type this secret into the app" text={secret} />
+      <CopyText label="Or type this secret into the app" text={inLines(secret)} />
     </div>
   );
 }
