@@ -128,6 +128,16 @@ test('the chain is followed over several chunks, and its head is that of the las
   expect(await verify()).toEqual({ rows: last.seq, verified: true, firstBroken: null, head: last.hash });
 });
 
+test('rows that are added while the chain is followed break nothing', async () => {
+  const { record } = await import('#src/server/trail.ts');
+  const entry = { action: 'load', subjectType: 'registry' as const, subjectId: 'meanwhile' };
+  const adding = async () => {
+    for (let i = 0; i < 40; i++) await database.write((tx) => record(tx, { accountId: null }, entry));
+  };
+  const [, ...verdicts] = await Promise.all([adding(), ...Array.from({ length: 5 }, () => verify())]);
+  expect(verdicts.map(({ firstBroken }) => firstBroken)).toEqual([null, null, null, null, null]);
+});
+
 /** The file as somebody with a copy of it would change it, who has first taken the triggers away. */
 async function tampered(statement: string): Promise<{ verdict: TrailVerdict; folder: string }> {
   const { mkdtempSync } = await import('node:fs');

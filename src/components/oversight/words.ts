@@ -62,6 +62,7 @@ const DEEDS: Record<string, string> = {
   'add-member': 'added a member to',
   'remove-member': 'removed a member from',
   'change-role': 'changed a role in',
+  leave: 'left',
   'sign-in': 'signed in to',
   'sign-out': 'signed out of',
   'end-session': 'ended a session of',

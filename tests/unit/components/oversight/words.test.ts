@@ -1,3 +1,5 @@
+import { readdirSync, readFileSync } from 'node:fs';
+import { join } from 'node:path';
 import { expect, test } from 'vitest';
 import { accessAddress, accessFrom, accessRequest } from '#src/components/oversight/access-query.ts';
 import { addressOf, exportOf, narrowed, requestOf, toggled, viewFrom } from '#src/components/oversight/trail-query.ts';
@@ -30,6 +32,20 @@ test.each([
 
 test('the same action says another thing of another kind of record', () => {
   expect(deedWords(row('revoke', 'invitation', 'x'))).not.toBe(deedWords(row('revoke', 'token', 'x')));
+});
+
+test('every action that the program records has words of its own in words.ts', () => {
+  const files = ['src/server', 'scripts'].flatMap((folder) =>
+    readdirSync(folder, { recursive: true, encoding: 'utf8' }).map((name) => join(folder, name)),
+  );
+  const recorded = files
+    .filter((file) => file.endsWith('.ts'))
+    .flatMap((file) => [...readFileSync(file, 'utf8').matchAll(/action: '([^']+)',\s*subjectType: '([a-z]+)'/g)])
+    .map(([, action, type]) => ({ action: action!, type: type! }));
+  expect(recorded.length).toBeGreaterThan(20);
+  const spelledOut = (action: string) => action.replace(/[-._]+/g, ' ');
+  const bare = recorded.filter(({ action, type }) => deedWords(row(action, type, 'x')) === spelledOut(action));
+  expect(bare).toEqual([]);
 });
 
 test('changes are told with before and after, from the row itself or from earlier ones', () => {
