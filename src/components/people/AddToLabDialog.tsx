@@ -38,7 +38,7 @@ export function AddToLabDialog({ person, labs, onClose, onDone }: Props) {
       description="The person is told by mail. To move somebody, add them here and remove them on the page of the lab they leave, where their drafts are handed over."
       actions={
         <>
-          <Button onClick={onClose}>Leave</Button>
+          <Button onClick={onClose}>Do not add</Button>
           <Button type="submit" form="add-to-lab" kind="primary" disabled={!lab || add.isPending}>
             Add to the lab
           </Button>

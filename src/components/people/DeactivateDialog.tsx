@@ -1,4 +1,5 @@
 import type { PersonDetail, PersonRecord } from '../../contracts/people.ts';
+import { Formula } from '../notation/index.tsx';
 import { Button } from '../ui/Button.tsx';
 import { Dialog } from '../ui/Dialog.tsx';
 import { Problem } from '../ui/Problem.tsx';
@@ -46,12 +47,16 @@ export function DeactivateDialog({ person, onClose, onDone }: Props) {
 
 function Consequences({ detail }: { detail: PersonDetail }) {
   const { tokens, invitations, drafts, labs } = detail;
+  const ended = [
+    tokens > 0 && countWords(tokens, 'access token'),
+    invitations > 0 && countWords(invitations, 'open invitation'),
+  ].filter((part) => part !== false);
   const leaderless = labs.filter(({ onlyLead }) => onlyLead);
   return (
     <>
       <p>
-        Every session ends, {countWords(tokens, 'access token')} and {countWords(invitations, 'open invitation')} are
-        revoked; they stay so after a reactivation.
+        Every session ends.
+        {ended.length > 0 && ` Revoked are ${ended.join(' and ')}; they stay so after a reactivation.`}
       </p>
       {leaderless.length > 0 && (
         <p className="font-semibold">
@@ -73,7 +78,7 @@ function Consequences({ detail }: { detail: PersonDetail }) {
                   target="_blank"
                   rel="noreferrer"
                 >
-                  <span className="num">{accession}</span> {name}
+                  <span className="num">{accession}</span> {kind === 'complex' ? <Formula formula={name} /> : name}
                 </a>
                 <span className="text-ink-soft">
                   , {kind}, {lab.name}

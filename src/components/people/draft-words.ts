@@ -17,5 +17,5 @@ export function draftWords({ complexes, preparations, spectra }: DraftCounts): s
 export const draftTotal = ({ complexes, preparations, spectra }: DraftCounts): number =>
   complexes + preparations + spectra;
 
-/** "1 access token", "no access tokens". */
-export const countWords = (n: number, one: string): string => (n === 0 ? `no ${one}s` : counted(n, one, `${one}s`));
+/** "1 access token", "2 access tokens". */
+export const countWords = (n: number, one: string): string => counted(n, one, `${one}s`);
