@@ -12,7 +12,7 @@ const EMAIL = 'second.factor@demo.example';
 /** The code that the app shows, `steps` of 30 s from now. */
 const codeOf = (base32: string, steps = 0) =>
   TOTP.generate({
-    secret: Secret.fromBase32(base32.replaceAll(' ', '')),
+    secret: Secret.fromBase32(base32.replace(/\s/g, '')),
     timestamp: Date.now() + steps * 30_000,
   });
 
