@@ -12,7 +12,7 @@ const people = [
   { who: 'nobody', email: null, paths: ['/signin', '/outbox', '/join'] },
   { who: 'contributor', email: 'contributor@demo.example', paths: [...MEMBER, '/tokens'] },
   { who: 'lead', email: 'lead@demo.example', paths: ['/', '/folios'] },
-  { who: 'steward', email: 'steward@demo.example', paths: ['/', '/labs'] },
+  { who: 'steward', email: 'steward@demo.example', paths: ['/', '/labs', '/people'] },
   { who: 'guest', email: 'guest@demo.example', paths: GUEST },
 ] as const;
 
