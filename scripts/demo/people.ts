@@ -17,6 +17,7 @@ export const labs = [
     place: 'Tidewater (invented)',
     description: 'The facility that measures for the others. Invented for the demo.',
     outsideAttest: true,
+    facility: true,
   },
   {
     key: 'hill',

@@ -22,7 +22,7 @@ export function roleChanged(facts: { by: string; lab: string; role: Role; link: 
 export function removedFromLab(facts: { by: string; lab: string }): MailContent {
   return compose(`You are no longer a member of ${facts.lab}`, [
     `${oneLine(facts.by)} removed you from ${oneLine(facts.lab)}.`,
-    'Your drafts in this lab went to another member of it. What you registered keeps your name.',
+    'Drafts that you had there stay with the lab. What you registered keeps your name.',
   ]);
 }
 
