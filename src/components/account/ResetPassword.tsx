@@ -102,7 +102,7 @@ function ChoosePassword({ token, onForget }: { token: string; onForget: () => vo
   const fault = choose.error instanceof ProblemError ? choose.error.about('password') : undefined;
   return (
     <form
-      aria-label="New password"
+      aria-label="Choose a new password"
       className="flex flex-col gap-4"
       onSubmit={(event) => {
         event.preventDefault();

@@ -32,6 +32,7 @@ export function SignInForm({ next, email, fault, asksFactor, csrfToken, demo }: 
   return (
     <div className="flex flex-col gap-5">
       <form
+        ref={form.formRef}
         method="post"
         action="/api/auth/callback/credentials"
         onSubmit={form.submit}

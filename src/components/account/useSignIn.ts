@@ -1,4 +1,4 @@
-import { type FormEvent, useEffect, useState } from 'react';
+import { type FormEvent, useEffect, useRef, useState } from 'react';
 import { askPasskey, knowsPasskeys } from './passkey.ts';
 import { signIn } from './sign-in.ts';
 
@@ -25,7 +25,13 @@ export function useSignIn(first: First) {
   const [hasPasskeys, setHasPasskeys] = useState(false);
   // The password was right a moment ago, and waits in this page.
   const [isProved, setIsProved] = useState(false);
+  const formRef = useRef<HTMLFormElement>(null);
   useEffect(() => {
+    // What a person or a password manager filled in before this script ran stands in the page, not yet in the state.
+    const filled = (name: string) => formRef.current?.querySelector<HTMLInputElement>(`input[name=${name}]`)?.value;
+    setEmail((now) => filled('email') || now);
+    setPassword((now) => filled('password') || now);
+    setCode((now) => filled('code') || now);
     setReady(true);
     setHasPasskeys(knowsPasskeys());
   }, []);
@@ -74,7 +80,7 @@ export function useSignIn(first: First) {
     setPassword(person.password);
   };
   return {
-    ...{ email, setEmail, password, setPassword, code, setCode, fault, problem, busy, ready },
+    ...{ formRef, email, setEmail, password, setPassword, code, setCode, fault, problem, busy, ready },
     ...{ asksFactor, isProved, hasPasskeys, submit, usePasskey, startAgain, fill },
   };
 }
