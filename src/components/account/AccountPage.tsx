@@ -21,9 +21,9 @@ export function AccountPage({ account: first, sessions }: Props) {
         <div className="flex min-w-0 flex-col gap-6">
           <ProfilePanel account={account} />
           <AddressPanel account={account} />
+          <PasswordPanel email={account.email} />
         </div>
         <div className="flex min-w-0 flex-col gap-6">
-          <PasswordPanel email={account.email} />
           <SecondFactorPanel />
           <SessionsPanel sessions={sessions} />
         </div>

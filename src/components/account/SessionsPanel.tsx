@@ -15,7 +15,7 @@ export function SessionsPanel({ sessions: first }: { sessions: SessionRecord[] }
   const others = sessions.filter(({ current }) => !current).length;
   return (
     <Panel title="Where you are signed in" flush>
-      <ul aria-label="Sessions" className="border-t border-faint">
+      <ul aria-label="Sessions" className="max-h-[30rem] overflow-y-auto border-t border-faint">
         {sessions.map((session) => (
           <Session
             key={session.id}
