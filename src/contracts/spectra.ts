@@ -4,15 +4,15 @@ import { BandClass } from './complexes.ts';
 
 export const Technique = z.enum(['solution', 'reflectance', 'transmission', 'emission', 'circular-dichroism']);
 const Note = z.object({ code: z.string(), detail: z.string() });
-const Solvent = z.object({ name: z.string().trim().min(1).max(100), volumeFraction: z.number().gt(0).max(1) });
-const Medium = z.object({
+const Solvent = z.strictObject({ name: z.string().trim().min(1).max(100), volumeFraction: z.number().gt(0).max(1) });
+const Medium = z.strictObject({
   pH: z.number().min(-3).max(17).nullable().optional(),
   ionicStrength: z.number().min(0).nullable().optional(),
   electrolyte: z.string().max(200).nullable().optional(),
   atmosphere: z.string().max(200).nullable().optional(),
   age: z.string().max(100).nullable().optional(),
 });
-const Species = z.object({
+const Species = z.strictObject({
   accession: z.string(),
   fraction: z.number().gt(0).max(1).nullable().optional(),
   basis: z.string().max(500),
@@ -48,7 +48,7 @@ const conditions = {
 export const ReadingOptions = z
   .strictObject({
     block: z.number().int().min(0).max(63).optional(),
-    columns: z.object({ x: z.number().int().min(0), y: z.array(z.number().int().min(0)).min(1) }).optional(),
+    columns: z.strictObject({ x: z.number().int().min(0), y: z.array(z.number().int().min(0)).min(1) }).optional(),
     xUnit: z.enum(['nm', 'um', 'cm-1', 'eV', 'THz']).optional(),
     yUnit: z
       .enum([

@@ -2,7 +2,16 @@ import type { APIContext, APIRoute } from 'astro';
 import type * as z from 'zod';
 import type { Route } from '../contracts/route.ts';
 import { type Asker, isMember } from './access/asker.ts';
-import { contractErrors, entityTag, HttpError, problem, readJsonBody, tooLarge, toProblem } from './http.ts';
+import {
+  contractErrors,
+  entityTag,
+  HttpError,
+  nullCharacter,
+  problem,
+  readJsonBody,
+  tooLarge,
+  toProblem,
+} from './http.ts';
 import { replayOrRun } from './idempotency.ts';
 import { type Admitted, admitWithin } from './limits/admit.ts';
 import { noteRead } from './oversight/reads.ts';
@@ -136,6 +145,7 @@ function readQuery<Q extends z.ZodType>(route: Route<Q, z.ZodType>, url: URL): z
   const given: Record<string, string | string[]> = {};
   for (const name of new Set(url.searchParams.keys())) {
     const values = url.searchParams.getAll(name);
+    if (values.some((value) => value.includes('\0'))) throw nullCharacter(400);
     given[name] = values.length > 1 ? values : values[0]!;
   }
   const parsed = route.query.safeParse(given);

@@ -102,19 +102,30 @@ export const entityTag = (body: string): string =>
 /**
  * Read a JSON body of at most `limit` bytes.
  *
- * @throws {HttpError} 400 when it is not JSON, 413 when it is longer (also when Content-Length lied)
+ * @throws {HttpError} 400 when it is not JSON, 413 when it is longer (also when Content-Length lied), 422
  */
 export async function readJsonBody(request: Request, limit: number): Promise<unknown> {
-  const text = new TextDecoder().decode(await readBytes(request, limit));
+  return parseJson(new TextDecoder().decode(await readBytes(request, limit)), 'The body is not JSON');
+}
+
+/**
+ * JSON as it may come from outside: without keys that would reach an object's prototype.
+ *
+ * @param refusal - what is said of a text that is none, also of one nested deeper than a program can follow
+ * @throws {HttpError} 400 with the refusal; 422 for a null character, at which the database would end a text
+ */
+export function parseJson(text: string, refusal: string): unknown {
   try {
-    return JSON.parse(text, withoutPrototype);
-  } catch {
-    throw new HttpError(400, 'The body is not JSON');
+    return JSON.parse(text, (key, value: unknown) => {
+      if (typeof value === 'string' && value.includes('\0')) throw nullCharacter(422);
+      return key === '__proto__' ? undefined : value;
+    });
+  } catch (error) {
+    throw error instanceof HttpError ? error : new HttpError(400, refusal);
   }
 }
 
-/** Drop keys that would reach an object's prototype. */
-const withoutPrototype = (key: string, value: unknown) => (key === '__proto__' ? undefined : value);
+export const nullCharacter = (status: 400 | 422) => new HttpError(status, 'A text holds a null character');
 
 export async function readBytes(request: Request, limit: number): Promise<Uint8Array> {
   const chunks: Uint8Array[] = [];

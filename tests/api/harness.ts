@@ -52,6 +52,8 @@ export interface Call {
   /** An account's id: sends the cookie of a session of it, from one of our own pages. */
   session?: string | undefined;
   json?: unknown;
+  /** A body as it stands, sent as JSON though it may be none. */
+  raw?: string;
   form?: FormData;
   headers?: Record<string, string>;
 }
@@ -78,18 +80,18 @@ export async function sessionHeaders(accountId: string, sessionId?: string): Pro
 export async function call(
   method: string,
   path: string,
-  { as, session, json, form, headers = {} }: Call = {},
+  { as, session, json, raw, form, headers = {} }: Call = {},
 ): Promise<Response> {
   const url = new URL(path, ORIGIN);
   const request = new Request(url, {
     method,
     headers: {
-      ...(json === undefined ? {} : { 'content-type': 'application/json' }),
+      ...(json === undefined && raw === undefined ? {} : { 'content-type': 'application/json' }),
       ...(as ? { authorization: `Bearer ${as}` } : {}),
       ...(session ? await sessionHeaders(session) : {}),
       ...headers,
     },
-    body: form ?? (json === undefined ? null : JSON.stringify(json)),
+    body: form ?? raw ?? (json === undefined ? null : JSON.stringify(json)),
   });
   const context = {
     request,

@@ -1,5 +1,6 @@
 import Papa from 'papaparse';
 import type { ReactNode } from 'react';
+import { guardCell } from '#src/chem/spectra/write-csv.ts';
 
 /** A column: what it sorts, filters and exports by, and how a cell is drawn where that is not the plain value. */
 export interface DataColumn<T> {
@@ -16,7 +17,8 @@ export interface DataColumn<T> {
  * before it; numbers stay numbers, negative ones too.
  */
 export function tableCsv<T>(columns: readonly DataColumn<T>[], rows: readonly T[]): string {
-  const fields = columns.map(({ header }) => header);
-  const data = rows.map((row) => columns.map(({ value }) => value(row) ?? ''));
-  return Papa.unparse({ fields, data }, { escapeFormulae: true, newline: '\r\n' });
+  const guarded = (cell: string | number | null) => (typeof cell === 'string' ? guardCell(cell) : (cell ?? ''));
+  const fields = columns.map(({ header }) => guardCell(header));
+  const data = rows.map((row) => columns.map(({ value }) => guarded(value(row))));
+  return Papa.unparse({ fields, data }, { newline: '\r\n' });
 }

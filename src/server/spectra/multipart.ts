@@ -4,7 +4,7 @@ import { Readable as NodeReadable } from 'node:stream';
 import { pipeline } from 'node:stream/promises';
 import type { ReadableStream as WebStream } from 'node:stream/web';
 import { Busboy } from '@fastify/busboy';
-import { HttpError, tooLarge } from '#src/server/http.ts';
+import { HttpError, parseJson, tooLarge } from '#src/server/http.ts';
 import { settings } from '#src/server/settings.ts';
 import { refuse } from './refuse.ts';
 
@@ -80,7 +80,7 @@ export async function readUpload(request: Request, jsonPart: string): Promise<Up
   }
   if (fault) throw fault;
   if (fileName === undefined) throw refuse('#/file', 'Send the spectrum as the part "file"');
-  return { bytes: Buffer.concat(chunks), sha256: hash.digest('hex'), fileName, told: parseJson(text, jsonPart) };
+  return { bytes: Buffer.concat(chunks), sha256: hash.digest('hex'), fileName, told: parsePart(text, jsonPart) };
 }
 
 function openForm(request: Request, limit: number) {
@@ -122,14 +122,8 @@ async function drain(stream: Readable, take: (chunk: Uint8Array) => void): Promi
 const unknownPart = (name: string, jsonPart: string) =>
   refuse(`#/${name}`, `Send one file and one part "${jsonPart}", not "${name}"`);
 
-function parseJson(text: string | undefined, part: string): unknown {
-  if (text === undefined) return undefined;
-  try {
-    return JSON.parse(text, (key, value) => (key === '__proto__' ? undefined : value));
-  } catch {
-    throw new HttpError(400, `The part "${part}" is not JSON`);
-  }
-}
+const parsePart = (text: string | undefined, part: string): unknown =>
+  text === undefined ? undefined : parseJson(text, `The part "${part}" is not JSON`);
 
 /** The last part of a path, without control characters. */
 function safeName(given: string | undefined): string {
