@@ -4,7 +4,7 @@ import type { Matrix } from './matrix.ts';
 import { type OverlapLigand, overlapField } from './overlap.ts';
 import { type FieldSetting, overlapGroup } from './overlap-group.ts';
 
-/** Ligands at each place of a way from one geometry (0) to another (1). */
+/** Ligands at each place of a way from one geometry (0) to another (1), along which the axes of their group stay put. */
 export type GeometryPath = (place: number) => readonly OverlapLigand[];
 
 export interface CorrelationRequest {

@@ -28,13 +28,18 @@ export function tetragonalPath({ eSigma, ePi }: LigandStrength, floor = 0): Geom
   };
 }
 
-/** Octahedron (0) to trigonal prism (1): one triangle turns against the other about the threefold axis z; D3. */
+/**
+ * Octahedron (0) to trigonal prism (1): the two triangles turn against each other about the threefold axis z, by as much
+ * each, so that the twofold axes stay where they are; D3.
+ */
 export function trigonalTwist(strength: LigandStrength): GeometryPath {
-  return (place) =>
-    [0, 120, 240].flatMap((phi) => [
-      at(CUBIC_ANGLE, phi, strength),
-      at(180 - CUBIC_ANGLE, phi + 60 * (1 - place), strength),
+  return (place) => {
+    const turn = 30 * (1 - place);
+    return [0, 120, 240].flatMap((phi) => [
+      at(CUBIC_ANGLE, phi + turn, strength),
+      at(180 - CUBIC_ANGLE, phi - turn, strength),
     ]);
+  };
 }
 
 /** Tetrahedron (0) to square plane (1): the ligands are pressed towards the plane across z; D2d. */

@@ -1,4 +1,4 @@
-import { implicitQl } from './tridiagonal.ts';
+import { implicitQl, NOTHING } from './tridiagonal.ts';
 
 /** Eigenvalues and eigenvectors of a Hermitian matrix. */
 export interface HermitianEigen {
@@ -32,7 +32,7 @@ export function hermitianEigen(re: Float64Array, im: Float64Array, n: number): H
     }
     diagonal[i] = re[row + i]!;
     const size = Math.hypot(re[last]!, im[last]!);
-    if (rest === 0) {
+    if (rest < NOTHING) {
       [linkRe[i], linkIm[i]] = [re[last]!, im[last]!];
       continue;
     }
@@ -84,7 +84,7 @@ function reflect(
   }
   let projection = 0;
   for (let j = 0; j < i; j++) projection += re[u + j]! * qRe[j]! + im[u + j]! * qIm[j]!;
-  const shift = projection / (2 * h * h);
+  const shift = projection / h / (2 * h);
   for (let j = 0; j < i; j++) {
     qRe[j] = qRe[j]! / h - shift * re[u + j]!;
     qIm[j] = qIm[j]! / h - shift * im[u + j]!;

@@ -49,7 +49,7 @@ export function overlapGroup(ligands: readonly OverlapLigand[]): FieldSetting | 
   if (!group || !setting) return null;
   return {
     group,
-    axes: setting.frame,
+    axes: setting.frame.map((axis) => axis.map((x) => (Math.abs(x) < 1e-12 ? 0 : x))) as Matrix3,
     representatives: group.classes.map(({ representative }) =>
       rotateOrbitals(setting.images[group.operations.indexOf(representative)]!),
     ),

@@ -18,6 +18,8 @@ export interface SpinOrbitLevel extends Level {
 }
 
 const LEAST_SHARE = 0.005;
+/** Rounding in the eigenvalues, as a share of the difference up to which levels of a typed field count as one. */
+const FINE = 1e-3;
 
 /**
  * Levels of dⁿ in a one-electron field with spin–orbit coupling ζ Σ l·s, in the whole space of all spins; ascending.
@@ -38,13 +40,13 @@ export function spinOrbitLevels(
   const states = fieldStates(n, field, repulsion, setting);
   const [re, im] = hamiltonian(space, field, repulsion, zeta);
   const eigen = hermitianEigen(re, im, space.size);
-  const groups = groupsOf(eigen.values, coincidence(field, repulsion) + 1e-6 * Math.abs(zeta));
+  const tolerance = coincidence(field, repulsion) + 1e-6 * Math.abs(zeta);
+  const fine = groupsOf(eigen.values, FINE * tolerance);
   const double = setting ? doubleSetting(setting.group.symbol, setting.axes) : null;
-  const characters = double ? charactersOf(n, space, eigen, groups, double) : null;
-  const found = groups.flatMap((members, g) => {
+  const characters = double ? charactersOf(n, space, eigen, fine, double) : fine.map(() => []);
+  const found = whole(eigen.values, fine, characters, double, tolerance).flatMap(({ members, parts }) => {
     const energy = members.reduce((sum, k) => sum + eigen.values[k]!, 0) / members.length;
     const composition = compositionOf(space, states, eigen, members);
-    const parts = double && characters ? irrepsOf(double, characters[g]!, members.length) : null;
     return (parts ?? [{ irrep: null, symmetry: null, degeneracy: members.length }]).map((part) => ({
       energy,
       degeneracy: part.degeneracy,
@@ -57,6 +59,28 @@ export function spinOrbitLevels(
     }));
   });
   return fromLowest(found);
+}
+
+/**
+ * States that make up levels. Zero-field splittings are far smaller than what rounded angles do to degenerate levels, so
+ * that states are parted finely wherever each part is whole irreps, and else only where they lie further apart.
+ */
+function whole(
+  values: Float64Array,
+  fine: readonly number[][],
+  characters: readonly number[][],
+  double: DoubleSetting | null,
+  tolerance: number,
+): { members: number[]; parts: Part[] | null }[] {
+  if (!double) return groupsOf(values, tolerance).map((members) => ({ members, parts: null }));
+  const lowest = fine.map(([first]) => values[first!]!);
+  return groupsOf(lowest, tolerance).flatMap((together) => {
+    const each = together.map((g) => ({ members: fine[g]!, parts: irrepsOf(double, characters[g]!, fine[g]!.length) }));
+    if (each.every(({ parts }) => parts !== null)) return each;
+    const members = together.flatMap((g) => fine[g]!);
+    const sum = characters[together[0]!]!.map((_, c) => together.reduce((total, g) => total + characters[g]![c]!, 0));
+    return [{ members, parts: irrepsOf(double, sum, members.length) }];
+  });
 }
 
 function hamiltonian(
@@ -196,6 +220,9 @@ function overlap(re: Float64Array, im: Float64Array, at: number, { offsets, orbi
   return sum;
 }
 
+/** Characters of a level that are off by more are not those of whole irreps. */
+const UNWHOLE = 0.05;
+
 interface Part {
   irrep: string;
   symmetry: string;
@@ -204,11 +231,16 @@ interface Part {
 
 /** The irreps of a level, each by itself; null where they do not add up, as in a field lower than its group. */
 function irrepsOf({ group }: DoubleSetting, characters: readonly number[], size: number): Part[] | null {
-  const parts = reduceDouble(group, characters).flatMap(({ irrep, count }) => {
+  const counts = reduceDouble(group, characters);
+  const parts = counts.flatMap(({ irrep, count }) => {
     // Time reversal doubles a half-integer irrep of one dimension: Kramers.
     const doubled = irrep.spinor && irrep.dimension === 1;
     const part = { irrep: irrep.bethe, symmetry: irrep.label, degeneracy: doubled ? 2 : irrep.dimension };
     return Array.from({ length: Math.max(0, doubled ? Math.round(count / 2) : count) }, () => part);
   });
-  return parts.reduce((sum, { degeneracy }) => sum + degeneracy, 0) === size ? parts : null;
+  const told = group.classes.map((_, c) =>
+    counts.reduce((sum, { irrep, count }) => sum + count * irrep.characters[c]!, 0),
+  );
+  const whole = characters.every((x, c) => Math.abs(x - told[c]!) < UNWHOLE);
+  return whole && parts.reduce((sum, { degeneracy }) => sum + degeneracy, 0) === size ? parts : null;
 }

@@ -1,3 +1,5 @@
+/** Squares below this are the dregs of underflow. */
+export const NOTHING = 1e-280;
 /** Far above what a value needs: two or three turns are the rule. */
 const MOST_TURNS = 60;
 
@@ -23,7 +25,7 @@ export function tridiagonalise(
     let rest = 0;
     for (let k = row; k < last; k++) rest += a[k]! * a[k]!;
     diagonal[i] = a[row + i]!;
-    if (rest === 0) {
+    if (rest < NOTHING) {
       off[i] = a[last]!;
       scales[i] = 0;
       continue;
@@ -55,7 +57,7 @@ function reflect(a: Float64Array, n: number, i: number, h: number, q: Float64Arr
   }
   let projection = 0;
   for (let j = 0; j < i; j++) projection += q[j]! * a[u + j]!;
-  const shift = projection / (2 * h * h);
+  const shift = projection / h / (2 * h);
   for (let j = 0; j < i; j++) q[j] = q[j]! / h - shift * a[u + j]!;
   for (let j = 0; j < i; j++) {
     const row = j * n;
