@@ -71,7 +71,7 @@ export function LabPeople({ lab, first, leads, me }: Props) {
   const [demoting, setDemoting] = useState<MemberRecord | null>(null);
   const role = useRole(lab.id, (member) => {
     if (member.id === me.id && !me.steward) location.reload();
-    setDone(`${member.name} is ${member.role} now.`);
+    setDone(`${member.name} is a ${member.role} now.`);
   });
   const change = (member: MemberRecord, to: MemberRecord['role']) => {
     setDone('');

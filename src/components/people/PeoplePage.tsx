@@ -29,6 +29,8 @@ export function PeoplePage({ people: first, labs, me }: Props) {
   const [done, setDone] = useState('');
   const close = () => setAsked(null);
   const settle = (said: string) => {
+    // Who gave up being steward may not see this page any more.
+    if (asked?.what === 'end-steward' && asked.person.id === me) return location.assign('/');
     setAsked(null);
     setDone(said);
   };
