@@ -9,8 +9,8 @@ const MEMBER = ['/', '/complexes', '/complexes/new', '/spectra', '/ligands', '/f
 const GUEST = ['/', '/complexes', '/folios'];
 
 const people = [
-  { who: 'nobody', email: null, paths: ['/signin', '/outbox', '/join'] },
-  { who: 'contributor', email: 'contributor@demo.example', paths: [...MEMBER, '/tokens'] },
+  { who: 'nobody', email: null, paths: ['/signin', '/outbox', '/join', '/reset', '/confirm-address'] },
+  { who: 'contributor', email: 'contributor@demo.example', paths: [...MEMBER, '/tokens', '/account'] },
   { who: 'lead', email: 'lead@demo.example', paths: ['/', '/folios'] },
   { who: 'steward', email: 'steward@demo.example', paths: ['/', '/labs', '/people'] },
   { who: 'guest', email: 'guest@demo.example', paths: GUEST },
