@@ -1,6 +1,8 @@
+import { useState } from 'react';
 import type { BundleInput, BundleRecord } from '../../contracts/sharing.ts';
 import { Button, ButtonLink } from '../ui/Button.tsx';
 import { CopyText } from '../ui/CopyText.tsx';
+import { Checkbox } from '../ui/controls.tsx';
 import { Panel } from '../ui/Panel.tsx';
 import { Problem } from '../ui/Problem.tsx';
 import { Progress } from '../ui/Progress.tsx';
@@ -16,6 +18,7 @@ interface Props {
 /** The content as one file to take away: order it, wait, download it, check it. */
 export function BundlePanel({ target, isEmpty, mayDownload }: Props) {
   const { order, bundle, fileName, cancel } = useBundle(target);
+  const [notify, setNotify] = useState(false);
   if (!mayDownload) {
     return (
       <Panel title="Download">
@@ -45,9 +48,17 @@ export function BundlePanel({ target, isEmpty, mayDownload }: Props) {
         {record?.state === 'ready' && <Ready bundle={record} fileName={fileName} />}
         <div role="status">{record?.state === 'cancelled' && 'Cancelled.'}</div>
         {!isBusy && record?.state !== 'ready' && (
-          <Button className="self-start" disabled={isEmpty} onClick={() => order.mutate()}>
-            Make a bundle
-          </Button>
+          <>
+            <Checkbox
+              label="Send me a mail when it is ready"
+              hint="If it takes longer than a minute, one is sent in any case."
+              checked={notify}
+              onChange={(event) => setNotify(event.target.checked)}
+            />
+            <Button className="self-start" disabled={isEmpty} onClick={() => order.mutate(notify)}>
+              Make a bundle
+            </Button>
+          </>
         )}
         {isEmpty && <p className="text-xs text-ink-soft">There is nothing in it yet.</p>}
       </div>

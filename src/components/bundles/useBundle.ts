@@ -13,7 +13,7 @@ export function useBundle(target: BundleInput) {
   const url = `/api/bundles/${id}`;
   const order = useMutation(
     {
-      mutationFn: () => sendJson<BundleRecord>('POST', '/api/bundles', target),
+      mutationFn: (notify: boolean) => sendJson<BundleRecord>('POST', '/api/bundles', { ...target, notify }),
       onSuccess: (bundle) => {
         queryClient.setQueryData(['bundle', bundle.id], bundle);
         setId(bundle.id);

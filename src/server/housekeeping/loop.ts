@@ -31,12 +31,12 @@ export async function housekeep(database: Database): Promise<void> {
 }
 
 /** Keep house in this process until stopped, in turns with the other processes on the same database. */
-export function startHousekeeping(database: Database): { stop(): Promise<void> } {
+export function startHousekeeping(database: Database, work = housekeep): { stop(): Promise<void> } {
   let stopped = false;
   let timer: NodeJS.Timeout | undefined;
   let working: Promise<unknown> = Promise.resolve();
   const turn = async () => {
-    if (await takeTurn(database, EVERY_MS)) await housekeep(database);
+    if (await takeTurn(database, EVERY_MS)) await work(database);
   };
   const next = (delay: number) => {
     if (stopped) return;
