@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, expect, test } from 'vitest';
 import { call, json, openRegistry } from './harness.ts';
-import { person } from './people.ts';
+import { lab, person } from './people.ts';
 
 let close: () => Promise<void>;
 let token: string;
@@ -76,4 +76,54 @@ test('vibrations of coordinates in place of a geometry', async () => {
   const twice = [...octahedron, octahedron[0]];
   const refused = await post('/api/derive/vibrations', { coordinates: twice }, 422);
   expect(refused.errors).toMatchObject([{ pointer: '#/coordinates', detail: expect.stringContaining('1 and 8') }]);
+});
+
+test('double groups in tables and products; parts of squares; d orbitals', async () => {
+  const table = await json(call('GET', '/api/symmetry/groups/Td', { as: token }));
+  const double = table.double as { order: number; irreps: { bethe: string }[] };
+  expect(double.order).toBe(48);
+  expect(double.irreps.map(({ bethe }) => bethe)).toEqual(['Γ1', 'Γ2', 'Γ3', 'Γ4', 'Γ5', 'Γ6', 'Γ7', 'Γ8']);
+  const linear = await json(call('GET', '/api/symmetry/groups/Cinfv', { as: token }));
+  expect(linear.double).toBeNull();
+  expect(await post('/api/derive/product', { group: 'O', irreps: ['Γ6', 'Γ6'] })).toEqual({
+    terms: [
+      { irrep: 'Γ1', count: 1 },
+      { irrep: 'Γ4', count: 1 },
+    ],
+  });
+  expect(await post('/api/derive/product', { group: 'Oh', irreps: ['T2g', 'T2g'], part: 'antisymmetric' })).toEqual({
+    terms: [{ irrep: 'T1g', count: 1 }],
+  });
+  await post('/api/derive/product', { group: 'Oh', irreps: ['T2g', 'Eg'], part: 'symmetric' }, 422);
+  const { orbitals } = await post('/api/derive/splitting', { group: 'D4h', term: '2D' });
+  expect(orbitals).toContainEqual({ orbital: 'x2-y2', irrep: 'b1g' });
+});
+
+test('all transitions of a registered complex', async () => {
+  const north = await lab('North Quay');
+  const as = (await person('chemist', { labs: { [north]: 'contributor' } })).token;
+  const register = async (body: Record<string, unknown>) =>
+    (await json<{ accession: string }>(call('POST', '/api/complexes', { as, json: { lab: north, ...body } }), 201))
+      .accession;
+  const chromium = await register({ formula: '[Cr(ox)3]3-', geometry: 'OC-6' });
+  const { accession, centres } = await json(call('GET', `/api/complexes/${chromium}/transitions`, { as }));
+  expect(accession).toBe(chromium);
+  expect(centres).toMatchObject([
+    {
+      element: 'Cr',
+      dCount: 3,
+      ground: { label: '4A2g', group: 'Oh' },
+      views: [
+        { kind: 'framework', group: 'D3', ground: ['4A2'] },
+        { kind: 'donorSet', group: 'Oh', ground: ['4A2g'] },
+      ],
+    },
+  ]);
+  const iron = await register({ formula: '[Fe(en)3]2+', geometry: 'OC-6' });
+  const path = `/api/complexes/${iron}/transitions`;
+  expect(await json(call('GET', path, { as }))).toMatchObject({ centres: [{ ground: null, views: [] }] });
+  expect(await json(call('GET', `${path}?spin=high`, { as }))).toMatchObject({
+    centres: [{ ground: { label: '5T2g' } }],
+  });
+  await json(call('GET', `${path}?spin=sideways`, { as }), 400);
 });

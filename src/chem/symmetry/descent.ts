@@ -51,14 +51,24 @@ export function descend(from: string, to: string, irreps?: readonly string[], al
   };
 }
 
+/** A way in which a subgroup lies in a group. */
 interface Choice {
   label: string;
   /** Class of the group that each class of the subgroup lies in. */
   classes: number[];
 }
 
-/** One embedding from each set that the group's operations carry into each other. */
-function choicesOf(group: FiniteGroup, subgroup: FiniteGroup): Choice[] {
+const known = new Map<string, readonly Choice[]>();
+
+/** The ways in which a subgroup lies in a group, one of each set that the group's operations carry into each other. */
+export function choicesOf(group: FiniteGroup, subgroup: FiniteGroup): readonly Choice[] {
+  const pair = `${group.symbol} ${subgroup.symbol}`;
+  const ways = known.get(pair) ?? findChoices(group, subgroup);
+  known.set(pair, ways);
+  return ways;
+}
+
+function findChoices(group: FiniteGroup, subgroup: FiniteGroup): Choice[] {
   const seen = new Set<string>();
   const ways = embeddings(subgroup, group.operations).filter((way) => {
     if (seen.has(setKey(way.images))) return false;

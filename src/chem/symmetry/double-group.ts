@@ -1,6 +1,7 @@
 import { betheLabels } from './bethe-labels.ts';
 import { classAlgebra, multiplicationTable } from './class-algebra.ts';
 import { requireFinite } from './groups.ts';
+import { linearSymbols } from './linear-groups.ts';
 import { barred, lift, momentumCharacter, multiplySpin, type SpinRotation, spinKey } from './spin-rotation.ts';
 
 /** An irrep of a double group; a complex-conjugate pair counts as one. */
@@ -44,6 +45,17 @@ export function doubleGroup(symbol: string): DoubleGroup {
   const group = known.get(symbol) ?? generate(symbol);
   known.set(symbol, group);
   return group;
+}
+
+/** The table of a double group as shown; null for the linear groups. */
+export function doubleTable(symbol: string) {
+  if (linearSymbols.includes(symbol)) return null;
+  const { order, classes, irreps } = doubleGroup(symbol);
+  return {
+    order,
+    classes: classes.map(({ label, size }) => ({ label, size })),
+    irreps: irreps.map(({ pair: _, ...irrep }) => irrep),
+  };
 }
 
 function generate(symbol: string): DoubleGroup {

@@ -69,10 +69,19 @@ const indexAt = (positions: readonly Vector3[], place: Vector3): number =>
 const isSame = ([i, j]: readonly [number, number], image: readonly number[]): boolean =>
   (image[i] === i && image[j] === j) || (image[i] === j && image[j] === i);
 
-/** The setting whose plane xz holds the most guides, then whose x does; the set's own axes win a tie. */
+/**
+ * The setting whose z is normal to a plane of guides or else holds the most of them, then whose plane xz does, then x;
+ * the set's own axes win a tie. Where there is a principal axis, z has no choice: this is for D2 and D2h.
+ */
 function bestSetting(group: FiniteGroup, matrices: readonly Matrix3[], guides: readonly Vector3[]): Embedding {
-  const score = ({ frame: [x, y] }: Embedding): number =>
-    guides.reduce((sum, v) => sum + (Math.abs(dot(v, y)) < 1e-4 ? 10 : 0) + (onAxis(v, x) ? 1 : 0), 0);
+  const across = (v: Vector3, axis: Vector3): boolean => Math.abs(dot(v, axis)) < 1e-4;
+  const score = ({ frame: [x, y, z] }: Embedding): number => {
+    const upright = guides.every((v) => across(v, z)) ? 1e6 : 0;
+    return guides.reduce(
+      (sum, v) => sum + (onAxis(v, z) ? 1e3 : 0) + (across(v, y) ? 10 : 0) + (onAxis(v, x) ? 1 : 0),
+      upright,
+    );
+  };
   return embeddings(group, matrices).reduce((best, other) => (score(other) > score(best) ? other : best));
 }
 

@@ -1,18 +1,8 @@
+import type { ExpectedEpsilon } from './expected-epsilon.ts';
 import type { IrrepCount, PointGroup } from './groups.ts';
+import type { LowerGroup } from './lower-groups.ts';
+import { type Direction, directions, type Mechanism, type SelectionRules } from './selection-rules.ts';
 import type { Term } from './term-label.ts';
-
-export type Direction = 'x' | 'y' | 'z';
-export const directions: readonly Direction[] = ['x', 'y', 'z'];
-
-/** How a transition can be seen at all; `forbidden` when by none of these. */
-export type Mechanism = 'allowed' | 'vibronic' | 'spin-forbidden' | 'spin-forbidden-vibronic' | 'forbidden';
-
-/** Whether spin–orbit coupling in first order gives a spin-forbidden transition electric dipole intensity. */
-export interface SpinOrbit {
-  /** Null where the spin rule does not stand in the way, and the question does not arise. */
-  allowed: boolean | null;
-  steps: string[];
-}
 
 /** Irreps of the modes to try, and where they come from: the request, a plain skeleton, or nowhere. */
 export interface Modes {
@@ -27,17 +17,10 @@ export interface SelectionParts {
   group: PointGroup;
   from: Term;
   to: Term;
-  product: readonly IrrepCount[];
-  /** Irreps of x, y and z. */
-  operators: Record<Direction, string>;
-  dipole: Record<Direction, boolean>;
-  vibronic: Record<Direction, readonly string[]>;
-  magneticDipole: Record<Direction, boolean>;
-  spinAllowed: boolean;
-  laporteAllowed: boolean | null;
-  mechanism: Mechanism;
   modes: Modes;
-  spinOrbit: SpinOrbit;
+  rules: SelectionRules;
+  epsilon: ExpectedEpsilon;
+  lower: readonly LowerGroup[];
 }
 
 /** A direct sum in words: `A1g + 2T2g`. */
@@ -46,62 +29,27 @@ export const sumText = (terms: readonly IrrepCount[]): string =>
 
 const termText = ({ multiplicity, irrep }: Term): string => `${multiplicity}${irrep}`;
 
-/**
- * First-order spin–orbit coupling mixes terms whose spins differ by one; its orbital part transforms as the rotations.
- * The spin-forbidden transition borrows dipole intensity where from ⊗ to ⊗ rotation ⊗ dipole holds the totally
- * symmetric irrep. (J. S. Griffith, The Theory of Transition-Metal Ions, 1961; from memory.)
- */
-export function spinOrbitPart(
-  group: string,
-  from: Term,
-  to: Term,
-  meets: (operators: readonly string[]) => boolean,
-  dipoles: Record<Direction, string>,
-  rotations: Record<Direction, string>,
-): SpinOrbit {
-  const difference = Math.abs(from.multiplicity - to.multiplicity);
-  if (difference === 0) {
-    return { allowed: null, steps: ['The spin does not change, so the transition needs no spin–orbit coupling.'] };
-  }
-  if (difference !== 2) {
-    const reason =
-      difference % 2 === 1
-        ? 'One multiplicity is odd and one even, which no transition within one number of electrons can join.'
-        : 'Spin–orbit coupling in first order joins spins that differ by one, and these differ by more.';
-    return { allowed: false, steps: [reason] };
-  }
-  const open = directions.filter((d) => directions.some((r) => meets([rotations[r], dipoles[d]])));
-  const orbital = [...new Set(directions.map((d) => rotations[d]))].join(', ');
-  return {
-    allowed: open.length > 0,
-    steps: [
-      `In ${group} the orbital part of spin–orbit coupling transforms as the rotations: ${orbital}.`,
-      open.length > 0
-        ? `With it in first order, electric dipole intensity can be borrowed in ${open.join(', ')}.`
-        : 'With it in first order, no polarisation gains electric dipole intensity unless a vibration helps too.',
-    ],
-  };
-}
-
 /** The argument, one sentence or two per step, without numbers. */
 export function selectionSteps(parts: SelectionParts): string[] {
-  const { group, from, to, spinAllowed, spinOrbit } = parts;
+  const { group, from, to, lower, epsilon } = parts;
+  const { spinAllowed, spinOrbit, product, mechanism } = parts.rules;
   return [
     `Both terms are labelled in ${group.symbol} (${group.setting}): ${termText(from)} to ${termText(to)}.`,
     spinAllowed
       ? `The spin multiplicity stays ${from.multiplicity}: spin-allowed.`
       : `The spin multiplicity changes from ${from.multiplicity} to ${to.multiplicity}: spin-forbidden.`,
-    `In ${group.symbol}, ${from.irrep} ⊗ ${to.irrep} = ${sumText(parts.product)}.`,
+    `In ${group.symbol}, ${from.irrep} ⊗ ${to.irrep} = ${sumText(product)}.`,
     laporteStep(parts),
     ...dipoleSteps(parts),
     ...vibronicSteps(parts),
     magneticStep(parts),
     ...(spinAllowed ? [] : spinOrbit.steps),
-    conclusions[parts.mechanism],
+    ...(lower.length > 0 ? [lowerStep(group, lower)] : []),
+    `${conclusions[mechanism]} ${epsilonText(epsilon)}`,
   ];
 }
 
-function laporteStep({ group, laporteAllowed }: SelectionParts): string {
+function laporteStep({ group, rules: { laporteAllowed } }: SelectionParts): string {
   if (laporteAllowed === null)
     return `${group.symbol} has no centre of inversion, so the Laporte rule says nothing here.`;
   return laporteAllowed
@@ -115,7 +63,7 @@ function together(operators: Record<Direction, string>): { irrep: string; member
   return irreps.map((irrep) => ({ irrep, members: directions.filter((d) => operators[d] === irrep) }));
 }
 
-function dipoleSteps({ group, operators, dipole }: SelectionParts): string[] {
+function dipoleSteps({ group, rules: { operators, dipole } }: SelectionParts): string[] {
   return together(operators).map(({ irrep, members }) => {
     const names = members.join(', ');
     const holds = dipole[members[0]!];
@@ -123,7 +71,7 @@ function dipoleSteps({ group, operators, dipole }: SelectionParts): string[] {
   });
 }
 
-function vibronicSteps({ group, operators, vibronic, modes }: SelectionParts): string[] {
+function vibronicSteps({ group, modes, rules: { operators, vibronic } }: SelectionParts): string[] {
   if (modes.irreps.length === 0 && !modes.given) {
     return [
       `No plain skeleton stands for ${group.symbol}; without a list of vibrations, vibronic intensity is not judged.`,
@@ -137,12 +85,25 @@ function vibronicSteps({ group, operators, vibronic, modes }: SelectionParts): s
   });
 }
 
-function magneticStep({ group, magneticDipole }: SelectionParts): string {
+function magneticStep({ group, rules: { magneticDipole } }: SelectionParts): string {
   const open = directions.filter((d) => magneticDipole[d]);
   return open.length > 0
     ? `In ${group.symbol} the orbital magnetic dipole is allowed for ${open.map((d) => `R${d}`).join(', ')}.`
     : `In ${group.symbol} the orbital magnetic dipole is forbidden.`;
 }
+
+/** The highest groups that open it; what opens in one of them opens below it as well. */
+function lowerStep(group: PointGroup, lower: readonly LowerGroup[]): string {
+  const first = [...new Set(lower.map(({ group: symbol }) => symbol))].slice(0, 4);
+  const more = new Set(lower.map(({ group: symbol }) => symbol)).size - first.length;
+  const named = lower.find(({ group: symbol }) => symbol === first[0])!;
+  const along = directions.filter((d) => named.dipole[d]).join(', ');
+  const others = more > 0 ? ` and ${more} more` : '';
+  return `Where the symmetry falls from ${group.symbol} to ${first.join(', ')}${others}, a polarisation opens: in ${named.group} along ${along} (${named.from.join(', ')} to ${named.to.join(', ')}).`;
+}
+
+const epsilonText = ({ from, to, basis }: ExpectedEpsilon): string =>
+  `Expected order of ε: ${from === 0 ? `below ${to}` : `${from} to ${to}`} dm³ mol⁻¹ cm⁻¹ (${basis}).`;
 
 const conclusions: Record<Mechanism, string> = {
   allowed: 'So the transition is allowed as an electric dipole transition.',

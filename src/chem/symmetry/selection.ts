@@ -1,17 +1,11 @@
 import { DomainError } from '../errors.ts';
+import { type ExpectedEpsilon, expectedEpsilon } from './expected-epsilon.ts';
 import { findGroup, type IrrepCount, type PointGroup } from './groups.ts';
-import { directProduct } from './products.ts';
-import {
-  type Direction,
-  directions,
-  type Mechanism,
-  type Modes,
-  type SpinOrbit,
-  selectionSteps,
-  spinOrbitPart,
-} from './selection-steps.ts';
+import { type LowerGroup, lowerGroups } from './lower-groups.ts';
+import { type SelectionRules, selectionRules } from './selection-rules.ts';
+import { type Modes, selectionSteps } from './selection-steps.ts';
 import { plainSkeleton } from './skeletons.ts';
-import { readTerm, requireIrrep, type Term } from './term-label.ts';
+import { readTerm, requireIrrep } from './term-label.ts';
 import { vibrations as vibrationsOf } from './vibrations.ts';
 
 /** A transition to be judged. */
@@ -25,22 +19,13 @@ export interface SelectionRequest {
   vibrations?: readonly IrrepCount[];
 }
 
-/** What symmetry says about a transition. */
-export interface SelectionAnalysis {
+/** What symmetry says about a transition, with the argument. */
+export interface SelectionAnalysis extends SelectionRules {
   group: string;
-  spinAllowed: boolean;
-  /** Null in a group without a centre of inversion, where the rule has no meaning. */
-  laporteAllowed: boolean | null;
-  /** Direct product of the two terms. */
-  product: IrrepCount[];
-  /** Whether the electric dipole integral may differ from zero, per polarisation. */
-  dipole: Record<Direction, boolean>;
-  /** Irreps among the vibrations whose quantum makes that polarisation allowed. */
-  vibronic: Record<Direction, string[]>;
-  /** Whether the magnetic dipole integral may differ from zero, per component. */
-  magneticDipole: Record<Direction, boolean>;
-  spinOrbit: SpinOrbit;
-  mechanism: Mechanism;
+  /** Order of ε that such transitions show, in dm³ mol⁻¹ cm⁻¹. */
+  expectedEpsilon: ExpectedEpsilon;
+  /** Subgroups that open a polarisation, from high to low. */
+  lowerGroups: LowerGroup[];
   /** The argument in numbered sentences, each in plain text. */
   steps: string[];
 }
@@ -62,67 +47,17 @@ export function selectionAnalysis(request: SelectionRequest): SelectionAnalysis 
   const from = readTerm(group.symbol, request.from, 'from');
   const to = readTerm(group.symbol, request.to, 'to');
   const modes = modesOf(group, request.vibrations);
-
-  const product = directProduct(group.symbol, [from.irrep, to.irrep]);
-  const operators = perDirection((d) => irrepWith(group, d));
-  const rotations = perDirection((d) => irrepWith(group, `R${d}`));
-  const dipole = perDirection((d) => meets(group, from, to, [operators[d]]));
-  const vibronic = perDirection((d) => modes.irreps.filter((mode) => meets(group, from, to, [operators[d], mode])));
-  const magneticDipole = perDirection((d) => meets(group, from, to, [rotations[d]]));
-  const spinAllowed = from.multiplicity === to.multiplicity;
-  const laporteAllowed = group.centrosymmetric ? product.some(({ irrep }) => isOdd(irrep)) : null;
-  const mechanism = mechanismOf(spinAllowed, dipole, vibronic);
-  const spinOrbit = spinOrbitPart(
-    group.symbol,
-    from,
-    to,
-    (extra) => meets(group, from, to, extra),
-    operators,
-    rotations,
-  );
-  const parts = {
-    group,
-    from,
-    to,
-    product,
-    operators,
-    dipole,
-    vibronic,
-    magneticDipole,
-    spinAllowed,
-    laporteAllowed,
-    mechanism,
-    modes,
-    spinOrbit,
-  };
+  const rules = selectionRules(group, from, to, modes.irreps);
+  const epsilon = expectedEpsilon(rules);
+  const lower = lowerGroups(group.symbol, from, to);
+  const steps = selectionSteps({ group, from, to, modes, rules, epsilon, lower });
   return {
     group: group.symbol,
-    spinAllowed,
-    laporteAllowed,
-    product,
-    dipole,
-    vibronic,
-    magneticDipole,
-    spinOrbit,
-    mechanism,
-    steps: selectionSteps(parts).map((step, i) => `${i + 1}. ${step}`),
+    ...rules,
+    expectedEpsilon: epsilon,
+    lowerGroups: lower,
+    steps: steps.map((step, i) => `${i + 1}. ${step}`),
   };
-}
-
-function perDirection<T>(value: (direction: Direction) => T): Record<Direction, T> {
-  return { x: value('x'), y: value('y'), z: value('z') };
-}
-
-const isOdd = (irrep: string): boolean => /(u|_u[+-]?)$/.test(irrep);
-
-function irrepWith({ irreps }: PointGroup, name: string): string {
-  return irreps.find(({ functions }) => functions.includes(name))!.label;
-}
-
-/** Whether the product of both terms and some operators holds the totally symmetric irrep. */
-function meets({ symbol, irreps }: PointGroup, from: Term, to: Term, operators: readonly string[]): boolean {
-  const symmetric = irreps[0]!.label;
-  return directProduct(symbol, [from.irrep, to.irrep, ...operators]).some(({ irrep }) => irrep === symmetric);
 }
 
 function modesOf(group: PointGroup, given: readonly IrrepCount[] | undefined): Modes {
@@ -138,14 +73,4 @@ function modesOf(group: PointGroup, given: readonly IrrepCount[] | undefined): M
     skeleton: skeleton.geometry,
     given: false,
   };
-}
-
-function mechanismOf(
-  spinAllowed: boolean,
-  dipole: Record<Direction, boolean>,
-  vibronic: Record<Direction, readonly string[]>,
-): Mechanism {
-  if (directions.some((d) => dipole[d])) return spinAllowed ? 'allowed' : 'spin-forbidden';
-  if (directions.some((d) => vibronic[d].length > 0)) return spinAllowed ? 'vibronic' : 'spin-forbidden-vibronic';
-  return 'forbidden';
 }

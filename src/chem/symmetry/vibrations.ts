@@ -1,5 +1,6 @@
 import { DomainError } from '../errors.ts';
 import { findGeometry, operationsOf } from '../geometry/catalogue.ts';
+import type { Embedding } from './embedding.ts';
 import { type IrrepCount, requireFinite } from './groups.ts';
 import { linearVibrations } from './linear-vibrations.ts';
 import { modesOfAtoms } from './modes-of-atoms.ts';
@@ -49,7 +50,18 @@ export interface SkeletonVibrations {
  *
  * @throws DomainError `unknown-symbol` on `geometry`, `out-of-range` on `sites` or `links`
  */
-export function vibrations({ geometry: symbol, sites, links = [] }: Skeleton): SkeletonVibrations {
+export function vibrations(skeleton: Skeleton): SkeletonVibrations {
+  return skeletonModes(skeleton).modes;
+}
+
+/**
+ * Normal modes with the setting of the group in the frame of the polyhedron; null for a line, which has no such
+ * setting. Errors as `vibrations`.
+ */
+export function skeletonModes({ geometry: symbol, sites, links = [] }: Skeleton): {
+  modes: SkeletonVibrations;
+  setting: Embedding | null;
+} {
   const geometry = findGeometry(symbol);
   if (!geometry) throw new DomainError('unknown-symbol', `No geometry has the symbol “${symbol}”.`, 'geometry');
   const { vertices, coordinationNumber: n } = geometry;
@@ -62,11 +74,11 @@ export function vibrations({ geometry: symbol, sites, links = [] }: Skeleton): S
   const points = { colours: sites, links };
   const linear = isLinear(vertices);
   const group = pointGroup(operationsOf(geometry), points, linear);
-  if (linear) return linearVibrations(group, n + 1);
+  if (linear) return { modes: linearVibrations(group, n + 1), setting: null };
   const matrices = stabiliser(operationsOf(geometry), points).map(({ matrix }) => matrix);
   return modesOfAtoms(requireFinite(group, 'geometry'), matrices, {
     positions: [[0, 0, 0], ...vertices],
     bonds: vertices.map((_, i) => [0, i + 1]),
     guides: vertices,
-  }).modes;
+  });
 }

@@ -46,6 +46,14 @@ export const rows: Record<string, MatrixRow> = {
     send: (f) => ({ path: `/api/complexes/${f.draft}` }),
     expect: statuses({ guests: 404, southMembers: 404, readToken: 404, others: 200 }),
   },
+  readTransitions: {
+    send: (f) => ({ path: `/api/complexes/${f.open}/transitions` }),
+    expect: statuses({ guests: 404, grantedGuests: 200, others: 200 }),
+  },
+  'readTransitions, lab only': {
+    send: (f) => ({ path: `/api/complexes/${f.labOnly}/transitions` }),
+    expect: statuses({ guests: 404, southMembers: 404, others: 200 }),
+  },
   changeComplex: {
     send: (f) => ({ path: `/api/complexes/${f.open}`, json: { notes: f.fresh() }, headers: any }),
     expect: statuses({ guests: 403, readToken: 403, contributor: 403, southMembers: 403, others: 200 }),

@@ -54,13 +54,74 @@ test('the plain skeleton of the group is used unless vibrations are given', () =
   expect(selectionAnalysis({ ...request, vibrations: [{ irrep: 'T1u', count: 0 }] }).mechanism).toBe('forbidden');
 });
 
-// 3T1 with spin–orbit coupling borrows from 1T2 among others in Td; a d–d band in Oh cannot without a vibration.
-test('spin–orbit coupling in first order', () => {
-  expect(selectionAnalysis({ group: 'Td', from: '1A1', to: '3T1' }).spinOrbit.allowed).toBe(true);
-  expect(selectionAnalysis({ group: 'Oh', from: '1A1g', to: '3T1u' }).spinOrbit.allowed).toBe(true);
-  expect(selectionAnalysis({ group: 'Oh', from: '1A1g', to: '3T1g' }).spinOrbit.allowed).toBe(false);
-  expect(selectionAnalysis({ group: 'Td', from: '6A1', to: '2T2' }).spinOrbit.allowed).toBe(false);
-  expect(selectionAnalysis({ group: 'Td', from: '4A2', to: '4T1' }).spinOrbit.allowed).toBeNull();
+// G. F. Koster et al., Properties of the Thirty-Two Point Groups, 1963; J. S. Griffith, The Theory of
+// Transition-Metal Ions, 1961; from memory.
+describe('spin–orbit mixing through the double group', () => {
+  const mixing = (group: string, from: string, to: string) => selectionAnalysis({ group, from, to }).spinOrbit;
+
+  test('what it opens, and what it leaves closed', () => {
+    expect(mixing('Td', '1A1', '3T1').allowed).toBe(true);
+    expect(mixing('Oh', '1A1g', '3T1u').allowed).toBe(true);
+    expect(mixing('Oh', '1A1g', '3T1g').allowed).toBe(false);
+    expect(mixing('Td', '4A2', '4T1').allowed).toBeNull();
+    expect(mixing('Td', '4A2', '3T1').allowed).toBe(false);
+    expect(mixing('Dinfh', '1Sigma_g+', '3Pi_u').allowed).toBe(true);
+    expect(mixing('Dinfh', '1Sigma_g+', '3Pi_g').allowed).toBe(false);
+  });
+
+  test('ruby’s 4A2g to 2Eg: Γ8 to Γ8, closed in Oh without a vibration, open across the axis in D3', () => {
+    const inOh = mixing('Oh', '4A2g', '2Eg');
+    expect(inOh.components).toEqual({ from: 'Γ8+', to: 'Γ8+' });
+    expect(inOh.vibronic).toEqual({ x: ['T1u', 'T2u'], y: ['T1u', 'T2u'], z: ['T1u', 'T2u'] });
+    const inD3 = mixing('D3', '4A2', '2E');
+    expect(inD3.components).toEqual({ from: 'Γ4 + (Γ5,Γ6)', to: 'Γ4 + (Γ5,Γ6)' });
+    expect(inD3.dipole).toEqual({ x: true, y: true, z: true });
+  });
+
+  test('spins that differ by two are joined in second order', () => {
+    expect(mixing('Td', '6A1', '4T1')).toMatchObject({ allowed: true, order: 1 });
+    expect(mixing('Td', '6A1', '2T2')).toMatchObject({ allowed: true, order: 2 });
+  });
+
+  // 1A1 to 3A2 in C2v: the spin functions of a triplet are A2, B1, B2, so the components are A1, B1, B2.
+  test('a singlet and a triplet in C2v', () => {
+    expect(mixing('C2v', '1A1', '3A2').dipole).toEqual({ x: true, y: true, z: true });
+    expect(mixing('C2v', '1A1', '3A1').dipole).toEqual({ x: true, y: true, z: false });
+  });
+});
+
+describe('expected order of ε, by common practice (Lever 1984; Figgis and Hitchman 2000)', () => {
+  test.each([
+    ['[Ti(H2O)6]3+, ε 5', 'Oh', '2T2g', '2Eg', 5],
+    ['[Mn(H2O)6]2+, ε 0.03', 'Oh', '6A1g', '4T1g', 0.03],
+    ['[CoCl4]2-, ε 600', 'Td', '4A2', '4T1', 600],
+    ['[MnO4]-, ε 2400, which no d–d range may exclude', 'Oh', '1A1g', '1T1u', 2400],
+    ['[Co(en)3]3+, ε 85', 'D3', '1A1', '1E', 85],
+    ['[MnBr4]2-, ε 2', 'Td', '6A1', '4T1', 2],
+  ])('%s', (_, group, from, to, epsilon) => {
+    const { expectedEpsilon } = selectionAnalysis({ group, from, to });
+    expect(epsilon).toBeGreaterThanOrEqual(expectedEpsilon.from);
+    expect(epsilon).toBeLessThanOrEqual(expectedEpsilon.to);
+  });
+});
+
+describe('what a lower group would allow', () => {
+  test('T2g to Eg: open in O and Td, closed wherever the centre stays', () => {
+    const { lowerGroups } = selectionAnalysis({ group: 'Oh', from: '2T2g', to: '2Eg' });
+    const of = (symbol: string) => lowerGroups.find(({ group }) => group === symbol);
+    expect(of('Td')).toMatchObject({ from: ['2T2'], to: ['2E'], dipole: { x: true, y: true, z: true } });
+    expect(of('D3')).toMatchObject({ from: ['2A1', '2E'], to: ['2E'], dipole: { x: true, y: true, z: true } });
+    for (const { group } of lowerGroups) expect(findGroup(group)!.centrosymmetric).toBe(false);
+  });
+
+  test('4A2 to 4T2 of a tetrahedron: open along x and y when it is squashed to D2d', () => {
+    const { lowerGroups } = selectionAnalysis({ group: 'Td', from: '4A2', to: '4T2' });
+    expect(lowerGroups.find(({ group }) => group === 'D2d')?.dipole).toEqual({ x: true, y: true, z: false });
+  });
+
+  test('nothing is said where all is open already', () => {
+    expect(selectionAnalysis({ group: 'Td', from: '4A2', to: '4T1' }).lowerGroups).toEqual([]);
+  });
 });
 
 test('steps are numbered and name the group', () => {

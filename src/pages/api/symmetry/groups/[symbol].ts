@@ -1,4 +1,4 @@
-import { findGroup } from '#src/chem/symmetry/index.ts';
+import { doubleTable, findGroup } from '#src/chem/symmetry/index.ts';
 import { routes } from '#src/contracts/routes.ts';
 import { endpoint } from '#src/server/endpoint.ts';
 import { HttpError } from '#src/server/http.ts';
@@ -9,5 +9,5 @@ export const GET = endpoint(routes.readGroup, {
     if (!group) throw new HttpError(404, 'No point group has this symbol; /api/symmetry/groups lists them');
     return group;
   },
-  act: ({ access }) => access,
+  act: ({ access }) => ({ ...access, double: doubleTable(access.symbol) }),
 });
