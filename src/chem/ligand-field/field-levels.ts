@@ -128,6 +128,10 @@ function charactersOf(n: number, states: Matrix, groups: readonly number[][], se
     const characters = known.get(key) ?? new Float64Array(groups.length);
     if (known.has(key)) return characters;
     known.set(key, characters);
+    if (isIdentity(orbitals)) {
+      for (const [g, members] of groups.entries()) characters[g] = members.length;
+      return characters;
+    }
     const turned = turnStates(space, orbitals, states).data;
     for (let at = 0; at < turned.length; at += states.columns) {
       for (let k = 0; k < states.columns; k++) {
@@ -138,6 +142,8 @@ function charactersOf(n: number, states: Matrix, groups: readonly number[][], se
   });
   return groups.map((_, g) => byClass.map((characters) => characters[g]!));
 }
+
+const isIdentity = ({ data }: Matrix): boolean => data.every((x, k) => Math.abs(x - (k % 6 === 0 ? 1 : 0)) < 1e-9);
 
 /** The irreps of a level, each by itself; null where they do not add up, as in a field lower than its group. */
 function irrepsOf(

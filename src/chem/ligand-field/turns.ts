@@ -42,10 +42,17 @@ export function turnStates(space: ConfigurationSpace, orbitals: Matrix, states: 
   return turned;
 }
 
+/** Elements of a turn below this are rounding. */
+const NONE = 1e-14;
+
 function addRow(target: Matrix, to: number, source: Matrix, from: number, factor: number): void {
-  if (factor === 0) return;
-  const [t, s] = [to * target.columns, from * source.columns];
-  for (let k = 0; k < target.columns; k++) target.data[t + k] = target.data[t + k]! + factor * source.data[s + k]!;
+  if (Math.abs(factor) < NONE) return;
+  const width = target.columns;
+  const a = target.data;
+  const b = source.data;
+  const t = to * width;
+  const s = from * width;
+  for (let k = 0; k < width; k++) a[t + k] = a[t + k]! + factor * b[s + k]!;
 }
 
 /** How a transformation acts on antisymmetric products of orbitals: by its minors. */
@@ -59,13 +66,30 @@ function minors(orbitals: Matrix, sets: readonly number[][]): Matrix {
   return all;
 }
 
+/** Determinant of the part of m in some rows and columns, at most five of each. */
 function minor(m: Matrix, rows: readonly number[], columns: readonly number[]): number {
-  const [first, ...rest] = rows;
-  if (first === undefined) return 1;
-  return columns.reduce((sum, column, k) => {
-    const entry = m.data[first * m.columns + column]!;
-    if (entry === 0) return sum;
-    const others = columns.filter((c) => c !== column);
-    return sum + (k % 2 === 0 ? entry : -entry) * minor(m, rest, others);
-  }, 0);
+  const at = (i: number, j: number): number => m.data[rows[i]! * m.columns + columns[j]!]!;
+  switch (rows.length) {
+    case 0:
+      return 1;
+    case 1:
+      return at(0, 0);
+    case 2:
+      return at(0, 0) * at(1, 1) - at(0, 1) * at(1, 0);
+    case 3:
+      return (
+        at(0, 0) * (at(1, 1) * at(2, 2) - at(1, 2) * at(2, 1)) -
+        at(0, 1) * (at(1, 0) * at(2, 2) - at(1, 2) * at(2, 0)) +
+        at(0, 2) * (at(1, 0) * at(2, 1) - at(1, 1) * at(2, 0))
+      );
+    default: {
+      const [first, ...rest] = rows;
+      return columns.reduce((sum, column, k) => {
+        const entry = m.data[first! * m.columns + column]!;
+        if (entry === 0) return sum;
+        const others = columns.filter((c) => c !== column);
+        return sum + (k % 2 === 0 ? entry : -entry) * minor(m, rest, others);
+      }, 0);
+    }
+  }
 }
