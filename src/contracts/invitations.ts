@@ -1,4 +1,5 @@
 import * as z from 'zod';
+import { NewPassword } from './account.ts';
 import { Email, Expiry, Instant, LabRef, Name } from './common.ts';
 import { Level, Licence } from './grants.ts';
 
@@ -70,7 +71,7 @@ export const Acceptance = z
   .strictObject({
     token: InvitationToken,
     name: Name.optional(),
-    password: z.string().min(15, 'A password needs at least 15 characters').max(1000).optional(),
+    password: NewPassword.optional(),
     terms: z
       .literal(true, 'Accepting an invitation to a folio accepts its terms')
       .optional()

@@ -3,11 +3,11 @@ import { accounts } from '#src/db/schema/index.ts';
 import { database } from '../database.ts';
 import { HttpError } from '../http.ts';
 import { factorKinds, passesSecondFactor } from '../second-factor/verify.ts';
-import { beginSession, endSession, forgetOldSessions } from '../sessions.ts';
+import { beginSession, endSession } from '../sessions.ts';
 import { record } from '../trail.ts';
 import { presentCaller } from './caller.ts';
 import { type AccountRow, accountOfCredentials, refusedSignIn } from './credentials.ts';
-import { forgetOldCounts, forgiveSignIn } from './throttle.ts';
+import { forgiveSignIn } from './throttle.ts';
 
 /** A sign-in that the page must explain: the code is one of those that `signInFault` knows. */
 export class SignInRefused extends Error {
@@ -47,8 +47,6 @@ export async function signIn(typed: Typed, userAgent: string | null) {
     if (still?.state !== 'active' || still.passwordHash !== account.passwordHash) return null;
     if (caller.session) await endSession(tx, caller.session.accountId, caller.session.id);
     await forgiveSignIn(tx, account.email, caller.address ?? 'unknown');
-    await forgetOldSessions(tx);
-    await forgetOldCounts(tx);
     const id = await beginSession(tx, { accountId: account.id, secondFactor, userAgent, address: caller.address });
     const detail = { session: id, secondFactor };
     await record(

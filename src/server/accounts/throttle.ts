@@ -1,4 +1,4 @@
-import { and, eq, gt, inArray, lt, sql } from 'drizzle-orm';
+import { and, eq, gt, inArray, sql } from 'drizzle-orm';
 import type { Tx } from '#src/db/client.ts';
 import { limits, sessions } from '#src/db/schema/index.ts';
 import { database } from '../database.ts';
@@ -75,9 +75,4 @@ export async function forgiveSignIn(tx: Tx, email: string, address: string): Pro
     .update(limits)
     .set({ count: sql`max(0, ${limits.count} - 1)` })
     .where(eq(limits.key, keysOf(email, address).client));
-}
-
-/** Counts whose window ended a day ago say nothing any more. */
-export async function forgetOldCounts(tx: Tx): Promise<void> {
-  await tx.delete(limits).where(lt(limits.until, Date.now() - DAY));
 }
