@@ -7,6 +7,8 @@ import { settings } from './settings.ts';
 
 const HALF = 1000;
 const ROUNDS = 8;
+/** Where the highest number handed out is kept. */
+const LAST = 'accession-last';
 
 /**
  * A permutation of 0 … 999 999 chosen by a key: neither order nor gaps of the results tell how many were handed out.
@@ -36,7 +38,14 @@ async function accessionKey(tx: Tx): Promise<string> {
 /** The next number and its accession, inside the transaction that stores the complex. Numbers are never reused. */
 export async function nextAccession(tx: Tx): Promise<{ number: number; accession: string }> {
   const [row] = await tx.select({ last: max(complexes.number) }).from(complexes);
-  const number = (row?.last ?? -1) + 1;
+  // The highest number may have gone with a deleted draft.
+  const [handedOut] = await tx.select().from(registrySettings).where(eq(registrySettings.key, LAST));
+  const number = Math.max(row?.last ?? -1, Number(handedOut?.value ?? -1)) + 1;
+  const value = String(number);
+  await tx
+    .insert(registrySettings)
+    .values({ key: LAST, value })
+    .onConflictDoUpdate({ target: registrySettings.key, set: { value } });
   return {
     number,
     accession: formatAccession(settings().accessionPrefix, permuteNumber(number, await accessionKey(tx))),

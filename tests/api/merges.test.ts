@@ -196,10 +196,11 @@ describe('merging', () => {
     expect(await (await read(southLead, `/api/complexes/${open}`)).text()).toBe(before);
     expect((await record(northLead, open)).spectra).toBe(1);
     expect((await record(northLead, open)).notes).toBeNull();
-    expect((await record(steward, open)).history.map(({ action }) => action)).toEqual([
-      'merge',
-      'register',
-      'register',
+    const { history } = await record(steward, open);
+    expect(history.map(({ action, detail }) => [action, detail.of])).toEqual([
+      ['merge', hidden],
+      ['register', undefined],
+      ['register', hidden],
     ]);
   });
 
@@ -284,6 +285,12 @@ describe('merging', () => {
     const held = { name: id, complexes: [await idOf(hidden)], spectra: [], bands: [] };
     expect(await stillOpen(asker, order, held)).toBe(true);
   });
+});
+
+test('an accession is handed out once, also when the last draft that had one is deleted', async () => {
+  const draft = await register(member, north, freshFormula(), { state: 'draft' });
+  await call('DELETE', `/api/complexes/${draft}`, { as: member.token, headers: any });
+  expect(await register(member, north, freshFormula())).not.toBe(draft);
 });
 
 describe('moving a spectrum', () => {

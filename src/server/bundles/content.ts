@@ -14,6 +14,7 @@ import {
   spectrumSolvents,
 } from '#src/db/schema/index.ts';
 import type { Asker } from '../access/asker.ts';
+import { seesAsMember } from '../access/records.ts';
 import { guestLevel } from '../access/sharing.ts';
 import { bandSight, complexDownload, spectrumDownload } from '../access/sight.ts';
 import { livingAccessions } from '../complexes/alias.ts';
@@ -117,7 +118,12 @@ export async function gatherContent(asker: Asker, order: Order): Promise<Content
     preparations: preparationRows,
     labs: new Map(labRows.map(({ id, name }) => [id, name])),
     instruments: new Map(instrumentRows.map(({ id, name }) => [id, name])),
-    licences: folio ? [folio.licence] : await licencesOf(asker),
+    licences: folio
+      ? [folio.licence]
+      : await licencesOf(
+          judged,
+          chosen.map(({ complex }) => complex),
+        ),
   };
 }
 
@@ -144,15 +150,17 @@ async function complexesOf(asker: Asker, order: Order) {
   return rows.map(({ complex }) => ({ complex, listed: null }));
 }
 
-/** A guest's selection comes under the licences of the folios that it was granted from. */
-async function licencesOf(asker: Asker): Promise<string[]> {
-  if (asker.steward || asker.labs.size > 0) return [];
+/** What is taken as a guest comes under the licences of the folios that it was granted from. */
+async function licencesOf(asker: Asker, chosen: Rows<typeof complexes>): Promise<string[]> {
+  const asGuest = chosen.filter((complex) => !seesAsMember(asker, complex)).map(({ id }) => id);
+  if (asGuest.length === 0) return [];
   const { db } = await database();
-  const granted = asker.grants.filter((grant) => grant.level === 'download').map((grant) => grant.folioId);
+  const granted = asker.grants.map((grant) => grant.folioId);
   const rows = await db
     .selectDistinct({ licence: folios.licence })
     .from(folios)
-    .where(among(sql`${folios.id}`, granted))
+    .innerJoin(folioItems, eq(folioItems.folioId, folios.id))
+    .where(and(among(sql`${folios.id}`, granted), among(sql`${folioItems.complexId}`, asGuest)))
     .orderBy(asc(folios.licence));
   return rows.map(({ licence }) => licence);
 }

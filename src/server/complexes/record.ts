@@ -91,11 +91,15 @@ async function historyOf({ asker, complex }: ComplexAccess): Promise<ComplexReco
   const mergedHere = db.select({ id: complexes.id }).from(complexes).where(eq(complexes.mergedInto, complex.accession));
   const subject = asker.steward ? or(own, inArray(trail.subjectId, mergedHere)) : own;
   const rows = await db
-    .select({ at: trail.at, action: trail.action, detail: trail.detail, who: accounts.name })
+    .select({ at: trail.at, action: trail.action, detail: trail.detail, who: accounts.name, of: complexes.accession })
     .from(trail)
     .leftJoin(accounts, eq(accounts.id, trail.actorId))
+    .leftJoin(complexes, eq(complexes.id, trail.subjectId))
     .where(and(eq(trail.subjectType, 'complex'), subject, member ? undefined : ne(trail.action, 'take-in')))
     .orderBy(desc(trail.seq))
     .limit(100);
-  return member ? rows : rows.map(({ at, action }) => ({ at, action, who: null, detail: {} }));
+  return rows.map(({ of, at, action, detail, who }) => {
+    if (!member) return { at, action, who: null, detail: {} };
+    return { at, action, who, detail: of === complex.accession ? detail : { ...detail, of } };
+  });
 }

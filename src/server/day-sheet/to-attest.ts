@@ -29,7 +29,8 @@ export async function bandsToAttest(asker: Asker): Promise<DaySheet['toAttest']>
     ne(bands.proposedBy, asker.accountId),
     eq(spectra.state, 'registered'),
     judged,
-    bandSight(asker),
+    // What is seen as a guest of a folio is not one's own to judge.
+    bandSight({ ...asker, grants: [] }),
   );
   const led = labsWith(asker, 'lead');
   const ofOwnLab = sql`(${led.length > 0 ? inArray(spectra.labId, led) : sql`null`})`;

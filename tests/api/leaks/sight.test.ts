@@ -250,6 +250,8 @@ describe.each(askers)('%s', (asker) => {
     const spectrumIds = new Set(sight.spectra.map(({ id }) => id));
     const told = [...sheet.recentSpectra, ...sheet.toAttest.items, ...sheet.spectrumDrafts.items];
     expect(told.filter(({ id }) => !spectrumIds.has(id))).toEqual([]);
+    const byMember = ({ id }: { id: string }) => spectrumAsMember(asker, world.spectra.find((s) => s.id === id)!);
+    expect(sheet.toAttest.items.filter((item) => !byMember(item))).toEqual([]);
     const registered = sight.spectra.filter((s) => s.state === 'registered').length;
     expect(sheet.recentSpectra.length).toBe(isMember(asker) ? Math.min(8, registered) : 0);
     const mine = <T extends { maker: string; state: string }>(records: T[]) =>

@@ -80,6 +80,7 @@ export function historyText({ action, detail }: Pick<ComplexRecord['history'][nu
   const fields = Object.keys(detail).flatMap((name) => FIELDS[name] ?? []);
   const reopened = typeof detail.reopened === 'number' && detail.reopened > 0 ? detail.reopened : null;
   const parts = [fields.length > 0 && action === 'change' ? `${word}: ${fields.join(', ')}` : word];
+  if (typeof detail.of === 'string') parts.push(`as ${detail.of}`);
   if (reopened) parts.push(`${reopened} ${reopened === 1 ? 'attestation' : 'attestations'} reopened`);
   return parts.join('; ');
 }
