@@ -76,6 +76,21 @@ describe('a grant', () => {
     expect((await read(guest.token, folio)).status).toBe(404);
   });
 
+  test('accepted before licences were noted is one of the licence that held until it changed', async () => {
+    const folio = await folioOf();
+    const guest = await person('Guest Before');
+    const id = await grant(folio, guest.id, 'view', lead.id);
+    const { write, grants, eq } = await tables();
+    const termsAcceptedAt = '2026-11-01T00:00:00.000Z';
+    await write((tx) => tx.update(grants).set({ termsAcceptedAt }).where(eq(grants.id, id)));
+    expect(await json(read(guest.token, folio))).toMatchObject({ terms: { isCurrent: true } });
+    const body = { json: { licence: 'CC0-1.0' }, headers: { 'if-match': '*' } };
+    await json(call('PATCH', `/api/folios/${folio}`, { as: lead.token, ...body }));
+    expect(await json(read(guest.token, folio))).toMatchObject({
+      terms: { acceptedAt: termsAcceptedAt, licence: 'CC-BY-4.0', isCurrent: false },
+    });
+  });
+
   test('that is ended by hand tells the guest once, and whom to write to', async () => {
     const folio = await folioOf();
     const guest = await person('Guest Four');
