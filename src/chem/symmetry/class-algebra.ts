@@ -15,15 +15,26 @@ export interface ClassAlgebra {
 /**
  * Multiplication table of a closed set: `table[a][b]` is the index of a·b.
  *
- * @param key - the same text for equal elements, and for no others
+ * @param mark - a number that differs between elements, and is the same for equal ones but for rounding
  */
 export function multiplicationTable<T>(
   elements: readonly T[],
   multiply: (a: T, b: T) => T,
-  key: (element: T) => string,
+  mark: (element: T) => number,
 ): number[][] {
-  const index = new Map(elements.map((element, i) => [key(element), i]));
-  return elements.map((a) => elements.map((b) => index.get(key(multiply(a, b)))!));
+  const sorted = elements.map((element, i) => ({ mark: mark(element), i })).sort((a, b) => a.mark - b.mark);
+  const marks = Float64Array.from(sorted, (entry) => entry.mark);
+  const indexOf = (value: number): number => {
+    let [low, high] = [0, marks.length - 1];
+    while (low < high) {
+      const middle = (low + high) >> 1;
+      if (marks[middle]! < value) low = middle + 1;
+      else high = middle;
+    }
+    const before = low > 0 && value - marks[low - 1]! < marks[low]! - value;
+    return sorted[before ? low - 1 : low]!.i;
+  };
+  return elements.map((a) => elements.map((b) => indexOf(mark(multiply(a, b)))));
 }
 
 /**

@@ -2,7 +2,7 @@ import { betheLabels } from './bethe-labels.ts';
 import { classAlgebra, multiplicationTable } from './class-algebra.ts';
 import { requireFinite } from './groups.ts';
 import { linearSymbols } from './linear-groups.ts';
-import { barred, lift, momentumCharacter, multiplySpin, type SpinRotation, spinKey } from './spin-rotation.ts';
+import { barred, lift, momentumCharacter, multiplySpin, type SpinRotation, spinMark } from './spin-rotation.ts';
 
 /** An irrep of a double group; a complex-conjugate pair counts as one. */
 export interface DoubleIrrep {
@@ -42,7 +42,7 @@ const known = new Map<string, DoubleGroup>();
  * @see H. Bethe, Ann. Phys. 395 (1929) 133; G. F. Koster et al., Properties of the Thirty-Two Point Groups, 1963
  */
 export function doubleGroup(symbol: string): DoubleGroup {
-  const group = known.get(symbol) ?? generate(symbol);
+  const group = known.get(symbol) ?? generateDoubleGroup(symbol);
   known.set(symbol, group);
   return group;
 }
@@ -58,11 +58,12 @@ export function doubleTable(symbol: string) {
   };
 }
 
-function generate(symbol: string): DoubleGroup {
+/** Generates a double group anew. Errors as `doubleGroup`. */
+export function generateDoubleGroup(symbol: string): DoubleGroup {
   const group = requireFinite(symbol, 'group');
   const lifts = group.operations.map(lift);
   const elements = [...lifts, ...lifts.map(barred)];
-  const algebra = classAlgebra(multiplicationTable(elements, multiplySpin, spinKey));
+  const algebra = classAlgebra(multiplicationTable(elements, multiplySpin, spinMark));
   const order = group.order;
 
   const bare = algebra.classes.map((members, old) => {

@@ -13,24 +13,35 @@ export function eigenvectors(matrix: readonly (readonly number[])[]): number[][]
 }
 
 function offDiagonal(a: readonly (readonly number[])[]): number {
-  const square = (x: number): number => x * x;
-  const all = a.flat().reduce((sum, x) => sum + square(x), 0);
-  const off = a.reduce((sum, row, i) => sum + row.reduce((s, x, j) => (i === j ? s : s + square(x)), 0), 0);
+  let [all, off] = [0, 0];
+  for (const [i, row] of a.entries()) {
+    for (const [j, x] of row.entries()) {
+      all += x * x;
+      if (i !== j) off += x * x;
+    }
+  }
   return off / (all || 1);
 }
 
-/** Turns rows and columns p and q so that a[p][q] vanishes. */
+/** Turns rows and columns p and q so that a[p][q] vanishes. Written in place: this is the innermost loop of a search. */
 function rotate(a: number[][], v: number[][], p: number, q: number): void {
   const off = a[p]![q]!;
   if (off === 0) return;
   const theta = (a[q]![q]! - a[p]![p]!) / (2 * off);
-  const t = (theta < 0 ? -1 : 1) / (Math.abs(theta) + Math.hypot(theta, 1));
-  const c = 1 / Math.hypot(t, 1);
+  const t = (theta < 0 ? -1 : 1) / (Math.abs(theta) + Math.sqrt(theta * theta + 1));
+  const c = 1 / Math.sqrt(t * t + 1);
   const s = t * c;
-  for (const row of a) [row[p], row[q]] = [c * row[p]! - s * row[q]!, s * row[p]! + c * row[q]!];
+  for (const row of a) {
+    const [x, y] = [row[p]!, row[q]!];
+    row[p] = c * x - s * y;
+    row[q] = s * x + c * y;
+  }
   for (const m of [a, v]) {
     const [rowP, rowQ] = [m[p]!, m[q]!];
-    m[p] = rowP.map((x, k) => c * x - s * rowQ[k]!);
-    m[q] = rowP.map((x, k) => s * x + c * rowQ[k]!);
+    for (let k = 0; k < rowP.length; k++) {
+      const [x, y] = [rowP[k]!, rowQ[k]!];
+      rowP[k] = c * x - s * y;
+      rowQ[k] = s * x + c * y;
+    }
   }
 }

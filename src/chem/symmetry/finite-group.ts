@@ -14,7 +14,7 @@ import {
   turnReflect,
 } from './generators.ts';
 import { type LabelProbe, labelRank, mullikenLabels, principalOperation } from './irrep-labels.ts';
-import { closure, IDENTITY, INVERSION, matrixKey, rotation } from './matrices.ts';
+import { closure, IDENTITY, INVERSION, matrixKey, matrixMark, rotation } from './matrices.ts';
 
 /** An irreducible representation of a finite group; a complex-conjugate pair counts as one, of dimension 2. */
 export interface FiniteIrrep {
@@ -45,15 +45,16 @@ const known = new Map<string, FiniteGroup>();
 /** The finite group with this symbol, generated at first use; null when it is not in the list. */
 export function finiteGroup(symbol: string): FiniteGroup | null {
   if (!finiteSymbols.includes(symbol)) return null;
-  const group = known.get(symbol) ?? generate(symbol);
+  const group = known.get(symbol) ?? generateGroup(symbol);
   known.set(symbol, group);
   return group;
 }
 
-function generate(symbol: string): FiniteGroup {
+/** Generates the table of a symbol of `finiteSymbols` anew. */
+export function generateGroup(symbol: string): FiniteGroup {
   const parts = symbolParts(symbol);
   const operations = closure(generatorsOf(parts));
-  const algebra = classAlgebra(multiplicationTable(operations, multiply, matrixKey));
+  const algebra = classAlgebra(multiplicationTable(operations, multiply, matrixMark));
   const labelled = labelClasses(parts, operations, algebra.classes);
   const place = algebra.classes.map((members) => labelled.findIndex((c) => c.members === members));
   const indices = new Map(operations.map((m, g) => [matrixKey(m), place[algebra.classOf[g]!]!]));

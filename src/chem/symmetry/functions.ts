@@ -59,7 +59,12 @@ export const dFunctions: readonly Form[] = [
  * @returns names by irrep: x, y, z, Rx, Ry, Rz, then quadratic ones
  */
 export function sortFunctions(operations: readonly Matrix3[], irreps: readonly ProjectingIrrep[]): string[][] {
-  const belongs = (form: Form): number => irrepOf(form, operations, irreps);
+  const known = new Map<string, number>();
+  const belongs = (form: Form): number => {
+    const found = known.get(form.name) ?? irrepOf(form, operations, irreps);
+    known.set(form.name, found);
+    return found;
+  };
   const squares = squareSets.find((set) => set.every((form) => belongs(form) >= 0)) ?? [];
   const all = [...vectors, ...squares, ...products].map((form) => ({ name: form.name, irrep: belongs(form) }));
   return irreps.map((_, k) => all.filter(({ irrep }) => irrep === k).map(({ name }) => name));
@@ -94,5 +99,8 @@ function transformed(form: Form, m: Matrix3): Form {
 }
 
 function components(form: Form): number[] {
-  return 'polar' in form ? form.polar : 'axial' in form ? form.axial : form.quadratic.flat();
+  if ('polar' in form) return form.polar;
+  if ('axial' in form) return form.axial;
+  const [[xx, xy, xz], [, yy, yz], [, , zz]] = form.quadratic;
+  return [xx, yy, zz, xy, xz, yz];
 }

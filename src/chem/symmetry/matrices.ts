@@ -29,6 +29,13 @@ export function rotation(axis: Vector3, angle: number): Matrix3 {
 export const matrixKey = (m: Matrix3): string =>
   m.map((row) => row.map((x) => Math.round(x * 1e4) || 0).join(',')).join(';');
 
+/** Weights without a rational relation, so that no two operations of a group in its standard setting sum alike. */
+const [A, B, C] = [1, Math.PI - 3, Math.E - 2];
+
+/** A number that differs between the operations of a group in its standard setting. */
+export const matrixMark = ([[a, b, c], [d, e, f], [g, h, i]]: Matrix3): number =>
+  A * a + B * b + C * c + 3.1 * (A * e + B * f + C * d) + 7.7 * (A * i + B * g + C * h);
+
 /** All products of some operations, the identity first. They must generate a finite group. */
 export function closure(generators: readonly Matrix3[]): Matrix3[] {
   const found = new Map([[matrixKey(IDENTITY), IDENTITY]]);

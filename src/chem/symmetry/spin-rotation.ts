@@ -53,3 +53,7 @@ export function momentumCharacter(multiplicity: number, { turn: [w] }: SpinRotat
   for (let k = 1; k < multiplicity; k++) [before, value] = [value, 2 * w * value - before];
   return value;
 }
+
+/** A number that differs between the elements of a double group in its standard setting. */
+export const spinMark = ({ turn: [w, x, y, z], parity }: SpinRotation): number =>
+  10 * parity + w + (Math.PI - 3) * x + (Math.E - 2) * y + Math.SQRT1_2 * Math.LN2 * z;
