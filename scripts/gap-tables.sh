@@ -6,3 +6,4 @@ cd "$(dirname "$0")/.."
 to=tests/unit/chem/symmetry/gap-tables.json
 gap -q -b scripts/gap-tables.g </dev/null >"$to.new"
 mv "$to.new" "$to"
+npx biome format --write "$to"

@@ -233,3 +233,83 @@ test('a line: jittered, stretched to one side, bent, and of two kinds', () => {
     '1Pi_u',
   ]);
 });
+
+const ring = (element: string, n: number, radius: number, z: number, turn = 0): Atom[] =>
+  Array.from({ length: n }, (_, k) => {
+    const angle = (2 * Math.PI * k) / n + turn;
+    return { element, x: radius * Math.cos(angle), y: radius * Math.sin(angle), z };
+  });
+
+describe('beyond skeletons', () => {
+  const iron: Atom = { element: 'Fe', x: 0, y: 0, z: 0 };
+  const rings = (turn: number): Atom[] => [
+    iron,
+    ...ring('C', 5, 1.22, 1.66),
+    ...ring('H', 5, 2.3, 1.66),
+    ...ring('C', 5, 1.22, -1.66, turn),
+    ...ring('H', 5, 2.3, -1.66, turn),
+  ];
+
+  // K. Nakamoto, Infrared and Raman Spectra of Inorganic and Coordination Compounds, Part B; from memory.
+  test('ferrocene: D5h eclipsed, D5d staggered, D5 between; 57 vibrations; atoms by kind and place', () => {
+    const staggered = vibrationsOfAtoms(rings(Math.PI / 5));
+    expect([vibrationsOfAtoms(rings(0)).group, staggered.group]).toEqual(['D5h', 'D5d']);
+    expect(vibrationsOfAtoms(rings(Math.PI / 10)).group).toBe('D5');
+    const size = (label: string): number =>
+      finiteGroup('D5d')!.irreps.find((irrep) => irrep.label === label)!.dimension;
+    expect(staggered.vibrations.reduce((sum, { irrep, count }) => sum + count * size(irrep), 0)).toBe(57);
+    expect(staggered.vibrations.find(({ irrep }) => irrep === 'A1g')).toMatchObject({ count: 4, raman: true });
+    expect(staggered.orbits.map((orbit) => orbit.length)).toEqual([1, 10, 10]);
+  });
+
+  test('an icosahedron of twelve about one, and one atom of it of another kind', () => {
+    const golden = (1 + Math.sqrt(5)) / 2;
+    const vertices = [-1, 1].flatMap((a) =>
+      [-golden, golden].flatMap((b) => [
+        [0, a, b],
+        [a, b, 0],
+        [b, 0, a],
+      ]),
+    );
+    const cluster = [[0, 0, 0], ...vertices].map(
+      ([x, y, z], i): Atom => ({ element: i ? 'Au' : 'Pd', x: 1.5 * x!, y: 1.5 * y!, z: 1.5 * z! }),
+    );
+    expect(vibrationsOfAtoms(cluster).group).toBe('Ih');
+    expect(vibrationsOfAtoms(cluster.with(1, { ...cluster[1]!, element: 'Ag' })).group).toBe('C5v');
+  });
+
+  test('axes are told in the frame given: z along the odd pair, x and y through the others', () => {
+    const { orientation, axes } = vibrationsOfAtoms([
+      { element: 'Co', x: 1, y: 1, z: 1 },
+      ...[3, -1].map((x): Atom => ({ element: 'Cl', x, y: 1, z: 1 })),
+      ...[3, -1].map((y): Atom => ({ element: 'N', x: 1, y, z: 1 })),
+      ...[3, -1].map((z): Atom => ({ element: 'N', x: 1, y: 1, z })),
+    ]);
+    expect(Math.abs(orientation.z[0])).toBeCloseTo(1, 9);
+    for (const [k, c] of [1, 1, 1].entries()) expect(orientation.centre[k]).toBeCloseTo(c, 9);
+    expect(axes).toBe('Donors on the axes of the labels: 2 on x, 2 on y, 2 on z.');
+  });
+
+  test('an atom without a known radius leaves stretches open, and the rest stands', () => {
+    const found = vibrationsOfAtoms(
+      placesOf(findGeometry('OC-6')!).map(([x, y, z], i) => ({ element: i ? 'L' : 'M', x, y, z })),
+    );
+    expect(found).toMatchObject({ group: 'Oh', stretches: null, bends: null, bonds: null });
+    expect(found.vibrations.map(({ irrep }) => irrep)).toEqual(['A1g', 'Eg', 'T2g', 'T1u', 'T2u']);
+  });
+});
+
+test('refusals', () => {
+  const refused = (atoms: Atom[], tolerance: number, code: string, field: string) =>
+    expect(() => vibrationsOfAtoms(atoms, tolerance)).toThrowError(expect.objectContaining({ code, field }));
+  const pair = ring('N', 2, 1, 0);
+  refused([], 0.1, 'empty', 'coordinates');
+  refused(pair.slice(1), 0.1, 'unsupported', 'coordinates');
+  refused([...pair, pair[0]!], 0.1, 'out-of-range', 'coordinates');
+  refused([{ ...pair[0]!, x: Number.NaN }, pair[1]!], 0.1, 'out-of-range', 'coordinates');
+  refused(pair, 0, 'out-of-range', 'tolerance');
+  refused(pair, 0.6, 'out-of-range', 'tolerance');
+  refused(ring('C', 151, 100, 0), 0.1, 'too-large', 'coordinates');
+  // A ring of nine has a ninefold axis.
+  refused(ring('C', 9, 2.5, 0), 0.1, 'unsupported', 'coordinates');
+});
