@@ -115,6 +115,7 @@ export const FitResult = z
         ratioSource: z.enum(['given', 'free ion', 'assumed', 'fitted']),
         degreesOfFreedom: z.number().int(),
         converged: z.boolean(),
+        score: z.number().describe('rank: residuals, unusual values, missing bands; low is good'),
         remarks: z.array(z.string()).describe('what speaks against the candidate'),
       }),
     ),

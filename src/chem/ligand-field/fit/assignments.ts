@@ -7,15 +7,12 @@ import { readTargets, SCAN, type TargetTable } from './targets.ts';
 const MOST_CHOICES = 800;
 /** Starting points that are followed, the most promising ones. */
 const MOST_STARTS = 40;
-/** Residuals beyond this share of the bands ask for levels of other spin too. */
-const POOR = 0.04;
 /** Δ/B of known complexes, over which levels are ordered by how low they come. */
 const USUAL: readonly [number, number] = [4, 60];
 
 /**
  * The least-squares solutions of all sensible assignments: written terms stand, free bands end on levels of the ground's
- * spin, no level twice, in the order of the levels. Where those do not suffice or fit badly, levels whose spin differs by
- * one are let in.
+ * spin, no level twice, in the order of the levels; then on levels whose spin differs by one as well.
  */
 export function assignments(
   table: TargetTable,
@@ -43,12 +40,11 @@ export function assignments(
   );
   const { multiplicity } = table.ground.block;
   const allowed = open.filter((t) => table.targets[t]!.spinAllowed);
-  const first = solve(allowed);
-  if (first.some((solution) => isGood(solution, observations))) return first;
   const near = open.filter((t) => Math.abs(table.targets[t]!.block.multiplicity - multiplicity) <= 2);
-  return [...first, ...solve(near)];
+  return [...solve(allowed), ...(near.length > allowed.length ? solve(near) : [])];
 }
 
+/** The starts that are worth following. */
 function promising(all: readonly Start[], observations: readonly Observation[], usual: Usual): Start[] {
   if (all.length <= MOST_STARTS) return [...all];
   return all
@@ -56,10 +52,6 @@ function promising(all: readonly Start[], observations: readonly Observation[], 
     .sort((a, b) => a.score - b.score)
     .slice(0, MOST_STARTS)
     .map(({ start }) => start);
-}
-
-function isGood({ residuals }: Solution, observations: readonly Observation[]): boolean {
-  return observations.every(({ wavenumber }, i) => Math.abs(residuals[i]!) <= POOR * wavenumber);
 }
 
 /** Of levels that coincide at every field, such as 4A1 and the lowest 4E of d⁵, the first stands for all. */

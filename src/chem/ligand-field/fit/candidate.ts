@@ -3,6 +3,7 @@ import type { FreeIonRacah } from '../racah-b.ts';
 import type { FitRequest } from './fit.ts';
 import type { FitSpin } from './ground.ts';
 import { metricOf } from './metric.ts';
+import type { Plausibility } from './plausibility.ts';
 import type { Observation, Solution } from './solutions.ts';
 import { type TargetTable, targetName } from './targets.ts';
 
@@ -30,6 +31,8 @@ export interface FitCandidate {
   /** Bands less fitted parameters. */
   degreesOfFreedom: number;
   converged: boolean;
+  /** By which candidates are ranked, in squared standard deviations: residuals, unusual values, missing bands; low is good. */
+  score: number;
   /** What speaks against the candidate. */
   remarks: string[];
 }
@@ -40,7 +43,7 @@ export function candidateOf(
   table: TargetTable,
   { delta, B, C, fitted, fit: result, residuals, targets: ends }: Solution,
   observations: readonly Observation[],
-  remarks: string[],
+  { score, remarks }: Plausibility,
   freeIon: FreeIonRacah | null,
   ratioSource: FitCandidate['ratioSource'],
 ): FitCandidate {
@@ -81,6 +84,7 @@ export function candidateOf(
     ratioSource: fitted.includes('C') ? 'fitted' : ratioSource,
     degreesOfFreedom,
     converged: result.converged,
+    score,
     remarks,
   };
 }

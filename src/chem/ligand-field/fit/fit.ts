@@ -82,8 +82,8 @@ export function fit(request: FitRequest): Fit {
   const candidates = ranked
     .filter((one, i) => !ranked.slice(0, i).some((before) => isSame(before, one)))
     .slice(0, MOST_CANDIDATES)
-    .map(({ table, solution, remarks }) =>
-      candidateOf(request, table, solution, observations, remarks, freeIon, ratioSource),
+    .map(({ table, solution, ...worth }) =>
+      candidateOf(request, table, solution, observations, worth, freeIon, ratioSource),
     );
   return { candidates };
 }

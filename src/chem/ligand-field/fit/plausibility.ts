@@ -80,8 +80,10 @@ export function plausibility(
   const { B, C, delta } = solution;
   against(unusualB(B, usual), B === null ? undefined : remarkOnB(B, usual.freeIonB));
   against(unusualField(delta, usual));
-  const forbidden = solution.targets.filter(({ spinAllowed }) => !spinAllowed).length;
-  if (forbidden > 0) against(FORBIDDEN * forbidden);
+  // High-spin d⁵ has no spin-allowed band at all, so that its spin-forbidden ones show.
+  if (table.targets.some(({ spinAllowed }) => spinAllowed)) {
+    against(FORBIDDEN * solution.targets.filter(({ spinAllowed }) => !spinAllowed).length);
+  }
   if (delta === null || B === null || C === null) return { score, remarks };
 
   const strengths = { delta: table.sign * delta, B, C };

@@ -235,6 +235,23 @@ describe('candidates', () => {
     expect(candidates.some(({ remarks }) => remarks.length > 0)).toBe(true);
   });
 
+  // Bands and assignments of aqua and ammine ions as the textbooks print them: A. B. P. Lever, Inorganic Electronic
+  // Spectroscopy, 2nd ed., Elsevier 1984; B. N. Figgis, M. A. Hitchman, Wiley-VCH 2000 (from memory).
+  test.each([
+    ['Mn', 2, 5, [18_870, 23_120, 24_960, 27_980, 29_750], ['4T1g(G)', '4T2g(G)', '4A1g', '4T2g(D)', '4Eg(D)']],
+    ['Cr', 3, 3, [15_000, 17_400, 24_500, 37_800], ['2Eg', '4T2g', '4T1g(F)', '4T1g(P)']],
+    ['V', 3, 2, [17_200, 25_600, 36_000], ['3T2g', '3T1g(P)', '3A2g']],
+    ['Ni', 2, 8, [8500, 13_800, 15_300, 25_300], ['3T2g', '3T1g(F)', '1Eg', '3T1g(P)']],
+    ['Co', 3, 6, [13_000, 21_000, 29_500], ['3T1g', '1T1g', '1T2g']],
+  ] as const)(
+    '%s(%i), d%i: spin-forbidden bands among the others find their place',
+    (metal, oxidationState, n, bands, terms) => {
+      const asked = bands.map((wavenumber) => ({ wavenumber }));
+      const [best] = fit({ n, geometry: 'OC-6', metal, oxidationState, bands: asked }).candidates;
+      expect(best!.assignments.map(({ to }) => to)).toEqual(terms);
+    },
+  );
+
   test('the spin told decides the ground', () => {
     const bands = [{ wavenumber: 21_000 }, { wavenumber: 29_500 }];
     for (const spin of ['high', 'low'] as const) {
