@@ -88,15 +88,33 @@ export const VibrationsInput = z
     if (!input.sites) refuse('sites', 'Send geometry and sites, or coordinates');
     if (input.tolerance !== undefined) refuse('tolerance', 'A tolerance goes with coordinates');
   });
-export const SelectionInput = z.strictObject({
-  group: GroupSymbol,
-  from: z.string().min(1).max(30),
-  to: z.string().min(1).max(30),
-  vibrations: z
-    .array(z.strictObject({ irrep: Irrep, count: z.number().int().min(1).max(100) }))
-    .max(50)
-    .optional(),
-});
+const Links = z
+  .array(z.tuple([z.number().int(), z.number().int()]))
+  .max(12)
+  .describe('Pairs of sites, counted from 0, that a chelate ring joins');
+export const SelectionInput = z
+  .strictObject({
+    group: GroupSymbol,
+    from: z.string().min(1).max(30),
+    to: z.string().min(1).max(30),
+    vibrations: z
+      .array(z.strictObject({ irrep: Irrep, count: z.number().int().min(1).max(100) }))
+      .max(50)
+      .optional(),
+    skeleton: z
+      .strictObject({
+        geometry: z.string().min(1).max(10),
+        sites: z.array(z.string().min(1).max(40)).min(1).max(12),
+        links: Links.optional(),
+      })
+      .optional()
+      .describe('The actual skeleton, of that group, in place of vibrations'),
+  })
+  .superRefine(({ vibrations, skeleton }, context) => {
+    if (vibrations && skeleton) {
+      context.addIssue({ code: 'custom', path: ['skeleton'], message: 'Send vibrations or a skeleton, not both' });
+    }
+  });
 export const SelectionResult = z
   .looseObject({
     spinAllowed: z.boolean(),

@@ -7,8 +7,9 @@ import type { Term } from './term-label.ts';
 /** Irreps of the modes to try, and where they come from: the request, a plain skeleton, or nowhere. */
 export interface Modes {
   irreps: string[];
-  /** Polyhedral symbol of the plain skeleton; null when the modes were given, or there is none. */
+  /** The skeleton in words: a polyhedral symbol, with the sites of an actual one; null when there is none. */
   skeleton: string | null;
+  /** Whether the request named them, or a skeleton. */
   given: boolean;
 }
 
@@ -77,7 +78,9 @@ function vibronicSteps({ group, modes, rules: { operators, vibronic } }: Selecti
       `No plain skeleton stands for ${group.symbol}; without a list of vibrations, vibronic intensity is not judged.`,
     ];
   }
-  const source = modes.given ? 'the vibrations given' : `the vibrations of the plain ${modes.skeleton} skeleton`;
+  const plain = `the vibrations of the plain ${modes.skeleton} skeleton`;
+  const actual = modes.skeleton ? `the vibrations of the skeleton ${modes.skeleton}` : 'the vibrations given';
+  const source = modes.given ? actual : plain;
   return together(operators).map(({ members }) => {
     const lending = vibronic[members[0]!];
     const what = lending.length > 0 ? `those of ${lending.join(', ')} lend` : 'none lends';

@@ -6,7 +6,7 @@ import { type SelectionRules, selectionRules } from './selection-rules.ts';
 import { type Modes, selectionSteps } from './selection-steps.ts';
 import { plainSkeleton } from './skeletons.ts';
 import { readTerm, requireIrrep } from './term-label.ts';
-import { vibrations as vibrationsOf } from './vibrations.ts';
+import { type Skeleton, vibrations as vibrationsOf } from './vibrations.ts';
 
 /** A transition to be judged. */
 export interface SelectionRequest {
@@ -16,7 +16,9 @@ export interface SelectionRequest {
   from: string;
   to: string;
   /** Modes that may lend intensity; those of the group's plain skeleton when left out. */
-  vibrations?: readonly IrrepCount[];
+  vibrations?: readonly IrrepCount[] | undefined;
+  /** The actual skeleton, of the same group, whose modes may lend intensity; in place of `vibrations`. */
+  skeleton?: Skeleton | undefined;
 }
 
 /** What symmetry says about a transition, with the argument. */
@@ -33,7 +35,8 @@ export interface SelectionAnalysis extends SelectionRules {
 /**
  * Selection analysis of a transition between two terms.
  *
- * @throws DomainError `unknown-symbol` or `unreadable` on `group`, `from`, `to` or `vibrations`
+ * @throws DomainError `unknown-symbol` or `unreadable` on `group`, `from`, `to` or `vibrations`; `out-of-range` on
+ *   `skeleton` when it has another group, or as `vibrations`
  */
 export function selectionAnalysis(request: SelectionRequest): SelectionAnalysis {
   const group = findGroup(request.group);
@@ -46,7 +49,7 @@ export function selectionAnalysis(request: SelectionRequest): SelectionAnalysis 
   }
   const from = readTerm(group.symbol, request.from, 'from');
   const to = readTerm(group.symbol, request.to, 'to');
-  const modes = modesOf(group, request.vibrations);
+  const modes = request.skeleton ? modesOfSkeleton(group, request.skeleton) : modesOf(group, request.vibrations);
   const rules = selectionRules(group, from, to, modes.irreps);
   const epsilon = expectedEpsilon(rules);
   const lower = lowerGroups(group.symbol, from, to);
@@ -58,6 +61,19 @@ export function selectionAnalysis(request: SelectionRequest): SelectionAnalysis 
     lowerGroups: lower,
     steps: steps.map((step, i) => `${i + 1}. ${step}`),
   };
+}
+
+function modesOfSkeleton(group: PointGroup, skeleton: Skeleton): Modes {
+  const found = vibrationsOf(skeleton);
+  if (found.group !== group.symbol) {
+    throw new DomainError(
+      'out-of-range',
+      `The skeleton has the group ${found.group}; the terms are labelled in ${group.symbol}.`,
+      'skeleton',
+    );
+  }
+  const text = `${skeleton.geometry} (${skeleton.sites.join(' ')})`;
+  return { irreps: found.vibrations.map(({ irrep }) => irrep), skeleton: text, given: true };
 }
 
 function modesOf(group: PointGroup, given: readonly IrrepCount[] | undefined): Modes {

@@ -54,6 +54,18 @@ test('the plain skeleton of the group is used unless vibrations are given', () =
   expect(selectionAnalysis({ ...request, vibrations: [{ irrep: 'T1u', count: 0 }] }).mechanism).toBe('forbidden');
 });
 
+// F. A. Cotton, Chemical Applications of Group Theory, 3rd ed., 1990, §9.6: trans-[CoCl2(en)2]+ in D4h; from memory.
+test('modes of the actual skeleton: with axial ligands an A2u mode lends what the square plane lends as well', () => {
+  const request = { group: 'D4h', from: '1A1g', to: '1Eg' };
+  const skeleton = { geometry: 'OC-6', sites: [...'XXNNNN'] };
+  const found = selectionAnalysis({ ...request, skeleton });
+  expect(found.vibronic).toEqual({ x: ['A2u', 'B2u'], y: ['A2u', 'B2u'], z: ['Eu'] });
+  expect(found.steps.join(' ')).toContain('skeleton OC-6 (X X N N N N)');
+  expect(() => selectionAnalysis({ ...request, skeleton: { ...skeleton, sites: [...'NNNNNN'] } })).toThrowError(
+    expect.objectContaining({ code: 'out-of-range', field: 'skeleton' }),
+  );
+});
+
 // G. F. Koster et al., Properties of the Thirty-Two Point Groups, 1963; J. S. Griffith, The Theory of
 // Transition-Metal Ions, 1961; from memory.
 describe('spin–orbit mixing through the double group', () => {
