@@ -185,7 +185,7 @@ function fieldBands(
       epsilon: usualEpsilon({ ...siteOf(complex), kind: 'd-d', spinAllowed }),
     };
   });
-  const unpaired = ground.multiplicity - 1;
+  const unpaired = (ground.multiplicity ?? 1) - 1; // without spin–orbit coupling every level has one
   const spin = spinChoices(dCount, geometry).find((choice) => choice.unpaired === unpaired)?.spin ?? null;
   return { bands, ground: ground.label, spin };
 }
