@@ -4,8 +4,9 @@ import type { Database, Tx } from '#src/db/client.ts';
 import { mails } from '#src/db/schema/index.ts';
 import { newId, nowIso } from './ids.ts';
 import { log } from './log.ts';
+import { TOKEN_LINK_KINDS, withoutLinks } from './mail/secret-links.ts';
 import { oneLine } from './mail/templates.ts';
-import type { Settings } from './settings.ts';
+import { type Settings, settings } from './settings.ts';
 
 export interface MailToQueue {
   /** What makes it this one mail, such as `invitation:<id>`: a second mail of the same key is not queued. */
@@ -49,6 +50,15 @@ export type MailTransport = (
   mail: MailToQueue,
 ) => Promise<{ ok: true } | { ok: false; reason: string; final: boolean }>;
 
+/**
+ * The mail service's own client, which would follow a redirect wherever it leads and take the mail, with its key, along.
+ */
+class StrictResend extends Resend {
+  override fetchRequest<T>(path: string, options: object = {}) {
+    return super.fetchRequest<T>(path, { ...options, redirect: 'error' });
+  }
+}
+
 /** Transport over the mail service's own client. The key goes along as idempotency key: a repeat sends nothing twice. */
 export function resendTransport({
   apiKey,
@@ -59,7 +69,7 @@ export function resendTransport({
   baseUrl?: string;
   from: string;
 }): MailTransport {
-  const resend = new Resend(apiKey, baseUrl ? { baseUrl } : undefined);
+  const resend = new StrictResend(apiKey, baseUrl ? { baseUrl } : undefined);
   return async ({ key, to, subject, text, html }) => {
     const sent = resend.emails.send({ from, to, subject, text, html }, { idempotencyKey: key });
     const { error } = await within(sent, SEND_TIMEOUT_MS);
@@ -100,9 +110,15 @@ export async function openTransport({
  * Send what is due, oldest first. Each mail is claimed for a minute before it goes out: a process that dies in
  * between leaves it to be sent again under the same key.
  *
+ * @param keepLinks - whether links with a token in them stay in the table afterwards: in a demo, whose outbox shows them
  * @returns how many mails were tried
  */
-export async function sendDueMail(database: Database, send: MailTransport, now = Date.now): Promise<number> {
+export async function sendDueMail(
+  database: Database,
+  send: MailTransport,
+  now = Date.now,
+  keepLinks = settings().mode === 'demo',
+): Promise<number> {
   for (let tried = 0; ; tried++) {
     const mail = await claim(database, now());
     if (!mail) return tried;
@@ -111,10 +127,12 @@ export async function sendDueMail(database: Database, send: MailTransport, now =
       reason: String(error),
       final: false,
     }));
+    const after = outcome(mail.tries, result, now());
+    const emptied = keepLinks || after.state === 'queued' ? {} : withoutTokens(mail);
     await database.write((tx) =>
       tx
         .update(mails)
-        .set(outcome(mail.tries, result, now()))
+        .set({ ...after, ...emptied })
         .where(eq(mails.id, mail.id)),
     );
     if (!result.ok)
@@ -127,6 +145,10 @@ function outcome(tries: number, result: Awaited<ReturnType<MailTransport>>, now:
   if (result.final || tries >= MAIL_TRIES) return { state: 'failed' as const, error: result.reason };
   return { state: 'queued' as const, error: result.reason, nextAt: now + mailPause(tries) };
 }
+
+/** What is kept of a mail that holds a token and will not be sent any more. */
+const withoutTokens = ({ kind, text }: typeof mails.$inferSelect) =>
+  TOKEN_LINK_KINDS.has(kind) ? { text: withoutLinks(text, 'the link went out with the mail'), html: '' } : {};
 
 async function claim({ db, write }: Database, now: number): Promise<typeof mails.$inferSelect | undefined> {
   const due = and(eq(mails.state, 'queued'), lte(mails.nextAt, now));

@@ -1,11 +1,5 @@
 import { compose, type MailContent, mailDay, oneLine } from './templates.ts';
 
-/**
- * Kinds of mail whose link opens an account to whoever holds it. The outbox of a demo, which everybody at the machine
- * may read, shows them without it.
- */
-export const SECRET_LINK_KINDS: ReadonlySet<string> = new Set(['password-reset', 'address-change']);
-
 /** "1 December 2026, 09:05 UTC" of an ISO 8601 instant. */
 const minute = (iso: string) => `${mailDay(iso)}, ${iso.slice(11, 16)} UTC`;
 

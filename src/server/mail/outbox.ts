@@ -7,11 +7,13 @@ import { database } from '../database.ts';
 import { HttpError, notInSight } from '../http.ts';
 import { behind, cursorScope, cutPage, readCursor } from '../paging.ts';
 import { settings } from '../settings.ts';
-import { SECRET_LINK_KINDS } from './account-mails.ts';
+import { ACCOUNT_LINK_KINDS, withoutLinks } from './secret-links.ts';
+
+const LEFT_OUT = 'the link is left out here: whoever holds it could take the account over';
 
 /**
- * Mail of this registry, newest first, with the links in it; those that open an account are left out. In demo mode it is open to whoever sits at this machine,
- * since that mode listens nowhere else; in production there is no such thing.
+ * Mail of this registry, newest first, with the links in it; those that open an account are left out. In demo mode it
+ * is open to whoever sits at this machine, since that mode listens nowhere else; in production there is no such thing.
  *
  * @throws {HttpError} 404 in production mode, 403 by access token
  */
@@ -42,10 +44,7 @@ const toRecord = ({ id, kind, to, subject, text, state, createdAt }: typeof mail
   kind,
   to,
   subject,
-  text: SECRET_LINK_KINDS.has(kind) ? withoutLinks(text) : text,
+  text: ACCOUNT_LINK_KINDS.has(kind) ? withoutLinks(text, LEFT_OUT) : text,
   state,
   createdAt,
 });
-
-const withoutLinks = (text: string) =>
-  text.replace(/https?:\/\/\S+/g, '(the link is left out here: whoever holds it could take the account over)');

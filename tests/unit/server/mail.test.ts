@@ -1,4 +1,6 @@
-import { afterEach, beforeEach, expect, test } from 'vitest';
+import { createServer } from 'node:http';
+import type { AddressInfo } from 'node:net';
+import { afterEach, beforeEach, describe, expect, test } from 'vitest';
 import { type MailService, startMailService } from '#fakes/mail.ts';
 import type { Database } from '#src/db/client.ts';
 import { mails } from '#src/db/schema/index.ts';
@@ -113,6 +115,61 @@ test('gives up after so many tries, and at once where the mail itself is refused
     tries: 1,
     error: 'validation_error: told to fail',
   });
+});
+
+describe('a mail whose link opens something', () => {
+  const secret = {
+    ...mail('a'),
+    kind: 'password-reset',
+    text: 'Choose: https://zaffre.example/reset#s3cret-token',
+    html: '<a href="https://zaffre.example/reset#s3cret-token">Choose</a>',
+  };
+  const queueSecret = () => database.write((tx) => queueMail(tx, secret));
+  const kept = async () => (await database.db.select().from(mails))[0]!;
+
+  test('is kept without it once it was sent or given up, and with it as long as it waits', async () => {
+    await queueSecret();
+    service.failNext(1, 503);
+    const at = Date.now();
+    await sendDueMail(database, send, () => at, false);
+    expect(await kept()).toMatchObject({ state: 'queued', text: secret.text });
+    await sendDueMail(database, send, () => at + mailPause(1), false);
+    expect(service.sent[0]).toMatchObject({ text: secret.text, html: secret.html });
+    expect(await kept()).toMatchObject({ state: 'sent', text: 'Choose: (the link went out with the mail)', html: '' });
+
+    await database.write((tx) => queueMail(tx, { ...secret, key: 'b' }));
+    service.failNext(1, 422, 'validation_error');
+    await sendDueMail(database, send, Date.now, false);
+    expect(JSON.stringify(await database.db.select().from(mails))).not.toContain('s3cret-token');
+  });
+
+  test('keeps it in a demo, whose outbox shows the mail; other mails stay as they are', async () => {
+    await queueSecret();
+    await sendDueMail(database, send);
+    expect((await kept()).text).toBe(secret.text);
+    await queue('c');
+    await sendDueMail(database, send, Date.now, false);
+    expect((await database.db.select().from(mails)).at(-1)).toMatchObject({ state: 'sent', text: 'text' });
+  });
+});
+
+test('a redirect of the mail service is not followed', async () => {
+  const asked: string[] = [];
+  const server = createServer((request, response) => {
+    asked.push(request.url ?? '');
+    response.writeHead(308, { location: `${service.baseUrl}/emails` }).end();
+  });
+  await new Promise<void>((resolve) => server.listen(0, '127.0.0.1', resolve));
+  const { port } = server.address() as AddressInfo;
+  const astray = resendTransport({
+    apiKey: 'key',
+    baseUrl: `http://127.0.0.1:${port}`,
+    from: 'Zaffre <z@demo.example>',
+  });
+  expect(await astray(mail('a'))).toMatchObject({ ok: false, final: false });
+  expect(asked).toEqual(['/emails']);
+  expect(service.sent).toEqual([]);
+  server.close();
 });
 
 test('refuses an address that is more than one', async () => {
