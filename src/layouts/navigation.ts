@@ -12,6 +12,7 @@ const ITEMS: readonly NavigationItem[] = [
   { href: '/complexes', label: 'Complexes', forGuests: true },
   { href: '/spectra', label: 'Spectra', forGuests: false },
   { href: '/ligands', label: 'Ligands', forGuests: false },
+  { href: '/symmetry', label: 'Symmetry', forGuests: true },
   { href: '/folios', label: 'Folios', forGuests: true },
   { href: '/labs', label: 'Labs', forGuests: false },
   { href: '/people', label: 'People', forGuests: false, forStewards: true },

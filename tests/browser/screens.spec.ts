@@ -5,8 +5,18 @@ import { expect, signIn, test } from './people.ts';
 // (axe, WCAG 2.2 AA rules), no sideways scrolling of the page, no complaint in the console.
 
 const RULES = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
-const MEMBER = ['/', '/complexes', '/complexes/new', '/spectra', '/ligands', '/folios', '/labs', '/api-reference'];
-const GUEST = ['/', '/complexes', '/folios'];
+const MEMBER = [
+  '/',
+  '/complexes',
+  '/complexes/new',
+  '/spectra',
+  '/ligands',
+  '/symmetry',
+  '/folios',
+  '/labs',
+  '/api-reference',
+];
+const GUEST = ['/', '/complexes', '/symmetry', '/folios'];
 
 const people = [
   { who: 'nobody', email: null, paths: ['/signin', '/outbox', '/join', '/reset', '/confirm-address'] },

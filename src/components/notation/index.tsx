@@ -2,6 +2,16 @@ import { formulaLabel, parseFormula } from './formula.ts';
 import { ABSENT, oxidationStateText, parseQuantity, parseUnit, type QuantityInput, unitLabel } from './quantity.ts';
 import { Runs } from './Runs.tsx';
 import { runsToText } from './runs.ts';
+import {
+  functionLabel,
+  operationLabel,
+  parseCharacter,
+  parseFunction,
+  parseIrrep,
+  parseOperation,
+  parseSum,
+  sumLabel,
+} from './symmetry.ts';
 import { parseConfiguration, parseDCount, parsePointGroup, parseTerm, parseTransition, termLabel } from './term.ts';
 
 interface Styled {
@@ -18,9 +28,29 @@ export function Term({ term, className }: Styled & { term: string }) {
   return <Runs runs={parseTerm(term)} label={termLabel(term)} className={className} />;
 }
 
-/** An irreducible representation: `T2g`, `A1'`, `E''`, `Pi_u`. */
+/** An irreducible representation: `T2g`, `A1'`, `E''`, `Pi_u`, `Γ8+`. */
 export function Irrep({ irrep, className }: Styled & { irrep: string }) {
-  return <Term term={irrep} className={className} />;
+  return <Runs runs={parseIrrep(irrep)} label={termLabel(irrep)} className={className} />;
+}
+
+/** A direct sum of irreps: A1g + 2T2g. */
+export function IrrepSum({ terms, className }: Styled & { terms: readonly { irrep: string; count: number }[] }) {
+  return <Runs runs={parseSum(terms)} label={sumLabel(terms)} className={className} />;
+}
+
+/** A class of symmetry operations: `C4^3`, `sigma_h`, `C2''`. */
+export function Operation({ label, className }: Styled & { label: string }) {
+  return <Runs runs={parseOperation(label)} label={operationLabel(label)} className={className} />;
+}
+
+/** A function of the coordinates: `x2-y2`, `Rz`. */
+export function CoordinateFunction({ name, className }: Styled & { name: string }) {
+  return <Runs runs={parseFunction(name)} label={functionLabel(name)} className={className} />;
+}
+
+/** A character: an integer, a root, a multiple of a cosine. */
+export function Character({ value, className }: Styled & { value: number | string }) {
+  return <Runs runs={parseCharacter(value)} className={className} />;
 }
 
 /** The symbol of a point group: `Oh`, `D4h`, `Cinfv`. */

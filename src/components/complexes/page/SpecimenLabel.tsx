@@ -3,8 +3,9 @@ import type { LigandReading } from '#src/chem/formula/index.ts';
 import { drawPolyhedron, findGeometry } from '#src/chem/geometry/index.ts';
 import { Cuvette } from '#src/components/marks/Cuvette.tsx';
 import { Polyhedron } from '#src/components/marks/Polyhedron.tsx';
-import { DCount, Formula, OxidationState, PointGroup, Quantity, Term } from '#src/components/notation/index.tsx';
+import { DCount, Formula, OxidationState, Quantity } from '#src/components/notation/index.tsx';
 import { CopyButton } from '#src/components/spectra/bands/CopyButton.tsx';
+import { GroupLink, TermLink } from '#src/components/symmetry/GroupLink.tsx';
 import { Facts } from '#src/components/ui/Panel.tsx';
 import type { ComplexRecord } from '#src/contracts/complexes.ts';
 import { longDescriptor, prefixedFormula } from '../prefixed-formula.ts';
@@ -99,7 +100,7 @@ function Looks({ complex, ligands }: SpecimenLabelProps) {
 }
 
 function Identity({ complex }: { complex: ComplexRecord }) {
-  const { centres, ligands, isomer, pointGroup, donorSetGroup, siblings } = complex;
+  const { centres, ligands, isomer, pointGroup, donorSetGroup, effectiveGroup, siblings } = complex;
   const kinds = centreKinds(centres);
   const several = kinds.length > 1;
   return (
@@ -112,11 +113,17 @@ function Identity({ complex }: { complex: ComplexRecord }) {
             'not known: isomer not stated'
           ) : (
             <span key="g">
-              <PointGroup group={pointGroup} /> <span className="text-ink-soft">framework</span>
+              <GroupLink group={pointGroup} /> <span className="text-ink-soft">framework</span>
               {donorSetGroup && (
                 <>
                   {', '}
-                  <PointGroup group={donorSetGroup} /> <span className="text-ink-soft">donor set</span>
+                  <GroupLink group={donorSetGroup} /> <span className="text-ink-soft">donor set</span>
+                </>
+              )}
+              {effectiveGroup && (
+                <>
+                  {', '}
+                  <GroupLink group={effectiveGroup} /> <span className="text-ink-soft">effective</span>
                 </>
               )}
             </span>
@@ -197,8 +204,8 @@ function centreFacts(centre: ComplexRecord['centres'][number], count: number, se
     groundTerm && [
       'Ground term',
       <span key="t">
-        <Term term={groundTerm.label} /> <span className="text-ink-soft">in</span>{' '}
-        <PointGroup group={groundTerm.group} />
+        <TermLink term={groundTerm.label} group={groundTerm.group} /> <span className="text-ink-soft">in</span>{' '}
+        <GroupLink group={groundTerm.group} />
       </span>,
     ],
   ];

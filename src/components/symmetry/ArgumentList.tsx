@@ -1,0 +1,31 @@
+import { Check, Waves, X } from 'lucide-react';
+import type { ArgumentLine } from './argument.ts';
+import { Pieces } from './Pieces.tsx';
+
+const SIGNS = {
+  allowed: { Icon: Check, word: 'allowed', looks: 'text-attest' },
+  forbidden: { Icon: X, word: 'forbidden', looks: 'text-alert' },
+  lent: { Icon: Waves, word: 'lends intensity', looks: 'text-zaffre' },
+} as const;
+
+/** The numbered argument. A sign beside a step says which way it points; the sentence says so, too. */
+export function ArgumentList({ lines }: { lines: readonly ArgumentLine[] }) {
+  return (
+    <ol className="flex flex-col gap-1.5">
+      {lines.map(({ topic, verdict, pieces }, i) => {
+        const sign = verdict && SIGNS[verdict];
+        return (
+          <li key={i} className="grid grid-cols-[22px_minmax(0,1fr)_16px] gap-x-1.5">
+            <span className="font-semibold text-zaffre tabular-nums" aria-hidden="true">
+              {i + 1}
+            </span>
+            <span className="max-w-[72ch]">
+              <span className="font-medium">{topic}:</span> <Pieces pieces={pieces} />
+            </span>
+            {sign && <sign.Icon aria-hidden="true" size={14} className={`mt-[3px] ${sign.looks}`} />}
+          </li>
+        );
+      })}
+    </ol>
+  );
+}
