@@ -1,3 +1,5 @@
+import { leaveNothing, watchSignOut } from '../components/ui/signed-out.ts';
+
 /** What every page does besides its islands: the theme switch, signing out, closing the menu. */
 
 const YEAR = 365 * 24 * 3600;
@@ -27,6 +29,7 @@ async function signOut() {
     headers: { 'x-auth-return-redirect': '1' },
     body: new URLSearchParams({ csrfToken, callbackUrl: '/signin' }),
   });
+  leaveNothing();
   location.assign('/signin');
 }
 
@@ -51,3 +54,4 @@ document.addEventListener('keydown', (event) => {
   if (open?.contains(document.activeElement)) open.querySelector('summary')?.focus();
 });
 nameSwitches();
+watchSignOut();

@@ -1,4 +1,5 @@
 import { readProblem, unreachable } from '../ui/problem-error.ts';
+import { leaveNothing } from '../ui/signed-out.ts';
 
 /** Why a sign-in was refused, in words. One sentence for an unknown address and for a wrong password. */
 export function signInFault(error: string | null, code: string | null): string | null {
@@ -68,4 +69,5 @@ export async function signIn(
 /** End the session of this browser. @throws {ProblemError} */
 export async function signOut(): Promise<void> {
   await send('/api/auth/signout', { callbackUrl: '/signin' });
+  leaveNothing();
 }

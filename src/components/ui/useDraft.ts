@@ -1,10 +1,9 @@
 import { useCallback, useEffect, useState } from 'react';
-
-const KEY = 'zaffre-draft:';
+import { accountOfPage, draftName } from './draft-store.ts';
 
 function read<T>(key: string): T | undefined {
   try {
-    const kept = sessionStorage.getItem(KEY + key);
+    const kept = sessionStorage.getItem(draftName(accountOfPage(), key));
     return kept === null ? undefined : (JSON.parse(kept) as T);
   } catch {
     return undefined; // storage may be forbidden, or hold what an older page wrote
@@ -12,7 +11,8 @@ function read<T>(key: string): T | undefined {
 }
 
 /**
- * What was typed into a form, kept for this tab so that it survives a reload. Never for passwords or tokens.
+ * What was typed into a form, kept for this tab and this account so that it survives a reload and a session that ran
+ * out; signing out takes it away (`signed-out.ts`). Never for passwords or tokens.
  *
  * The first drawing shows `initial`, as the server did; what was kept appears right after.
  */
@@ -28,7 +28,7 @@ export function useDraft<T extends object>(key: string, initial: T) {
       setDraft((now) => {
         const next = { ...now, ...part };
         try {
-          sessionStorage.setItem(KEY + key, JSON.stringify(next));
+          sessionStorage.setItem(draftName(accountOfPage(), key), JSON.stringify(next));
         } catch {
           // Without storage the text lives as long as the page.
         }
@@ -38,7 +38,7 @@ export function useDraft<T extends object>(key: string, initial: T) {
   );
   const clear = useCallback(() => {
     try {
-      sessionStorage.removeItem(KEY + key);
+      sessionStorage.removeItem(draftName(accountOfPage(), key));
     } catch {
       // Nothing was kept.
     }
