@@ -34,6 +34,7 @@ export function JoinForm({ signedInAs, today }: Props) {
   return (
     <div className="flex flex-col gap-5">
       <Offer preview={preview} />
+      {!preview.folio && <Recorded />}
       <Step preview={preview} signedInAs={signedInAs} today={today} join={join} />
     </div>
   );
@@ -53,6 +54,16 @@ function Offer({ preview }: { preview: InvitationPreview }) {
         ['Link works', `until ${longDay(preview.expiresAt)}`],
       ]}
     />
+  );
+}
+
+/** What guests are told by their terms. */
+function Recorded() {
+  return (
+    <p className="text-ink-soft">
+      The registry records, with the day, which records you open and which files you download. Stewards can see it, and
+      so can the leads of the lab whose records they are.
+    </p>
   );
 }
 
