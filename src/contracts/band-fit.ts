@@ -14,6 +14,14 @@ const Component = z.strictObject({
     .optional(),
 });
 
+/** Points of a band at 20 000 cm⁻¹. */
+const EXAMPLE = {
+  x: [16_000, 17_000, 18_000, 19_000, 20_000, 21_000, 22_000, 23_000],
+  y: [0.4, 3.4, 15.8, 39.7, 54, 39.7, 15.8, 3.4],
+  count: 1,
+  edge: false,
+};
+
 export const BandFitInput = z
   .strictObject({
     x: z.array(z.number().min(0).max(1e6)).min(8).max(MOST_POINTS).describe('cm⁻¹, any order'),
@@ -29,7 +37,7 @@ export const BandFitInput = z
     start: z.array(Component).min(1).max(20).optional().describe('Components to begin with, kept in number'),
   })
   .refine(({ x, y }) => x.length === y.length, { message: 'x and y have not the same length', path: ['y'] })
-  .meta({ id: 'BandFitInput' });
+  .meta({ id: 'BandFitInput', example: EXAMPLE });
 
 const error = z.number().nullable().describe('Standard error; null where the data do not give it');
 

@@ -11,7 +11,10 @@ export const ChargeTransferInput = z
     delta: z.number().positive().max(100_000).optional().describe('cm⁻¹'),
     B: z.number().positive().max(2000).optional().describe('cm⁻¹'),
   })
-  .meta({ id: 'ChargeTransferInput' });
+  .meta({
+    id: 'ChargeTransferInput',
+    example: { element: 'Cr', oxidationState: 3, geometry: 'OC-6', ligands: ['Cl', 'NH3'] },
+  });
 
 export const ChargeTransferResult = z
   .looseObject({

@@ -48,7 +48,7 @@ export const MemberInvitation = z
     expires: Expiry.optional().describe('When the link stops working, at most 14 days from now'),
   })
   .refine(oneOrMany, NEITHER)
-  .meta({ id: 'MemberInvitation' });
+  .meta({ id: 'MemberInvitation', example: { email: 'partner@example.org', role: 'contributor' } });
 export type MemberInvitation = z.infer<typeof MemberInvitation>;
 
 export const GuestInvitation = z
@@ -58,7 +58,7 @@ export const GuestInvitation = z
     expires: Expiry.optional().describe('End of the access given; a year from now unless told'),
   })
   .refine(oneOrMany, NEITHER)
-  .meta({ id: 'GuestInvitation' });
+  .meta({ id: 'GuestInvitation', example: { email: 'partner@example.org', level: 'view' } });
 export type GuestInvitation = z.infer<typeof GuestInvitation>;
 
 export const InvitationsSent = z

@@ -48,7 +48,8 @@ export const VibrationsInput = z
     if (!input.geometry) refuse('geometry', 'Send geometry and sites, or coordinates');
     if (!input.sites) refuse('sites', 'Send geometry and sites, or coordinates');
     if (input.tolerance !== undefined) refuse('tolerance', 'A tolerance goes with coordinates');
-  });
+  })
+  .meta({ id: 'VibrationsInput', example: { geometry: 'OC-6', sites: ['A', 'A', 'A', 'A', 'A', 'A'] } });
 export const SelectionInput = z
   .strictObject({
     group: GroupSymbol,

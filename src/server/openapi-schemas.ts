@@ -28,10 +28,14 @@ export class SchemaCollector {
     // A part that JSON Schema cannot tell (a check in code) is told by its description alone.
     const { $schema: _, $defs = {}, ...root } = z.toJSONSchema(schema, { io, unrepresentable: 'any' }) as Json;
     for (const [id, part] of Object.entries($defs as Record<string, Json>))
-      this.components[nameOf(id)] = renamed(part, nameOf) as Json;
-    return renamed(root, nameOf) as Json;
+      this.components[nameOf(id)] = renamed(withExamples(part), nameOf) as Json;
+    return renamed(withExamples(root), nameOf) as Json;
   }
 }
+
+/** `example` of a contract's meta, in the form of JSON Schema; zod drops `examples` wherever something is transformed. */
+const withExamples = ({ example, ...part }: Json): Json =>
+  example === undefined ? part : { ...part, examples: [example] };
 
 /** References moved from the schema's own definitions to the components of the document. */
 function renamed(value: unknown, nameOf: (id: string) => string): unknown {

@@ -5,6 +5,8 @@ export interface Schema {
   description?: string;
   enum?: unknown[];
   const?: unknown;
+  /** A value that fits, where rules between fields keep one from being made up. */
+  examples?: unknown[];
   format?: string;
   properties?: Record<string, Schema>;
   required?: string[];

@@ -28,6 +28,7 @@ export function exampleOf(document: OpenApi, schema: Schema, field = '', depth =
     const target = document.components.schemas[name];
     return target && depth < DEEPEST ? exampleOf(document, target, field, depth + 1) : {};
   }
+  if (schema.examples?.length) return schema.examples[0];
   if (schema.const !== undefined) return schema.const;
   if (Array.isArray(INVENTED[field]) && schema.type === 'array') return INVENTED[field];
   if (schema.enum) return schema.enum[0];
