@@ -6,6 +6,7 @@ import { withCaller } from './server/accounts/caller.ts';
 import { problem, tooLarge, toProblem } from './server/http.ts';
 import { log } from './server/log.ts';
 import { servedMethods } from './server/served-methods.ts';
+import { SESSION_COOKIE } from './server/session-cookie.ts';
 import { isLoopback, settings } from './server/settings.ts';
 import { startBackground } from './server/start.ts';
 import { touchToken } from './server/tokens/last-used.ts';
@@ -13,7 +14,6 @@ import { touchToken } from './server/tokens/last-used.ts';
 if (process.env.ZAFFRE_SERVE === '1') startBackground();
 
 const UNSAFE = new Set(['POST', 'PUT', 'PATCH', 'DELETE']);
-const SESSION_COOKIE = /(?:^|;\s*)(?:__Secure-)?authjs\.session-token(?:\.\d+)?=/;
 
 /** Origins under which this server may be asked: the public one, and in demo mode every name of this machine. */
 function ownOrigin(url: URL): boolean {

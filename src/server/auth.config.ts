@@ -3,6 +3,7 @@ import Credentials from '@auth/core/providers/credentials';
 import { defineConfig } from 'auth-astro';
 import { endedSignIn, SignInRefused, signIn } from './accounts/sign-in.ts';
 import { log } from './log.ts';
+import { signInCookies } from './session-cookie.ts';
 import { SESSION_LIFE_MS } from './sessions.ts';
 import { settings } from './settings.ts';
 
@@ -36,6 +37,7 @@ async function authorize(given: Partial<Record<string, unknown>>, request: Reque
 export default defineConfig({
   secret: settings().authSecret,
   trustHost: true,
+  ...signInCookies(settings().publicOrigin),
   session: { strategy: 'jwt', maxAge: SESSION_LIFE_MS / 1000 },
   pages: { signIn: '/signin', error: '/signin' },
   providers: [Credentials({ credentials: { email: {}, password: {}, code: {}, passkey: {} }, authorize })],

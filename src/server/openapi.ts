@@ -125,7 +125,8 @@ export function openApiDocument(): Json {
           type: 'apiKey',
           in: 'cookie',
           name: 'authjs.session-token',
-          description: 'Set by sign-in. Requests that write need an Origin or Sec-Fetch-Site that is our own.',
+          description:
+            'Set by sign-in; over https its name begins with __Host-. Requests that write need an Origin or Sec-Fetch-Site that is our own.',
         },
         token: {
           type: 'http',

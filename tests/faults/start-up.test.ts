@@ -134,10 +134,10 @@ describe('production', () => {
     const browser = new Browser(server, proxy);
     const answer = await browser.signIn('first@lab.example', 'a long enough pass phrase', '/complexes', ORIGIN);
     expect(answer.headers.location).toBe(`${ORIGIN}/complexes`);
-    const session = answer.headers['set-cookie']!.find((line) => line.startsWith('__Secure-authjs.session-token='));
+    const session = answer.headers['set-cookie']!.find((line) => line.startsWith('__Host-authjs.session-token='));
     expect(session).toMatch(/; Secure/);
     expect(session).toMatch(/; HttpOnly/);
-    expect([...browser.cookies.keys()].every((name) => /^__(?:Secure|Host)-/.test(name))).toBe(true);
+    expect([...browser.cookies.keys()].every((name) => name.startsWith('__Host-'))).toBe(true);
     expect(JSON.parse((await browser.send('/api/health')).text)).toHaveProperty('parts.database', 'ok');
     const write = (origin: string) =>
       browser.send('/api/labs', {
