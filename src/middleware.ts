@@ -4,6 +4,7 @@ import { getSession } from 'auth-astro/server';
 import { type Asker, askerOfSession, askerOfToken } from './server/access/asker.ts';
 import { withCaller } from './server/accounts/caller.ts';
 import { problem, tooLarge, toProblem } from './server/http.ts';
+import { clientAddress } from './server/limits/client-address.ts';
 import { log } from './server/log.ts';
 import { servedMethods } from './server/served-methods.ts';
 import { SESSION_COOKIE } from './server/session-cookie.ts';
@@ -13,6 +14,8 @@ import { touchToken } from './server/tokens/last-used.ts';
 
 if (process.env.ZAFFRE_SERVE === '1') startBackground();
 
+/** Not signed in, not allowed, another host, too many: what an attack would meet. */
+const REFUSED = new Set([401, 403, 421, 429]);
 const UNSAFE = new Set(['POST', 'PUT', 'PATCH', 'DELETE']);
 
 /** Origins under which this server may be asked: the public one, and in demo mode every name of this machine. */
@@ -142,13 +145,18 @@ export const onRequest = defineMiddleware(async (context, next) => {
   };
 
   const response = withHeaders(await answer(), isApi, requestId);
-  log.info({
+  const { status } = response;
+  const entry = {
     requestId,
     method: request.method,
     path: url.pathname,
-    status: response.status,
+    status,
     ms: Math.round(performance.now() - started),
     account: locals.asker?.accountId,
-  });
+    tokenId: locals.asker?.tokenId ?? undefined,
+  };
+  // Of what was refused the place is told, too, since that may be an attack.
+  if (REFUSED.has(status)) log.warn({ ...entry, address: clientAddress(context) }, 'request refused');
+  else log.info(entry);
   return response;
 });
