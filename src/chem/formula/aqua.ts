@@ -66,6 +66,8 @@ function withWater(salt: RawSalt, entity: RawEntity, waters: number, halidesOut:
     mu: null,
     hapticity: null,
     donors: aqua.donors,
+    denticity: null,
+    typed: 'H2O',
     known: true,
     start: entity.start,
   };

@@ -12,7 +12,8 @@ export interface EntityFrame {
 
 /** An entity from its parts in the order written: flat sums, fragments, and bridges seen from the order. */
 export function assembleEntity(written: readonly Part[], frame: EntityFrame): RawEntity {
-  const parts = linearFragments(written) ?? written;
+  const parts = linearFragments(written) ?? bridgedOligomer(written, frame) ?? holdTogether(written);
+  const oligomer = parts.length === 1 && parts[0]!.kind === 'fragment' && written.length > 1;
   const fragments = parts.flatMap((part) => (part.kind === 'fragment' ? [part.fragment] : []));
   const metals = [
     ...parts.flatMap((part) => (part.kind === 'metal' ? [part.metal] : [])),
@@ -25,11 +26,32 @@ export function assembleEntity(written: readonly Part[], frame: EntityFrame): Ra
   const alone = metals.reduce((sum, metal) => sum + metal.count, 0) === 1;
   return {
     ...frame,
+    count: oligomer ? 1 : frame.count,
     metals: mergeMetals(metals),
     // A bridge needs two ends: μ written in a mononuclear entity is kept in the text only.
     ligands: mergeLigands(alone ? ligands.map((l) => ({ ...l, mu: null })) : ligands),
     fragments: mergeFragments(fragments),
   };
+}
+
+/** `[Ir(ppy)2(μ-Cl)]2`: where a mononuclear part names its bridge, the count behind it is that of one molecule. */
+function bridgedOligomer(parts: readonly Part[], frame: EntityFrame): Part[] | null {
+  const metals = parts.flatMap((part) => (part.kind === 'metal' ? [part.metal] : []));
+  const ligands = ligandsOf(parts);
+  const single = metals.length === 1 && metals[0]!.count === 1 && metals.length + ligands.length === parts.length;
+  if (!single || frame.count < 2 || !Number.isInteger(frame.count) || ligands.every((l) => l.mu === null)) return null;
+  return [{ kind: 'fragment', fragment: { metals, ligands, count: frame.count } }];
+}
+
+/** What stands between fragments and can hold two centres does so: `{Ru(NH3)5}2(pyz)`. */
+function holdTogether(parts: readonly Part[]): readonly Part[] {
+  const centres = parts.reduce((sum, part) => sum + (part.kind === 'fragment' ? part.fragment.count : 0), 0);
+  if (centres !== 2 || parts.some((part) => part.kind === 'metal')) return parts;
+  return parts.map((part) =>
+    part.kind === 'ligand' && part.ligand.ligand.canBridge && part.ligand.mu === null
+      ? { kind: 'ligand', ligand: { ...part.ligand, mu: 2 } }
+      : part,
+  );
 }
 
 /**
@@ -63,8 +85,16 @@ export function ligandKey(ligand: RawLigand): string {
   const { abbreviation, hapticity, donors } = ligand.ligand;
   const mu = ligand.mu === null ? '' : `μ${ligand.mu === 2 ? '' : ligand.mu}-`;
   const eta = ligand.hapticity === hapticity ? '' : `η${ligand.hapticity}-`;
-  const kappa = ligand.donors.join() === donors.join() ? '' : `-κ${ligand.donors.join('')}`;
+  const kappa = ligand.donors.join() !== donors.join() ? `-κ${ligand.donors.join('')}` : kappaText(ligand);
   return `${mu}${eta}${abbreviation}${kappa}`;
+}
+
+/** `-κO`, `-κ2O,O′`: the donors used, where they were stated and the sphere does not imply them. */
+function kappaText({ denticity, donors }: RawLigand): string {
+  if (denticity === null) return '';
+  const used = donors.slice(0, denticity);
+  const marked = used.map((atom, i) => atom + '′'.repeat(used.slice(0, i).filter((one) => one === atom).length));
+  return `-κ${denticity === 1 ? '' : denticity}${marked.join(',')}`;
 }
 
 function merge<T extends { count: number }>(all: readonly T[], keyOf: (one: T) => string): T[] {

@@ -12,6 +12,8 @@ export interface Context {
   library: LigandIndex;
   answers: Answers;
   ask(question: Question): void;
+  /** The code of a doubt at a place of the text: plain for the first place it comes up at, then `code:2`, `code:3`. */
+  codeAt(code: string, start: number): string;
 }
 
 /** Content of an entity in the order written. */
@@ -20,23 +22,40 @@ export type Part =
   | { kind: 'ligand'; ligand: RawLigand }
   | { kind: 'fragment'; fragment: Fragment };
 
-const PREFIX = /^(?:(?:μ|mu)_?(\d?)|(?:η|eta|h)\^?(\d{1,2}))-/;
+const PREFIX =
+  /^(?:(?:μ|mu)_?\^?(\d?)|(?:η|eta|h)\^?(\d{1,2})|(?:κ|kappa)\^?(\d?)((?:[A-Z][a-z]?[′″]*,?(?:κ(?=[A-Z]))?)*))-/;
+const SUFFIX = /-κ\^?(\d?)((?:[A-Z][a-z]?[′″]*,?(?:κ(?=[A-Z]))?)+)$/;
+
+/** Donor atoms that a κ names: how many, and the symbol of the first where one is given. */
+interface Kappa {
+  count: number;
+  atom: string | null;
+}
 
 interface Marks {
   mu: number | null;
   hapticity: number | null;
+  kappa: Kappa | null;
+}
+
+const NO_MARKS: Marks = { mu: null, hapticity: null, kappa: null };
+
+/** `κ2`, `κO`, `κ2O,O′`, `κN,κO`: a number, else as many as atoms are named. */
+function kappaOf(digits: string, atoms: string): Kappa {
+  const named = atoms.match(/[A-Z][a-z]?/g) ?? [];
+  return { count: digits === '' ? Math.max(1, named.length) : Number(digits), atom: named[0] ?? null };
 }
 
 /** The metals, ligands and fragments written in the brackets of an entity (or in an unbracketed formula). */
 export function interpretParts(items: readonly Item[], context: Context): Part[] {
   const parts: Part[] = [];
-  let marks: Marks = { mu: null, hapticity: null };
+  let marks = NO_MARKS;
   for (const item of items) {
     if (item.kind === 'run') {
       marks = interpretRun(item.text, item.start, marks, parts, context);
     } else {
       parts.push(...interpretGroup(item, marks, context));
-      marks = { mu: null, hapticity: null };
+      marks = NO_MARKS;
     }
   }
   return parts;
@@ -47,9 +66,10 @@ function readMarks(text: string, before: Marks): { marks: Marks; length: number 
   let length = 0;
   const marks = { ...before };
   for (let match = PREFIX.exec(text); match; match = PREFIX.exec(text.slice(length))) {
-    const [whole, mu, eta] = match;
-    if (eta === undefined) marks.mu = mu ? Number(mu) : 2;
-    else marks.hapticity = Number(eta);
+    const [whole, mu, eta, kappa, atoms] = match;
+    if (eta !== undefined) marks.hapticity = Number(eta);
+    else if (kappa !== undefined) marks.kappa = kappaOf(kappa, atoms ?? '');
+    else marks.mu = mu ? Number(mu) : 2;
     length += whole.length;
   }
   return { marks, length };
@@ -76,11 +96,12 @@ function interpretRun(text: string, start: number, before: Marks, parts: Part[],
     const digits = /^\d+/.exec(text.slice(i + found.length))?.[0] ?? '';
     const count = digits === '' ? 1 : countOf(digits, context.source, start + i + found.length);
     if ('ligand' in found.value) {
-      parts.push({ kind: 'ligand', ligand: rawLigand(found.value.ligand, count, marks, start + i, null) });
+      const typed = text.slice(i, i + found.length);
+      parts.push({ kind: 'ligand', ligand: rawLigand(found.value.ligand, typed, count, marks, start + i, context) });
     } else {
       parts.push({ kind: 'metal', metal: { element: found.value.element, count, start: start + i } });
     }
-    marks = { mu: null, hapticity: null };
+    marks = NO_MARKS;
     i += found.length + digits.length;
   }
   return marks;
@@ -88,19 +109,26 @@ function interpretRun(text: string, start: number, before: Marks, parts: Part[],
 
 function interpretGroup(group: Group, before: Marks, context: Context): Part[] {
   if (group.charge !== null) throw chargeInside(context, group.start);
-  const { marks, length } = readMarks(group.inner, before);
-  const suffix = /-κ\^?\d*([A-Z][a-z]?)\S*$/.exec(group.inner);
+  const { marks: read, length } = readMarks(group.inner, before);
+  const suffix = SUFFIX.exec(group.inner);
   const name = group.inner.slice(length, suffix?.index);
+  const marks = suffix ? { ...read, kappa: kappaOf(suffix[1] ?? '', suffix[2] ?? '') } : read;
   const start = group.start + 1 + length;
   const found = findLigand(name, context.library);
-  if (found) return [{ kind: 'ligand', ligand: rawLigand(found, group.count, marks, start, suffix?.[1] ?? null) }];
+  if (found) return [{ kind: 'ligand', ligand: rawLigand(found, name, group.count, marks, start, context) }];
   if (holdsMetal(group, context)) return fragmentParts(group, context);
   if (group.items.every((item) => item.kind === 'group') || group.open !== '(') {
     return interpretParts(group.items, context).map((part) => multiplied(part, group.count));
   }
   const unknown = unknownLigand(name, start, context);
   return [
-    { kind: 'ligand', ligand: { ...rawLigand(unknown.ligand, group.count, marks, start, null), known: unknown.known } },
+    {
+      kind: 'ligand',
+      ligand: {
+        ...rawLigand(unknown.ligand, name, group.count, { ...marks, kappa: null }, start, context),
+        known: unknown.known,
+      },
+    },
   ];
 }
 
@@ -127,10 +155,7 @@ export function holdsMetal(group: Group, context: Context): boolean {
 }
 
 function isKnown(group: Group, context: Context): boolean {
-  return (
-    findLigand(group.inner.slice(readMarks(group.inner, { mu: null, hapticity: null }).length), context.library) !==
-    null
-  );
+  return findLigand(group.inner.slice(readMarks(group.inner, NO_MARKS).length), context.library) !== null;
 }
 
 /** Whether a d- or f-block symbol stands in a run of text. */
@@ -144,17 +169,37 @@ export function runHoldsMetal(text: string, context: Context): boolean {
   return false;
 }
 
-function rawLigand(ligand: Ligand, count: number, marks: Marks, start: number, kappa: string | null): RawLigand {
-  const other = kappa !== null && ligand.otherDonors.includes(kappa) ? [kappa] : null;
+function rawLigand(
+  named: Ligand,
+  typed: string,
+  count: number,
+  { mu, hapticity, kappa }: Marks,
+  start: number,
+  context: Context,
+): RawLigand {
+  const ligand = kappa?.atom ? linkageIsomer(named, kappa.atom, context.library) : named;
+  const other = kappa?.atom && ligand.otherDonors.includes(kappa.atom) ? [kappa.atom] : null;
+  if (kappa && kappa.count > (other ?? ligand.donors).length) {
+    const most = (other ?? ligand.donors).length;
+    throw refuse('unreadable', `${typed} has no ${kappa.count} donor atoms but ${most}`, context.source, start);
+  }
   return {
     ligand,
     count,
-    mu: marks.mu,
-    hapticity: marks.hapticity ?? ligand.hapticity,
+    mu,
+    hapticity: hapticity ?? ligand.hapticity,
     donors: other ?? ligand.donors,
+    denticity: kappa && ligand.hapticity === null && hapticity === null ? kappa.count : null,
+    typed,
     known: true,
     start,
   };
+}
+
+/** `SCN-κN` is the ligand of the same atoms bound by nitrogen; as named where there is none such. */
+function linkageIsomer(ligand: Ligand, atom: string, { byFormula }: LigandIndex): Ligand {
+  if (ligand.donors.includes(atom) || ligand.otherDonors.includes(atom)) return ligand;
+  return byFormula.get(ligand.formula)?.find((l) => l.charge === ligand.charge && l.donors[0] === atom) ?? ligand;
 }
 
 /** A ligand of known atoms but not in the library: a person says which it is, or what charge it bears. */
@@ -165,7 +210,7 @@ function unknownLigand(name: string, start: number, context: Context): { ligand:
     .map(([symbol, n]) => symbol + (n === 1 ? '' : n))
     .join('');
   const same = context.library.byFormula.get(name) ?? [];
-  const code = 'unknown-ligand';
+  const code = context.codeAt('unknown-ligand', start);
   const answer = context.answers[code];
   const chosen = same.find((entry) => entry.abbreviation === answer);
   if (chosen) return { ligand: chosen, known: true };

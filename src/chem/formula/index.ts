@@ -5,6 +5,7 @@ export type {
   CentreReading,
   CounterIon,
   EntityReading,
+  IsotopeLabel,
   LigandReading,
   Question,
   Reading,

@@ -32,6 +32,13 @@ const PLAIN: Readonly<Record<string, string>> = {
   '（': '(',
   '）': ')',
 };
+const FRACTIONS: Readonly<Record<string, readonly [number, number]>> = {
+  '½': [1, 2],
+  '⅓': [1, 3],
+  '⅔': [2, 3],
+  '¼': [1, 4],
+  '¾': [3, 4],
+};
 const INVISIBLE = /[\u200B-\u200D\u2060\uFEFF]/u;
 
 /** Longest text that is read, in characters. */
@@ -68,12 +75,27 @@ export function normalise(typed: string): NormalText {
     } else if (c === '}' && markup) {
       markup = false;
     } else if (/\s/u.test(c)) {
-      if (text !== '' && text.at(-1) !== '^' && spaceBeforeCharge(typed, i)) put('^', i);
+      const times = TIMES_SIGN.exec(typed.slice(i, i + 12))?.[0];
+      if (times !== undefined || solvateAfterBlank(typed, i, text)) put('·', i);
+      if (times !== undefined) i += times.length - 1;
+      else if (text !== '' && text.at(-1) !== '^' && spaceBeforeCharge(typed, i)) put('^', i);
     } else if (SUBSCRIPTS.includes(c)) {
       put(String(SUBSCRIPTS.indexOf(c)), i);
     } else if (SUPERSCRIPTS.includes(c)) {
       if (!SUPERSCRIPTS.includes(typed[i - 1] ?? ' ') && text.at(-1) !== '^') put('^', i);
       put('0123456789+-'[SUPERSCRIPTS.indexOf(c)]!, i);
+    } else if (c in FRACTIONS) {
+      const [top, bottom] = FRACTIONS[c]!;
+      const whole = /(?:^|·)(\d+)$/.exec(text)?.[1];
+      if (whole === undefined) for (const d of `${top}/${bottom}`) put(d, i);
+      else for (const d of `/${bottom}`) put(d, i);
+      if (whole !== undefined) {
+        // 1½ is three halves: the whole number is written anew over the same places
+        const [from, numerator] = [text.length - whole.length - 2, String(Number(whole) * bottom + top)];
+        const first = at[from]!;
+        text = `${text.slice(0, from)}${numerator}/${bottom}`;
+        at.splice(from, at.length - from, ...Array.from(text.slice(from), () => first));
+      }
     } else if (c === '*') {
       put(/[Cc]p$/.test(text) ? '*' : '·', i);
     } else if (c === '.') {
@@ -85,6 +107,17 @@ export function normalise(typed: string): NormalText {
   at.push(typed.length);
   return { text, at };
 }
+
+/** ` x 3 H2O`: a small x between blanks, before a number. */
+const TIMES_SIGN = /^\s+[x×]\s*(?=\d)/u;
+
+/** `Cl3 3 H2O`: the centred dot left out before a known solvent that ends the formula (or its component). */
+function solvateAfterBlank(typed: string, index: number, before: string): boolean {
+  if (before === '' || /[·^([{.]$/.test(before) || /(?:^|·)[\d./]+$/.test(before)) return false;
+  return SOLVATE_AHEAD.test(typed.slice(index, index + 40));
+}
+const SOLVATE_AHEAD =
+  /^\s+(?:\d+(?:\.\d+)?|\d+\/\d+|\d*[½¼¾⅓⅔])?\s*(?:[HD][2₂]O|MeOH|EtOH|MeCN|CH[2₂]Cl[2₂]|CHCl[3₃]|DMF|dmf|DMSO|dmso|THF|thf|acetone|toluene)\s*(?=$|[·.*•⋅])/u;
 
 /** `SO4 2-` and `[Fe(CN)6] 3-`: a blank, then digits and a sign which end the ion. */
 function spaceBeforeCharge(typed: string, index: number): boolean {

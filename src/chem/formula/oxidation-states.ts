@@ -36,6 +36,8 @@ export type Plausibility = 'usual' | 'rare' | 'implausible' | 'impossible';
 export interface LigandField {
   /** A ligand that takes electrons back, or a hydride or carbanion, is present. */
   acceptor: boolean;
+  /** A chelating N-heterocycle such as bpy is present. */
+  diimine: boolean;
   /** Oxide, fluoride, nitride, peroxide or sulfide is present. */
   strongDonor: boolean;
   /** Every ligand is neutral. */
@@ -44,7 +46,7 @@ export interface LigandField {
 
 /**
  * How believable a state is. Impossible: above the group number, or more than ten d electrons. Implausible: in no
- * isolated compound; zero or negative without an acceptor; five and above in the 3d row without oxide or fluoride;
+ * isolated compound; zero or negative without an acceptor bound by C, P, As, S or H (N-heterocycles take up the electrons themselves); five and above in the 3d row without oxide or fluoride;
  * above the usual states (at most 4) with neutral ligands alone. Fractional states are judged by their neighbours.
  */
 export function plausibility(symbol: string, state: number, field: LigandField): Plausibility {

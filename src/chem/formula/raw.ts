@@ -12,6 +12,10 @@ export interface RawLigand {
   hapticity: number | null;
   /** Donor atoms, changed where a κ names others. */
   donors: readonly string[];
+  /** Donor atoms used as a κ or an answer states them, where that is not what the sphere implies; else null. */
+  denticity: number | null;
+  /** Symbol as typed, where it can mean several ligands. */
+  typed: string;
   /** False while a question about the ligand itself is open. */
   known: boolean;
   start: number;

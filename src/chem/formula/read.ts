@@ -4,11 +4,16 @@ import { DomainError } from '../errors.ts';
 import { ligands as builtIn, indexLigands, type Ligand, type LigandIndex } from '../ligands/index.ts';
 import { settleAquaIon } from './aqua.ts';
 import { type Balance, balanceCharges } from './balance.ts';
-import { coordination, geometriesFor } from './coordination.ts';
+import { coordination, geometriesFor, settleBinding } from './coordination.ts';
 import type { Context } from './entity.ts';
 import { identityOf } from './identity.ts';
+import { countLabels, takeLabels } from './isotopes.ts';
 import { compositionOf } from './lexicon.ts';
+import { settleMeanings } from './meanings.ts';
+import { formulaOfName } from './names.ts';
 import { type NormalText, normalise } from './normalise.ts';
+import { settleOligomer } from './oligomer.ts';
+import { codeOfPlace, placeNumbering } from './place.ts';
 import { entityText, ionText, type PrintCharges, saltText } from './print.ts';
 import type { RawEntity, RawSalt } from './raw.ts';
 import { applyRepairs, mistypedMetal, type Repair, suspiciousTokens } from './repairs.ts';
@@ -33,8 +38,20 @@ const builtInIndex = indexLigands(builtIn);
  */
 export function readFormula(text: string, answers: Answers = {}, ownLigands: readonly Ligand[] = []): Reading {
   const library = ownLigands.length === 0 ? builtInIndex : indexLigands([...ownLigands, ...builtIn]);
-  const source = normalise(text);
+  const labels = takeLabels(formulaOfName(text) ?? normalise(text), library);
+  const { source } = labels;
   const components = parseSyntax(source); // brackets are judged before spelling
+  const reading = readNormal(source, components, answers, library, text);
+  return labels.found.length === 0 ? reading : { ...reading, isotopes: countLabels(labels, components) };
+}
+
+function readNormal(
+  source: NormalText,
+  components: readonly Component[],
+  answers: Answers,
+  library: LigandIndex,
+  text: string,
+): Reading {
   const suspicious = suspiciousTokens(source);
   if (suspicious.length > 0) {
     const value = [...new Set(suspicious.map((r) => r.token))].join(',');
@@ -75,7 +92,7 @@ function read(
   answers: Answers,
   library: LigandIndex,
   typed: string,
-  parsed = parseSyntax(source),
+  parsed: readonly Component[] = parseSyntax(source),
 ): Reading {
   try {
     return interpret(parsed, { source, library, answers }, typed);
@@ -116,20 +133,27 @@ function noMetal(elements: readonly string[], position: number): DomainError {
       );
 }
 
-function interpret(components: readonly Component[], base: Omit<Context, 'ask'>, typed: string): Reading {
+function interpret(components: readonly Component[], base: Omit<Context, 'ask' | 'codeAt'>, typed: string): Reading {
   const questions: Question[] = [];
   const ask = (question: Question) => {
     if (!questions.some((q) => q.code === question.code)) questions.push(question);
   };
-  const context: Context = { ...base, ask };
+  const context: Context = { ...base, ask, codeAt: placeNumbering() };
   const written = separateBareIons(interpretSalt(components, context));
   requireMetal(written, context);
-  const charge = questions.find((q) => q.code === 'charge-text');
+  const charge = questions.find((q) => /^charge-text\b/.test(q.code));
   if (charge) return unsettled(typed, charge); // even the composition hangs on it
-  const { salt, open: aquaOpen } = settleAquaIon(withAnsweredCharge(written, base.answers), context);
-  const balance = balanceCharges(salt, context);
+  const { salt: placed, open: aquaOpen } = settleAquaIon(
+    withAnsweredCharge(settleOligomer(written, context), base.answers),
+    context,
+  );
+  const balance = balanceCharges(placed, context);
+  const bound = placed.entities.map((entity, i) =>
+    settleBinding(settleMeanings(entity, balance.entities[i] ?? null, context), context),
+  );
+  const salt = { ...placed, entities: bound.map(({ entity }) => entity) };
   const entities = salt.entities.map((entity, i) =>
-    entityReading(entity, balance.entities[i] ?? null, aquaOpen, context),
+    entityReading(entity, balance.entities[i] ?? null, aquaOpen || bound[i]!.open, context),
   );
   const composition = totalComposition(salt, entities);
   const first = entities[0]!;
@@ -156,6 +180,7 @@ function interpret(components: readonly Component[], base: Omit<Context, 'ask'>,
     ligands: allLigands(entities),
     counterIons,
     solvates: salt.solvates.map(({ symbol, count }) => ({ formula: symbol, count })),
+    isotopes: [],
     entities,
     geometries: first.geometries,
     configuration: first.configuration,
@@ -191,12 +216,16 @@ function separateBareIons(salt: RawSalt): RawSalt {
 
 /** The charge a person chose for a doubtful oxidation state takes the place of the typed one. */
 function withAnsweredCharge(salt: RawSalt, answers: Answers): RawSalt {
-  const answer = answers['impossible-oxidation-state'] ?? answers['implausible-oxidation-state'];
-  if (answer === undefined || !/^-?\d{1,2}$/.test(answer)) return salt;
+  const answered = salt.entities.map((_, i) => {
+    const answer =
+      answers[codeOfPlace('impossible-oxidation-state', i)] ?? answers[codeOfPlace('implausible-oxidation-state', i)];
+    return answer !== undefined && /^-?\d{1,2}$/.test(answer) ? Number(answer) : null;
+  });
+  if (answered.every((charge) => charge === null)) return salt;
   return {
     ...salt,
     overallCharge: null,
-    entities: salt.entities.map((e, i) => (i === 0 ? { ...e, charge: Number(answer) } : e)),
+    entities: salt.entities.map((e, i) => ({ ...e, charge: answered[i] ?? e.charge })),
   };
 }
 
@@ -210,10 +239,19 @@ function requireMetal(salt: RawSalt, context: Context): void {
   throw noMetal([...symbols, ...salt.ions.map((one) => one.ion.symbol)], context.source.at[start] ?? 0);
 }
 
-function entityReading(entity: RawEntity, charge: number | null, waterOpen: boolean, context: Context): EntityReading {
+const ENTITY_DOUBTS = [
+  'impossible-oxidation-state',
+  'implausible-oxidation-state',
+  'mixed-valence',
+  'oxidation-state-sharing',
+];
+
+function entityReading(entity: RawEntity, charge: number | null, sphereOpen: boolean, context: Context): EntityReading {
+  // Each entity takes its number here, doubtful or not, so that an answer keeps its place.
+  for (const code of ENTITY_DOUBTS) context.codeAt(code, entity.start);
   const shared = shareCharge(entity, charge, context);
   const { number, denticity } = coordination(entity);
-  const coordinationNumber = waterOpen ? null : number;
+  const coordinationNumber = sphereOpen ? null : number;
   const composition = entityComposition(entity);
   const centre = shared.centres.find((c) => isDBlock(c.element));
   return {
@@ -307,6 +345,7 @@ function unsettled(typed: string, question: Question): Reading {
     ligands: [],
     counterIons: [],
     solvates: [],
+    isotopes: [],
     entities: [],
     geometries: [],
     configuration: null,

@@ -4,7 +4,7 @@ import { type Context, holdsMetal, interpretParts, runHoldsMetal } from './entit
 import type { Ion } from './ions.ts';
 import { compositionOf, findAnion, findCation, findSolvent, longest, metalOxoanion } from './lexicon.ts';
 import type { BareMetal, RawSalt } from './raw.ts';
-import { stereoBefore, withoutStereo } from './stereo.ts';
+import { descriptorOf, stereoBefore, withoutStereo } from './stereo.ts';
 import { type Component, countOf, type Group, type Item, readCharge, refuse } from './syntax.ts';
 import { interpretUnbracketed } from './unbracketed.ts';
 
@@ -91,7 +91,7 @@ function interpretBracketed(items: readonly Item[], salt: RawSalt, context: Cont
     if (item.kind === 'run') {
       const next = items[i + 1];
       const prefix = next?.kind === 'group' && next.open === '[' ? stereoBefore(item.text) : null;
-      configuration = prefix === null ? null : prefix.slice(0, -1);
+      configuration = prefix === null ? null : descriptorOf(prefix);
       interpretOuterRun(prefix === null ? item.text : item.text.slice(0, -prefix.length), item.start, salt, context);
     } else if (isEntityGroup(item, context)) {
       pushEntity(item, 1, configuration, salt, context);

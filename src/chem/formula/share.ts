@@ -47,10 +47,18 @@ export interface Shared {
 export function ligandField(entity: RawEntity): LigandField {
   const ligands = entity.ligands.map(({ ligand }) => ligand);
   return {
-    acceptor: ligands.some((l) => l.piCharacter === 'acceptor' || l.donors.some((d) => d === 'C' || d === 'H')),
+    acceptor: ligands.some(
+      (l) => l.donors.some((d) => /^(C|H|P|As|Sn|S)$/.test(d)) || /^(NO|N2)$/.test(l.abbreviation),
+    ),
+    diimine: ligands.some(isDiimine),
     strongDonor: ligands.some((l) => /^(O|F|N|O2|OOH|S|OH)$/.test(l.abbreviation)),
     allNeutral: ligands.length > 0 && ligands.every((l) => l.charge === 0),
   };
+}
+
+/** Chelating N-heterocycles, which take up electrons before a metal reaches zero: bpy, phen, tpy. */
+function isDiimine({ piCharacter, donors, denticity }: RawLigand['ligand']): boolean {
+  return piCharacter === 'acceptor' && denticity > 1 && donors.every((d) => d === 'N');
 }
 
 /** Charge left for the d-block centres once ligands and atoms of fixed state have theirs; null when a ligand is open. */
@@ -98,7 +106,9 @@ export function shareCharge(entity: RawEntity, charge: number | null, context: C
   const { state, charges, alternatives } = choice;
   if (!acceptState(entity, charge, metal, state, context)) return { ...unsettled(), ligandCharges: charges };
   const states = statesOfAtoms(metal, state, context, entity);
-  const nominal = isNominal(entity) || !Number.isInteger(state);
+  const shared =
+    state <= 1 && entity.ligands.some((l) => isDiimine(l.ligand)) && !commonStates(metal.element).includes(state);
+  const nominal = isNominal(entity) || shared || !Number.isInteger(state);
   let next = 0;
   const centres = centresOf(entity, () => states[next++] ?? null).map((c) =>
     isDBlock(c.element) ? { ...c, nominal, alternatives } : c,
@@ -144,14 +154,15 @@ function chooseLigandCharges(entity: RawEntity, charge: number, metal: RawMetal,
   const options = [open.ligand.charge, ...open.ligand.alternativeCharges].map(option).filter((o) => o !== null);
   const [first] = options;
   if (!first) return null;
-  const answered = options.find((o) => String(o.z) === context.answers['ligand-charge']?.replace('+', ''));
+  const code = context.codeAt('ligand-charge', open.start);
+  const answered = options.find((o) => String(o.z) === context.answers[code]?.replace('+', ''));
   const usual = options.filter((o) => o.fit === 'usual');
   const believable = options.filter((o) => o.fit === 'usual' || o.fit === 'rare');
   const doubtful =
     open.ligand.abbreviation === 'O2' ? usual.length > 1 : first.fit !== 'usual' && believable.length > 1;
   if (!answered && doubtful) {
     context.ask({
-      code: 'ligand-charge',
+      code,
       detail: `${open.ligand.abbreviation} can be counted in several ways, and each gives ${metal.element} a state of its own.`,
       choices: believable.map((o) => ({
         value: String(o.z),
@@ -170,15 +181,21 @@ function chooseLigandCharges(entity: RawEntity, charge: number, metal: RawMetal,
 
 /** Ask about a state that cannot be or is in no known compound; true when it stands. */
 function acceptState(entity: RawEntity, charge: number, metal: RawMetal, state: number, context: Context): boolean {
-  const fit = plausibility(metal.element, state, ligandField(entity));
-  if (fit === 'usual' || fit === 'rare') return true;
-  const code = fit === 'impossible' ? 'impossible-oxidation-state' : 'implausible-oxidation-state';
+  const field = ligandField(entity);
+  const fit = plausibility(metal.element, state, field);
+  if (fit === 'usual' || fit === 'rare' || isMetalPair(metal, state)) return true;
+  const code = context.codeAt(
+    fit === 'impossible' ? 'impossible-oxidation-state' : 'implausible-oxidation-state',
+    entity.start,
+  );
   if (fit === 'implausible' && context.answers[code] === 'keep') return true;
   const label = stateLabel(metal.element, state);
   const why =
     fit === 'impossible'
-      ? `is beyond what group ${findElement(metal.element)?.group} allows`
-      : 'is met in no established compound of this kind';
+      ? impossibleBecause(metal.element, state)
+      : state <= 0 && field.diimine && !field.acceptor
+        ? 'is a convention at best: ligands of this kind take up the electrons themselves'
+        : 'is met in no established compound of this kind';
   const repairs = usualCharges(entity)
     .filter((c) => c.charge !== charge)
     .map((c) => ({
@@ -195,13 +212,25 @@ function acceptState(entity: RawEntity, charge: number, metal: RawMetal, state: 
   return false;
 }
 
+/** Mercury(I) and its like: two atoms share the one s electron that each keeps. */
+function isMetalPair(metal: RawMetal, state: number): boolean {
+  return findElement(metal.element)?.group === 12 && state === 1 && metal.count > 1;
+}
+
+function impossibleBecause(symbol: string, state: number): string {
+  const group = findElement(symbol)?.group ?? 0;
+  return state > group
+    ? `is beyond what group ${group} allows`
+    : `would leave ${Number((group - state).toFixed(2))} electrons for five d orbitals`;
+}
+
 /** The state of each atom: the average, or the split a person chose for a fractional one. */
 function statesOfAtoms(metal: RawMetal, state: number, context: Context, entity: RawEntity): number[] {
   const average = Array<number>(metal.count).fill(state);
   if (Number.isInteger(state)) return average;
   const upper = Math.round(metal.count * (state - Math.floor(state)));
   const split = average.map((_, i) => (i < metal.count - upper ? Math.floor(state) : Math.ceil(state)));
-  const code = 'mixed-valence';
+  const code = context.codeAt('mixed-valence', entity.start);
   if (context.answers[code] === split.join(',')) return split;
   if (context.answers[code] === 'average') return average;
   context.ask({
@@ -226,7 +255,7 @@ function shareBetweenElements(entity: RawEntity, charge: number, metals: RawMeta
       [{}],
     )
     .filter((s) => metals.reduce((sum, m) => sum + m.count * (s[m.element] ?? 0), 0) === total);
-  const code = 'oxidation-state-sharing';
+  const code = context.codeAt('oxidation-state-sharing', entity.start);
   const keyOf = (s: Record<string, number>) => metals.map((m) => `${m.element}=${s[m.element]}`).join(',');
   const chosen = splits.find((s) => keyOf(s) === context.answers[code]);
   if (chosen) {

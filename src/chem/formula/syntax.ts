@@ -1,5 +1,6 @@
 import { DomainError } from '../errors.ts';
 import type { NormalText } from './normalise.ts';
+import { bracketedStereo } from './stereo.ts';
 
 /** Letters, digits and marks between brackets, counts included: `CoCl2`, `K4`, `SO4^2-`. */
 export interface Run {
@@ -92,7 +93,7 @@ function parseItems(source: NormalText, start: number, end: number): Item[] {
   let i = start;
   while (i < end) {
     const c = source.text[i]!;
-    if ('([{'.includes(c) && bracketedCharge(source.text, i) === 0) {
+    if ('([{'.includes(c) && keptInRun(source.text, i) === 0) {
       const close = matchingClose(source.text, i);
       const inner = source.text.slice(i + 1, close);
       if (inner === '') throw refuse('unreadable', 'the brackets are empty', source, i);
@@ -109,14 +110,19 @@ function parseItems(source: NormalText, start: number, end: number): Item[] {
       i = tail.end;
     } else {
       let j = i;
-      while (j < end && (!'([{'.includes(source.text[j]!) || bracketedCharge(source.text, j) > 0)) {
-        j += Math.max(1, bracketedCharge(source.text, j));
+      while (j < end && (!'([{'.includes(source.text[j]!) || keptInRun(source.text, j) > 0)) {
+        j += Math.max(1, keptInRun(source.text, j));
       }
       items.push({ kind: 'run', text: source.text.slice(i, j), start: i });
       i = j;
     }
   }
   return items;
+}
+
+/** Length of what stands in parentheses without being a group: a charge or a stereodescriptor. */
+function keptInRun(text: string, index: number): number {
+  return bracketedCharge(text, index) || bracketedStereo(text, index);
 }
 
 /** Length of a charge in parentheses, as in `Fe(3+)`; 0 where there is none. */

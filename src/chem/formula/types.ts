@@ -1,7 +1,10 @@
 import type { Caution } from '../cautions/index.ts';
 import type { Composition } from '../elements.ts';
 
-/** Something a person must settle: the code is the key of the answer, the choices its values. */
+/**
+ * Something a person must settle: the code is the key of the answer, the choices its values. A doubt that comes up in
+ * several places is told apart by number: `unknown-ligand`, `unknown-ligand:2`.
+ */
 export interface Question {
   code: string;
   detail: string;
@@ -49,6 +52,16 @@ export interface CounterIon {
   count: number;
 }
 
+/** Atoms that a formula names by nuclide. Isotopologues share composition, mass and identity of the reading. */
+export interface IsotopeLabel {
+  /** `2H` */
+  isotope: string;
+  element: string;
+  massNumber: number;
+  /** Labelled atoms per formula unit typed. */
+  count: number;
+}
+
 export interface Solvate {
   formula: string;
   /** Per formula unit; may be fractional. */
@@ -89,6 +102,8 @@ export interface Reading {
   ligands: LigandReading[];
   counterIons: CounterIon[];
   solvates: Solvate[];
+  /** Isotopic labels typed; values of the reading are those of natural abundance. */
+  isotopes: IsotopeLabel[];
   entities: EntityReading[];
   /** IUPAC polyhedral symbols possible for the first entity, usual first. */
   geometries: string[];

@@ -88,10 +88,11 @@ function chooseCharge(
   if (usual.length < 2) return usual[0] ?? first;
   const label = (option: ChargeOption) =>
     `${option.count ?? 1} of the last ligand, charge ${chargeText(option.charge)}`;
-  const answer = usual.find((option) => chargeText(option.charge) === context.answers['charge-text']);
+  const code = context.codeAt('charge-text', start);
+  const answer = usual.find((option) => chargeText(option.charge) === context.answers[code]);
   if (!answer) {
     context.ask({
-      code: 'charge-text',
+      code,
       detail: 'The digit before the sign can be a count or belong to the charge.',
       choices: usual.map((option) => ({ value: chargeText(option.charge), label: label(option) })),
       position: context.source.at[start],

@@ -17,6 +17,18 @@ export const carbonPhosphorusLigands: readonly Ligand[] = [
     synonyms: ['cym', 'p-cymene', 'cymene'],
     hapticity: 6,
   }),
+  ligand('tol', 'C7H8', 0, 'C C C C C C', 'toluene', 'Cc1ccccc1', 'acceptor', {
+    synonyms: ['toluene', 'C6H5Me', 'C6H5CH3', 'PhMe'],
+    hapticity: 6,
+  }),
+  ligand('cht', 'C7H8', 0, 'C C C C C C', 'cyclohepta-1,3,5-triene', 'C1C=CC=CC=C1', 'acceptor', {
+    synonyms: ['cycloheptatriene'],
+    hapticity: 6,
+  }),
+  ligand('mes', 'C9H12', 0, 'C C C C C C', 'mesitylene', 'Cc1cc(C)cc(C)c1', 'acceptor', {
+    synonyms: ['mesitylene', 'C6H3Me3'],
+    hapticity: 6,
+  }),
   ligand('C6Me6', 'C12H18', 0, 'C C C C C C', 'hexamethylbenzene', 'Cc1c(C)c(C)c(C)c(C)c1C', 'acceptor', {
     synonyms: ['hmb'],
     hapticity: 6,

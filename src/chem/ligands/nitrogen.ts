@@ -64,8 +64,17 @@ export const nitrogenLigands: readonly Ligand[] = [
     synonyms: ['pz', 'pyrazine'],
     canBridge: true,
   }),
+  // Written out, since pz stands for pyrazine as well
+  ligand('pyrazolato', 'C3H3N2', -1, 'N', 'pyrazolato', 'c1cn[n-]c1', 'donor', {
+    synonyms: ['pyrazolate'],
+    canBridge: true,
+  }),
   ligand('Hpz', 'C3H4N2', 0, 'N', '1H-pyrazole', 'c1cn[nH]c1', 'acceptor', { synonyms: ['pzH'] }),
   ligand('Him', 'C3H4N2', 0, 'N', '1H-imidazole', 'c1c[nH]cn1', 'donor', { synonyms: ['imH', 'im', 'imidazole'] }),
+  ligand('imidazolato', 'C3H3N2', -1, 'N', 'imidazolato', 'c1c[n-]cn1', 'donor', {
+    synonyms: ['imidazolate'],
+    canBridge: true,
+  }),
   ligand('Meim', 'C4H6N2', 0, 'N', '1-methyl-1H-imidazole', 'Cn1ccnc1', 'donor', {
     synonyms: ['1-MeIm', 'N-MeIm', 'mim'],
   }),
