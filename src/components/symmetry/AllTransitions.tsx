@@ -7,6 +7,7 @@ import { CopyButton } from '#src/components/spectra/bands/CopyButton.tsx';
 import { buttonClass } from '#src/components/ui/Button.tsx';
 import { saveText } from '#src/components/ui/save-text.ts';
 import type { PlacedBand, View } from './band-matching.ts';
+import { Prose } from './Prose.tsx';
 import type { CentreTransitions } from './panel-argument.ts';
 import {
   MECHANISM_WORDS,
@@ -33,7 +34,8 @@ export function AllTransitions({ accession, table, view, bands, onChoose }: Prop
     <div>
       <div className="mb-2 flex flex-wrap items-center gap-x-4 gap-y-1">
         <p className="min-w-0 flex-1 text-xs text-ink-soft">
-          In <PointGroup group={view.group} /> ({view.setting}), from{' '}
+          In <PointGroup group={view.group} /> (<Prose text={view.setting} />
+          ), from{' '}
           {view.ground.map((term, i) => (
             <Fragment key={term}>
               {i > 0 && ', '}

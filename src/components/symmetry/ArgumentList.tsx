@@ -3,9 +3,9 @@ import type { ArgumentLine } from './argument.ts';
 import { Pieces } from './Pieces.tsx';
 
 const SIGNS = {
-  allowed: { Icon: Check, word: 'allowed', looks: 'text-attest' },
-  forbidden: { Icon: X, word: 'forbidden', looks: 'text-alert' },
-  lent: { Icon: Waves, word: 'lends intensity', looks: 'text-zaffre' },
+  allowed: { Icon: Check, looks: 'text-attest' },
+  forbidden: { Icon: X, looks: 'text-alert' },
+  lent: { Icon: Waves, looks: 'text-zaffre' },
 } as const;
 
 /** The numbered argument. A sign beside a step says which way it points; the sentence says so, too. */
@@ -15,14 +15,16 @@ export function ArgumentList({ lines }: { lines: readonly ArgumentLine[] }) {
       {lines.map(({ topic, verdict, pieces }, i) => {
         const sign = verdict && SIGNS[verdict];
         return (
-          <li key={i} className="grid grid-cols-[22px_minmax(0,1fr)_16px] gap-x-1.5">
+          <li key={i} className="grid grid-cols-[22px_minmax(0,1fr)] gap-x-1.5">
             <span className="font-semibold text-zaffre tabular-nums" aria-hidden="true">
               {i + 1}
             </span>
             <span className="max-w-[72ch]">
               <span className="font-medium">{topic}:</span> <Pieces pieces={pieces} />
+              {sign && (
+                <sign.Icon aria-hidden="true" size={14} className={`ml-1.5 inline-block align-[-2px] ${sign.looks}`} />
+              )}
             </span>
-            {sign && <sign.Icon aria-hidden="true" size={14} className={`mt-[3px] ${sign.looks}`} />}
           </li>
         );
       })}

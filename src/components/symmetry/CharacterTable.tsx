@@ -5,6 +5,7 @@ import { CopyButton } from '#src/components/spectra/bands/CopyButton.tsx';
 import { Checkbox } from '#src/components/ui/controls.tsx';
 import { Panel } from '#src/components/ui/Panel.tsx';
 import { characterRows, charactersText } from './character-rows.ts';
+import { Prose } from './Prose.tsx';
 
 interface Props {
   group: string;
@@ -21,7 +22,7 @@ export function CharacterTable({ group: symbol, double, onDouble }: Props) {
     [group, symbol, double, isLinear],
   );
   const facts = [
-    isLinear ? 'no end of operations' : `order ${table.order}`,
+    isLinear ? 'Operations without end' : `Order ${table.order}`,
     group.centrosymmetric ? 'with a centre of inversion' : 'without a centre of inversion',
     group.setting,
   ];
@@ -35,7 +36,9 @@ export function CharacterTable({ group: symbol, double, onDouble }: Props) {
       aside={<CopyButton text={charactersText(symbol, table)} what="the character table" label="Copy" />}
     >
       <div className="mb-2 flex flex-wrap items-center gap-x-6 gap-y-1">
-        <p className="text-ink-soft">{facts.join('; ')}.</p>
+        <p className="text-ink-soft">
+          <Prose text={`${facts.join('; ')}.`} />
+        </p>
         {!isLinear && (
           <Checkbox
             label="Double group"

@@ -2,7 +2,7 @@ import { PointGroup } from '#src/components/notation/index.tsx';
 import { groupFamilies } from './group-families.ts';
 import { addressOf } from './symmetry-address.ts';
 
-const FAMILY_SYMBOL = /^[CDS]/;
+const FAMILY = /^([CDS])(2?n)(\w*)$/;
 
 /** Every point group, by family. Each is a link, so that it opens in a new tab and without scripts as well. */
 export function GroupPicker({ group, onChoose }: { group: string; onChoose: (symbol: string) => void }) {
@@ -11,9 +11,7 @@ export function GroupPicker({ group, onChoose }: { group: string; onChoose: (sym
       <dl className="grid grid-cols-[auto_1fr] items-baseline gap-x-3 gap-y-1.5">
         {groupFamilies.map(({ name, symbols }) => (
           <div key={name} className="contents">
-            <dt className="text-xs text-ink-soft">
-              {FAMILY_SYMBOL.test(name) && name !== 'Cubic' ? <FamilyName name={name} /> : name}
-            </dt>
+            <dt className="text-ink-soft">{FAMILY.test(name) ? <FamilyName name={name} /> : name}</dt>
             <dd className="flex flex-wrap gap-1">
               {symbols.map((symbol) => (
                 <a
@@ -40,7 +38,7 @@ export function GroupPicker({ group, onChoose }: { group: string; onChoose: (sym
 
 /** `Cnv`: the letter italic, n in the index italic, too, as it is a number to be chosen. */
 function FamilyName({ name }: { name: string }) {
-  const [, letter, order, suffix] = /^([CDS])(2?n)(\w*)$/.exec(name) ?? [];
+  const [, letter, order, suffix] = FAMILY.exec(name) ?? [];
   return (
     <span className="whitespace-nowrap">
       <i>{letter}</i>

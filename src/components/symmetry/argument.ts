@@ -1,5 +1,6 @@
 import type { IrrepCount, SelectionAnalysis } from '#src/chem/symmetry/index.ts';
 import { type Direction, directions } from '#src/chem/symmetry/selection-rules.ts';
+import { along, lowerLine, spinOrbitLine } from './argument-mixing.ts';
 import { listed, type Piece, product } from './pieces.ts';
 
 /** One numbered step of why a transition is strong or weak. */
@@ -98,8 +99,6 @@ function together<T>(value: (direction: Direction) => T, key: (value: T) => stri
   });
 }
 
-const along = (members: readonly Direction[]): Piece[] => listed(members.map((direction) => ({ direction })));
-
 function dipoleLines({ analysis, from, to, symmetric }: ArgumentFacts): ArgumentLine[] {
   const { group, operators, dipole } = analysis;
   return together((d) => operators[d], String).map(({ members, value: irrep }) => {
@@ -144,7 +143,9 @@ function lendingLines({ analysis, vibrations }: ArgumentFacts): ArgumentLine[] {
   const { dipole, vibronic } = analysis;
   const closed = directions.filter((d) => !dipole[d]);
   if (closed.length === 0) {
-    return [{ topic: 'Lent', verdict: null, pieces: ['no vibration is needed: every polarisation is open without.'] }];
+    return [
+      { topic: 'Vibronic', verdict: null, pieces: ['no vibration is needed: every polarisation is open without.'] },
+    ];
   }
   return together(
     (d) => (dipole[d] ? null : vibronic[d]),
@@ -154,7 +155,7 @@ function lendingLines({ analysis, vibrations }: ArgumentFacts): ArgumentLine[] {
     .map(({ members, value }) => {
       const lending = value!.map((irrep) => ({ irrep }));
       return {
-        topic: 'Lent',
+        topic: 'Vibronic',
         verdict: lending.length > 0 ? ('lent' as const) : ('forbidden' as const),
         pieces:
           lending.length > 0
@@ -162,96 +163,9 @@ function lendingLines({ analysis, vibrations }: ArgumentFacts): ArgumentLine[] {
                 ...listed(lending),
                 ` ${lending.length === 1 ? 'lends' : 'lend'} intensity along `,
                 ...along(members),
-                ': vibronic.',
+                '.',
               ]
             : ['none of these lends intensity along ', ...along(members), '.'],
       };
     });
-}
-
-function spinOrbitLine({ analysis }: ArgumentFacts): ArgumentLine {
-  const { allowed, dipole, vibronic, order, components } = analysis.spinOrbit;
-  const topic = 'Spin–orbit';
-  if (allowed === null) return { topic, verdict: null, pieces: ['not needed, as the spin does not change.'] };
-  if (order === null) return { topic, verdict: 'forbidden', pieces: ['no coupling joins the two multiplicities.'] };
-  const open = directions.filter((d) => dipole?.[d]);
-  const helpers = [...new Set(directions.flatMap((d) => vibronic?.[d] ?? []))].map((irrep) => ({ irrep }));
-  const become: Piece[] = components
-    ? [
-        'in the double group of ',
-        { group: analysis.group },
-        ' the terms become ',
-        ...betheSum(components.from),
-        ' and ',
-        ...betheSum(components.to),
-        '; ',
-      ]
-    : ['in ', { group: analysis.group }, ' '];
-  const outcome: Piece[] =
-    open.length > 0
-      ? ['the dipole along ', ...along(open), ' joins some of them.']
-      : helpers.length > 0
-        ? ['the dipole joins them with a quantum of ', ...listed(helpers, ' or '), '.']
-        : ['the dipole joins none of them.'];
-  const times = order > 1 ? [` It must act ${order} times, so that what it lends is small.`] : [];
-  return {
-    topic,
-    verdict: open.length > 0 || helpers.length > 0 ? 'lent' : 'forbidden',
-    pieces: [...become, ...outcome, ...times],
-  };
-}
-
-/** `Γ7+ + 2Γ8+`, `(Γ5,Γ6)`: the text of the core as a sum. */
-const betheSum = (text: string): Piece[] => [
-  {
-    sum: text.split(' + ').map((part) => {
-      const [, count = '', irrep = part] = /^(\d*)\(?(.*?)\)?$/.exec(part) ?? [];
-      return { irrep, count: count === '' ? 1 : Number(count) };
-    }),
-  },
-];
-
-function lowerLine({ analysis }: ArgumentFacts): ArgumentLine {
-  const { lowerGroups, group, dipole } = analysis;
-  const topic = 'Lower group';
-  const [first] = lowerGroups;
-  if (!first) {
-    const all = directions.every((d) => dipole[d]);
-    return {
-      topic,
-      verdict: null,
-      pieces: all
-        ? ['every polarisation is open in ', { group }, ' already.']
-        : ['no subgroup of ', { group }, ' is judged to open a polarisation.'],
-    };
-  }
-  const symbols = [...new Set(lowerGroups.map((entry) => entry.group))];
-  const shown = symbols.slice(0, 4).map((symbol) => ({ group: symbol }));
-  const more = symbols.length - shown.length;
-  const opened = directions.filter((d) => first.dipole[d]);
-  return {
-    topic,
-    verdict: 'lent',
-    pieces: [
-      'a fall from ',
-      { group },
-      ' to ',
-      ...(more > 0 ? [...listed(shown, ', '), ` or ${more} other${more > 1 ? 's' : ''}`] : listed(shown, ' or ')),
-      ' opens a polarisation: in ',
-      { group: first.group },
-      ' along ',
-      ...along(opened),
-      ' (',
-      ...listed(
-        first.from.map((term) => ({ term })),
-        ', ',
-      ),
-      ' to ',
-      ...listed(
-        first.to.map((term) => ({ term })),
-        ', ',
-      ),
-      ').',
-    ],
-  };
 }

@@ -29,7 +29,7 @@ export interface DrawingOptions {
 
 /** Share of the farthest distance that the atom moving most swings by, and that its arrow is long. */
 const SWING = 0.22;
-const ARROW = 0.46;
+const ARROW = 0.36;
 const PERSPECTIVE = 0.08;
 const HEAD = 7;
 
@@ -43,7 +43,7 @@ export function drawMode(placed: PlacedAtoms, mode: ModeVector | null, options: 
   const { size, phase } = options;
   const view = viewOf(placed, options);
   const reach = Math.max(...placed.positions.map(length), 1e-6);
-  const unit = size / (2.9 * reach);
+  const unit = size / (3.1 * reach);
   const place = (p: Vector3): Point & { depth: number; enlargement: number } => {
     const { x, y, depth, enlargement } = onScreen(view, scale(p, 1 / reach));
     return { x: size / 2 + x * reach * unit, y: size / 2 - y * reach * unit, depth, enlargement };
@@ -63,23 +63,25 @@ export function drawMode(placed: PlacedAtoms, mode: ModeVector | null, options: 
       if (length(vector) < 0.03 * most) return [];
       const start = placed.positions[index]!;
       const [from, to] = [place(start), place(add(start, scale(vector, (ARROW * reach) / most)))];
-      return [{ index, ...arrow(from, to) }];
+      return [{ index, ...arrow(from, to, radius * from.enlargement) }];
     }),
     axes: axesOf(placed, view, size),
   };
 }
 
-function arrow(from: Point, to: Point): { shaft: [Point, Point]; head: Point[] } {
-  const [dx, dy] = [to.x - from.x, to.y - from.y];
+/** An arrow that begins at the rim of the atom, so that its letters stay free. */
+function arrow(centre: Point, aim: Point, rim: number): { shaft: [Point, Point]; head: Point[] } {
+  const [dx, dy] = [aim.x - centre.x, aim.y - centre.y];
   const long = Math.hypot(dx, dy);
   // Seen from straight behind, an arrow is a point.
   const [ux, uy] = long < 1e-6 ? [0, 0] : [dx / long, dy / long];
+  const out = (distance: number): Point => ({ x: centre.x + ux * distance, y: centre.y + uy * distance });
+  const [tip, base] = [out(rim + long), out(rim + Math.max(0, long - HEAD))];
   const size = Math.min(HEAD, long);
-  const base = { x: to.x - ux * size, y: to.y - uy * size };
   return {
-    shaft: [from, base],
+    shaft: [out(rim), base],
     head: [
-      to,
+      tip,
       { x: base.x - uy * size * 0.5, y: base.y + ux * size * 0.5 },
       { x: base.x + uy * size * 0.5, y: base.y - ux * size * 0.5 },
     ],

@@ -29,12 +29,12 @@ export function partsOfRow(table: TransitionTable, view: View, row: Row, band: P
 }
 
 /** Terms of a band that stands in no row, where both are terms of the group. */
-export function ownTerms(view: View, { band }: PlacedBand): Part | null {
+export function ownTerms(group: string, { band }: PlacedBand): Part | null {
   const { from, to } = band.assignment;
   if (!from || !to) return null;
   const part = { from: bare(from), to: bare(to) };
   try {
-    selectionAnalysis({ group: view.group, ...part });
+    selectionAnalysis({ group, ...part });
     return part;
   } catch {
     return null; // orbitals, or terms of another group: nothing to judge
@@ -68,11 +68,12 @@ export function panelArgument(
   ];
 }
 
-/** Allowed by both rules; where the Laporte rule has no meaning, d–d bands stay far below charge transfer. */
-export function isStrong({ group }: Pick<View, 'group'>, { from, to }: Part): boolean {
+/** Allowed by both rules; where the Laporte rule has no meaning, d–d bands still stay far below charge transfer. */
+export function isStrong(group: string, { from, to }: Part, band: PlacedBand | null): boolean {
   const [start, end] = [partsOf(from), partsOf(to)];
-  const central = findGroup(group)!.centrosymmetric;
-  return start.multiplicity === end.multiplicity && central && parity(start.irrep) !== parity(end.irrep);
+  if (start.multiplicity !== end.multiplicity) return false;
+  if (findGroup(group)!.centrosymmetric) return parity(start.irrep) !== parity(end.irrep);
+  return band !== null && band.band.assignment.class !== 'd-d';
 }
 
 /** What can be said of a band whose terms are not told or not of a group: its class and its strength. */

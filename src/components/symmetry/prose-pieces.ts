@@ -1,0 +1,16 @@
+/** What stands in a sentence as it is written, and what is set as chemistry. */
+export type ProsePiece = string | { count: number } | { operation: string };
+
+const SYMBOL = /(?<![\p{L}\d])(d\d{1,2}|[CS]\d(?:[′″]|'{1,2})?|σ[hvd])(?![\p{L}\d-])/u;
+
+/** Finds d-counts (d6), axes (C4, C2′) and mirrors (σv) in a plain sentence. */
+export function prosePieces(text: string): ProsePiece[] {
+  return text
+    .split(SYMBOL)
+    .filter((part) => part !== '')
+    .map((part) => {
+      if (SYMBOL.exec(part)?.[0] !== part) return part;
+      if (part.startsWith('d')) return { count: Number(part.slice(1)) };
+      return { operation: part.replace('σ', 'sigma_').replace('″', "''").replace('′', "'") };
+    });
+}
