@@ -4,6 +4,7 @@ import { chargeTransferRoutes } from './charge-transfer.ts';
 import { complexRoutes } from './complex-routes.ts';
 import { deriveRoutes } from './derive.ts';
 import { grantRoutes } from './grant-routes.ts';
+import { levelFitRoutes } from './level-fits.ts';
 import { ligandFieldRoutes } from './ligand-field.ts';
 import { mergeRoutes } from './merge-routes.ts';
 import { oversightRoutes } from './oversight-routes.ts';
@@ -21,6 +22,7 @@ export const routes = {
   ...deriveRoutes,
   ...symmetryRoutes,
   ...ligandFieldRoutes,
+  ...levelFitRoutes,
   ...chargeTransferRoutes,
   ...bandFitRoutes,
   ...complexRoutes,

@@ -36,6 +36,8 @@ const DEEDS: Record<string, string> = {
   dispute: 'disputed the band at',
   reopen: 'reopened the judgement of',
   'band reopen': 'reopened the judgement of the band at',
+  'save-fit': 'saved a fit of the levels of',
+  'withdraw-fit': 'withdrew a fit of the levels of',
   merge: 'merged',
   'take-in': 'took a merged record into',
   move: 'moved',
