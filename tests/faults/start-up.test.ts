@@ -138,15 +138,18 @@ describe('production', () => {
     expect(session).toMatch(/; Secure/);
     expect(session).toMatch(/; HttpOnly/);
     expect([...browser.cookies.keys()].every((name) => name.startsWith('__Host-'))).toBe(true);
-    expect(JSON.parse((await browser.send('/api/health')).text)).toHaveProperty('parts.database', 'ok');
-    const write = (origin: string) =>
-      browser.send('/api/labs', {
-        method: 'POST',
-        headers: { origin, 'content-type': 'application/json' },
-        body: JSON.stringify({ name: 'First Lab' }),
+    const write = (origin: string, method: string, path: string, body: unknown) =>
+      browser.send(path, {
+        method,
+        headers: { origin, 'content-type': 'application/json', 'if-match': '*' },
+        body: JSON.stringify(body),
       });
-    expect((await write('http://zaffre.example')).status).toBe(403);
-    expect((await write(ORIGIN)).status).toBe(201);
+    const rename = (origin: string) => write(origin, 'PATCH', '/api/account', { name: 'First Steward' });
+    expect((await rename('http://zaffre.example')).status).toBe(403);
+    expect((await rename(ORIGIN)).status).toBe(200);
+    // As a steward they act once they have a second factor.
+    expect((await write(ORIGIN, 'POST', '/api/labs', { name: 'First Lab' })).status).toBe(403);
+    expect(JSON.parse((await browser.send('/api/health')).text)).toEqual({ status: 'ok' });
   });
 });
 
