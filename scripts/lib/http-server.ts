@@ -35,7 +35,6 @@ export function createAppServer(
     else
       for (const name of Object.keys(request.headers))
         if (name === 'forwarded' || name.startsWith('x-forwarded-')) delete request.headers[name];
-    keepProxysWord(request);
     const { socket } = request;
     // Here, since the files of the build do not pass the program's own middleware.
     response.setHeader('x-content-type-options', 'nosniff');
@@ -53,15 +52,6 @@ export function createAppServer(
     handler(request, response);
   });
   return server;
-}
-
-/**
- * Of the addresses in `X-Forwarded-For` the last one is what our proxy saw; those before it are what the client said,
- * who could name another one for each attempt at a password.
- */
-function keepProxysWord({ headers }: IncomingMessage): void {
-  const last = [headers['x-forwarded-for']].flat().join(',').split(',').at(-1)?.trim();
-  if (last) headers['x-forwarded-for'] = last;
 }
 
 /**
