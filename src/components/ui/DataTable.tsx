@@ -93,7 +93,7 @@ export function DataTable<T>(props: DataTableProps<T>) {
         />
       )}
       {/* biome-ignore lint/a11y/noNoninteractiveTabindex: a region that scrolls must be reachable by keyboard */}
-      <section aria-label={name} tabIndex={0} className="overflow-x-auto border border-hairline">
+      <section aria-label={name} tabIndex={0} className="relative overflow-x-auto border border-hairline">
         <table className={`table ${compact ? 'table-compact' : ''}`}>
           <thead>
             <tr>
