@@ -137,6 +137,9 @@ function modeFaults(env: z.infer<typeof Environment>, publicOrigin: string): str
   }
   const needed = ['PUBLIC_ORIGIN', 'AUTH_SECRET', 'RESEND_API_KEY'] as const;
   const faults = needed.filter((name) => env[name] === undefined).map((name) => `${name}: production mode needs it`);
+  const { protocol, hostname } = new URL(publicOrigin);
+  if (env.PUBLIC_ORIGIN && protocol !== 'https:' && !isLoopback(hostname))
+    faults.push(`PUBLIC_ORIGIN: production mode is reached by https, such as ${ORIGIN_EXAMPLE}, not "${publicOrigin}"`);
   if (env.RATE_LIMITS === 'off') faults.push('RATE_LIMITS: production mode has no switch for its limits');
   return faults;
 }

@@ -60,6 +60,11 @@ test('production names everything that it lacks', () => {
   expect(read(production)).toMatchObject({ mode: 'production', publicOrigin: 'https://zaffre.example' });
 });
 
+test('production is reached by https, or on this machine alone', () => {
+  expect(faults({ ...production, PUBLIC_ORIGIN: 'http://zaffre.example' })).toEqual(['PUBLIC_ORIGIN']);
+  expect(faults({ ...production, PUBLIC_ORIGIN: 'http://localhost:4321' })).toEqual([]);
+});
+
 test('an object store is given whole or not at all', () => {
   expect(read(bucket).s3).toMatchObject({ endpoint: 'https://s3.example', bucket: 'b', region: 'auto' });
   expect(faults({ ...bucket, S3_ACCESS_KEY_ID: '' })).toEqual(['S3_ACCESS_KEY_ID']);
