@@ -51,6 +51,7 @@ async function askerOf(request: Request) {
 }
 
 const SECURITY_HEADERS = {
+  'x-robots-tag': 'noindex, nofollow',
   'x-content-type-options': 'nosniff',
   'referrer-policy': 'same-origin',
   'cross-origin-opener-policy': 'same-origin',

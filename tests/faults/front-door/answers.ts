@@ -31,6 +31,7 @@ export function answers(door: Door): void {
       expect(headers).toMatchObject({
         'x-content-type-options': 'nosniff',
         'referrer-policy': 'same-origin',
+        'x-robots-tag': 'noindex, nofollow',
         'cross-origin-opener-policy': 'same-origin',
         'cache-control': 'private, no-store',
       });
