@@ -4,6 +4,7 @@ import type { Context } from './entity.ts';
 import { commonStates, stateLabel } from './oxidation-states.ts';
 import type { RawEntity, RawSalt } from './raw.ts';
 import { usualCharges } from './share.ts';
+import { refuse } from './syntax.ts';
 
 /** Charges after balancing; null where a question is open. */
 export interface Balance {
@@ -148,7 +149,7 @@ function splitCharge(
   context: Context,
   salt: RawSalt,
 ): Map<Unknown, number> | null {
-  const splits = open
+  const usual = open
     .reduce<{ charges: number[]; rank: number }[]>(
       (found, u) =>
         found
@@ -158,12 +159,17 @@ function splitCharge(
     )
     .filter((s) => s.charges.reduce((total, charge, i) => total + charge * open[i]!.count, 0) === sum)
     .sort((a, b) => a.rank - b.rank);
+  const splits = usual.length > 0 ? usual : pairsOf(open, sum);
+  if (splits.length === 0) {
+    const at = salt.entities[0]?.start ?? 0;
+    throw refuse('ambiguous', 'the charges do not follow: write the charge behind each bracket', context.source, at);
+  }
   const code = mixed ? 'mixed-valence' : 'charge-split';
   const keyOf = (s: { charges: number[] }) => s.charges.join(',');
   const [best, next] = splits;
   const chosen =
     splits.find((s) => keyOf(s) === context.answers[code]) ??
-    (best && !mixed && (!next || next.rank > best.rank) ? best : null);
+    (best && !mixed && usual.length > 0 && (!next || next.rank > best.rank) ? best : null);
   if (chosen) return new Map(open.map((u, i) => [u, chosen.charges[i]!]));
   context.ask({
     code,
@@ -172,9 +178,24 @@ function splitCharge(
       : 'The charge can be shared between the ions in several ways.',
     choices: splits.slice(0, 6).map((s) => ({
       value: keyOf(s),
-      label: s.charges.map((charge, i) => `${open[i]!.label(charge)}, ion ${chargeOf(charge) || '0'}`).join('; '),
+      label: s.charges.map((charge, i) => chargeLabel(open[i]!, charge)).join('; '),
     })),
     position: context.source.at[salt.entities[0]?.start ?? 0],
   });
   return null;
+}
+
+/** `Fe(III), ion 3-`; the charge alone where it gives no usual state. */
+function chargeLabel(unknown: Unknown, charge: number): string {
+  const [ion, state] = [`ion ${chargeOf(charge) || '0'}`, unknown.label(charge)];
+  return state === chargeOf(charge) ? ion : `${state}, ${ion}`;
+}
+
+/** Where no usual states add up, all charges of two ions that do, small ones first. */
+function pairsOf(open: readonly Unknown[], sum: number): { charges: number[]; rank: number }[] {
+  const [first, second, third] = open;
+  if (!first || !second || third) return [];
+  return [2, -2, 1, -1, 3, -3, 4, -4]
+    .map((charge) => ({ charges: [charge, (sum - charge * first.count) / second.count], rank: Math.abs(charge) }))
+    .filter(({ charges }) => Number.isInteger(charges[1]));
 }

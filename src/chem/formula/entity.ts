@@ -120,7 +120,7 @@ function interpretGroup(group: Group, before: Marks, context: Context): Part[] {
   if (group.items.every((item) => item.kind === 'group') || group.open !== '(') {
     return interpretParts(group.items, context).map((part) => multiplied(part, group.count));
   }
-  const unknown = unknownLigand(name, start, context);
+  const unknown = unknownLigand(name, marks.hapticity, start, context);
   return [
     {
       kind: 'ligand',
@@ -181,7 +181,12 @@ function rawLigand(
   const other = kappa?.atom && ligand.otherDonors.includes(kappa.atom) ? [kappa.atom] : null;
   if (kappa && kappa.count > (other ?? ligand.donors).length) {
     const most = (other ?? ligand.donors).length;
-    throw refuse('unreadable', `${typed} has no ${kappa.count} donor atoms but ${most}`, context.source, start);
+    throw refuse(
+      'unreadable',
+      `the κ asks for ${kappa.count} donor atoms; ${typed} has ${most}`,
+      context.source,
+      start,
+    );
   }
   return {
     ligand,
@@ -203,13 +208,20 @@ function linkageIsomer(ligand: Ligand, atom: string, { byFormula }: LigandIndex)
 }
 
 /** A ligand of known atoms but not in the library: a person says which it is, or what charge it bears. */
-function unknownLigand(name: string, start: number, context: Context): { ligand: Ligand; known: boolean } {
+function unknownLigand(
+  name: string,
+  hapticity: number | null,
+  start: number,
+  context: Context,
+): { ligand: Ligand; known: boolean } {
   const composition = compositionOf(name);
   if (!composition) throw unknownToken(name, start, context);
   const plain = Object.entries(composition)
     .map(([symbol, n]) => symbol + (n === 1 ? '' : n))
     .join('');
-  const same = context.library.byFormula.get(name) ?? [];
+  const all = context.library.byFormula.get(name) ?? [];
+  const same = hapticity === null ? all : all.filter((entry) => entry.hapticity === hapticity);
+  if (hapticity !== null && same.length === 1) return { ligand: same[0]!, known: true };
   const code = context.codeAt('unknown-ligand', start);
   const answer = context.answers[code];
   const chosen = same.find((entry) => entry.abbreviation === answer);

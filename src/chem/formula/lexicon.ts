@@ -21,6 +21,9 @@ export const findCation = (spelling: string): Ion | null => cationOf.get(spellin
 export const findAnion = (spelling: string): Ion | null => anionOf.get(spelling) ?? null;
 export const findSolvent = (spelling: string) => solventOf.get(spelling) ?? null;
 
+/** All spellings of free ions. */
+export const ionSpellings = (): Iterable<string> => [...cationOf.keys(), ...anionOf.keys()];
+
 /** The longest spelling at `from` that `find` knows; a spelling ending in a digit must not run on into another digit. */
 export function longest<T>(
   text: string,

@@ -70,13 +70,19 @@ export function normalise(typed: string): NormalText {
   for (let i = 0; i < typed.length; i += 1) {
     const c = typed[i]!;
     if (INVISIBLE.test(c) || c === '_' || c === '$') continue;
+    const tag = c === '<' ? MARKUP.exec(typed.slice(i, i + 6)) : null;
+    if (tag) {
+      if (tag[1] === 'sup') put('^', i);
+      i += tag[0].length - 1;
+      continue;
+    }
     if (c === '{' && (typed[i - 1] === '_' || typed[i - 1] === '^')) {
       markup = true;
     } else if (c === '}' && markup) {
       markup = false;
     } else if (/\s/u.test(c)) {
       const times = TIMES_SIGN.exec(typed.slice(i, i + 12))?.[0];
-      if (times !== undefined || solvateAfterBlank(typed, i, text)) put('·', i);
+      if (times !== undefined || partAfterBlank(typed, i, text)) put('·', i);
       if (times !== undefined) i += times.length - 1;
       else if (text !== '' && text.at(-1) !== '^' && spaceBeforeCharge(typed, i)) put('^', i);
     } else if (SUBSCRIPTS.includes(c)) {
@@ -108,12 +114,16 @@ export function normalise(typed: string): NormalText {
   return { text, at };
 }
 
+/** `<sub>`, `<sup>` and their ends, as pasted from a page. */
+const MARKUP = /^<(\/?(?:sub|sup))>/;
+
 /** ` x 3 H2O`: a small x between blanks, before a number. */
 const TIMES_SIGN = /^\s+[x×]\s*(?=\d)/u;
 
-/** `Cl3 3 H2O`: the centred dot left out before a known solvent that ends the formula (or its component). */
-function solvateAfterBlank(typed: string, index: number, before: string): boolean {
+/** `Cl3 3 H2O`: the dot left out before a known solvent that ends its component, or before a counted ion. */
+function partAfterBlank(typed: string, index: number, before: string): boolean {
   if (before === '' || /[·^([{.]$/.test(before) || /(?:^|·)[\d./]+$/.test(before)) return false;
+  if (/[\])}\d][+-]$/.test(before) && /^\s+\d+\s*[A-Z]/.test(typed.slice(index, index + 8))) return true; // `]2+ 2Cl-`
   return SOLVATE_AHEAD.test(typed.slice(index, index + 40));
 }
 const SOLVATE_AHEAD =

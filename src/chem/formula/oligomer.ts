@@ -1,6 +1,6 @@
 import { assembleEntity } from './assemble.ts';
 import type { Context, Part } from './entity.ts';
-import type { RawEntity, RawSalt } from './raw.ts';
+import type { RawEntity, RawLigand, RawSalt } from './raw.ts';
 
 const CODE = 'bridges';
 
@@ -12,22 +12,23 @@ export function settleOligomer(salt: RawSalt, context: Context): RawSalt {
   const [entity] = salt.entities;
   const alone = salt.entities.length === 1 && salt.ions.length + salt.bareMetals.length === 0;
   if (!entity || !alone || !isCountedPart(entity)) return salt;
-  const bridging = entity.ligands.filter((l) => l.ligand.canBridge && l.known).map((l) => l.ligand.abbreviation);
-  if (bridging.length === 0) return salt;
+  const bridges = entity.ligands.filter((l) => l.ligand.canBridge && l.known).flatMap(bridgesOf);
+  if (bridges.length === 0) return salt;
   const code = context.codeAt(CODE, entity.start);
   const answer = context.answers[code];
-  if (answer !== 'none' && !bridging.includes(answer ?? '')) {
+  const chosen = bridges.find(({ value }) => value === answer);
+  if (answer !== 'none' && !chosen) {
     context.ask({
       code,
       detail: `One molecule of ${entity.count} parts; the formula does not say what holds them together.`,
       choices: [
-        ...bridging.map((symbol) => ({ value: symbol, label: `one ${symbol} of each part bridges` })),
+        ...bridges.map(({ value, label }) => ({ value, label })),
         { value: 'none', label: 'the bridges are not stated' },
       ],
       position: context.source.at[entity.start],
     });
   }
-  return { ...salt, entities: [oligomerOf(entity, answer ?? 'none')] };
+  return { ...salt, entities: [oligomerOf(entity, chosen ?? null)] };
 }
 
 function isCountedPart(entity: RawEntity): boolean {
@@ -38,10 +39,29 @@ function isCountedPart(entity: RawEntity): boolean {
   );
 }
 
-function oligomerOf(entity: RawEntity, bridge: string): RawEntity {
+interface Bridge {
+  ligand: RawLigand;
+  /** How many of that ligand in each part hold the next one, too. */
+  each: number;
+  /** `Cl`, `OAc*2` */
+  value: string;
+  label: string;
+}
+
+/** One of the ligand in each part, or, of two, both (as acetates of copper do). */
+function bridgesOf(ligand: RawLigand): Bridge[] {
+  const { abbreviation } = ligand.ligand;
+  const one = { ligand, each: 1, value: abbreviation, label: `one ${abbreviation} of each part bridges` };
+  const both = { ligand, each: 2, value: `${abbreviation}*2`, label: `both ${abbreviation} of each part bridge` };
+  if (ligand.count !== 2) return [one];
+  return ligand.ligand.donors.length > 1 ? [both, one] : [one, both];
+}
+
+function oligomerOf(entity: RawEntity, bridge: Bridge | null): RawEntity {
   const ligands = entity.ligands.flatMap((l) => {
-    if (l.ligand.abbreviation !== bridge) return [l];
-    return [...(l.count > 1 ? [{ ...l, count: l.count - 1 }] : []), { ...l, count: 1, mu: 2 }];
+    if (!bridge || l !== bridge.ligand) return [l];
+    const rest = l.count - bridge.each;
+    return [...(rest > 0 ? [{ ...l, count: rest }] : []), { ...l, count: bridge.each, mu: 2 }];
   });
   const part: Part = { kind: 'fragment', fragment: { metals: [...entity.metals], ligands, count: entity.count } };
   return assembleEntity([part], { ...entity, count: 1 });

@@ -234,8 +234,10 @@ function requireMetal(salt: RawSalt, context: Context): void {
     ...salt.entities.flatMap((e) => e.metals.map((m) => m.element)),
     ...salt.bareMetals.map((m) => m.element),
   ];
-  if (salt.entities.some((e) => e.metals.some((m) => isDBlock(m.element)))) return;
-  const start = salt.entities[0]?.start ?? 0;
+  // Beside a complex, brackets may hold [Al(H2O)6]3+, but hardly no metal at all: [CO(NH3)6][Cr(CN)6]
+  const empty = salt.entities.find((e) => e.bracketed && e.metals.length === 0);
+  if (!empty && salt.entities.some((e) => e.metals.some((m) => isDBlock(m.element)))) return;
+  const start = (empty ?? salt.entities[0])?.start ?? 0;
   throw noMetal([...symbols, ...salt.ions.map((one) => one.ion.symbol)], context.source.at[start] ?? 0);
 }
 

@@ -1,8 +1,9 @@
 import { isDBlock } from '../elements.ts';
+import { nearestSpelling } from '../ligands/index.ts';
 import { assembleEntity } from './assemble.ts';
 import { type Context, holdsMetal, interpretParts, runHoldsMetal } from './entity.ts';
 import type { Ion } from './ions.ts';
-import { compositionOf, findAnion, findCation, findSolvent, longest, metalOxoanion } from './lexicon.ts';
+import { compositionOf, findAnion, findCation, findSolvent, ionSpellings, longest, metalOxoanion } from './lexicon.ts';
 import type { BareMetal, RawSalt } from './raw.ts';
 import { descriptorOf, stereoBefore, withoutStereo } from './stereo.ts';
 import { type Component, countOf, type Group, type Item, readCharge, refuse } from './syntax.ts';
@@ -142,7 +143,12 @@ function interpretOuterGroup(group: Group, salt: RawSalt, context: Context): voi
     );
     return;
   }
-  throw refuse('unknown-symbol', `the ion "${group.inner}" is unknown`, context.source, group.start);
+  throw refuse(
+    'unknown-symbol',
+    `the ion "${group.inner}" is unknown${nearIon(group.inner)}`,
+    context.source,
+    group.start,
+  );
 }
 
 /** Ions outside the brackets, one after the other: `KNa2`, `Cl3`, `SO4^2-`, `Fe4`. */
@@ -157,7 +163,10 @@ function interpretOuterRun(text: string, start: number, salt: RawSalt, context: 
     const found = polyhalide
       ? { value: { ion: findAnion(polyhalide)! }, length: polyhalide.length }
       : longest(text, i, outerSymbol);
-    if (!found) throw refuse('unknown-symbol', `"${text.slice(i)}" is no known ion`, context.source, start + i);
+    if (!found) {
+      const token = text.slice(i);
+      throw refuse('unknown-symbol', `"${token}" is no known ion${nearIon(token)}`, context.source, start + i);
+    }
     const after = text.slice(i + found.length);
     const tail = ionTail(
       after,
@@ -187,6 +196,11 @@ function interpretOuterRun(text: string, start: number, salt: RawSalt, context: 
     }
     i += found.length + tail.length;
   }
+}
+
+function nearIon(token: string): string {
+  const near = nearestSpelling(token, ionSpellings());
+  return near === null ? '' : `; did you mean "${near}"?`;
 }
 
 type OuterSymbol = { ion: Ion } | { element: string } | { oxoanion: number };

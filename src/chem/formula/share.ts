@@ -81,7 +81,9 @@ export function dMetals(entity: RawEntity): RawMetal[] {
 export function usualCharges(entity: RawEntity): { charge: number; state: number }[] {
   const [metal, other] = dMetals(entity);
   const zero = chargeOnMetals(entity, 0);
-  if (!metal || other || zero === null) return [];
+  if (zero === null || other) return [];
+  // Without a d-block centre all states are fixed, and so is the charge: [Al(H2O)6]3+
+  if (!metal) return [{ charge: -zero || 0, state: fixedState(entity.metals[0]?.element ?? '') }];
   return commonStates(metal.element).map((state) => ({ charge: state * metal.count - zero || 0, state }));
 }
 

@@ -55,12 +55,17 @@ export function findLigand(token: string, index: LigandIndex = builtIn): Ligand 
   );
 }
 
-/** The library abbreviation nearest to an unknown token (at most two letters changed, swapped, missing), or null. */
+/** The library spelling nearest to an unknown token (at most two letters changed, swapped, missing), or null. */
 export function nearestLigand(token: string, index: LigandIndex = builtIn): string | null {
+  return nearestSpelling(token, index.exact.keys());
+}
+
+/** The spelling nearest to a token of three letters or more, by at most two edits; null when none is near. */
+export function nearestSpelling(token: string, spellings: Iterable<string>): string | null {
   if (token.length < 3) return null; // two letters are near to everything
   let best: string | null = null;
   let bestDistance = token.length > 3 ? 2.5 : 1.5;
-  for (const spelling of index.exact.keys()) {
+  for (const spelling of spellings) {
     const distance = editDistance(token.toLowerCase(), spelling.toLowerCase());
     if (distance < bestDistance && distance < spelling.length) {
       best = spelling;

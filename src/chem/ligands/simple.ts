@@ -93,7 +93,7 @@ export const simpleLigands: readonly Ligand[] = [
     source: SERIES,
   }),
   ligand('CS', 'CS', 0, 'C', 'thiocarbonyl', '[C-]#[S+]', 'acceptor', {}),
-  ligand('NO', 'NO', 1, 'N', 'nitrosyl', '[N+]#[O]', 'acceptor', { alternativeCharges: [-1], redoxActive: true }),
+  ligand('NO', 'NO', 1, 'N', 'nitrosyl', 'N#[O+]', 'acceptor', { alternativeCharges: [-1], redoxActive: true }),
   ligand('NCS', 'CNS', -1, 'N', 'thiocyanato-κN', '[S-]C#N', 'donor', {
     f: 1.02,
     seriesRank: 12,
@@ -135,5 +135,5 @@ export const simpleLigands: readonly Ligand[] = [
   ligand('ClO4', 'ClO4', -1, 'O', 'perchlorato', '[O-]Cl(=O)(=O)=O', 'donor', { synonyms: ['OClO3'] }),
   ligand('BH4', 'BH4', -1, 'H', 'tetrahydridoborato', '[BH4-]', 'none', { denticities: [2, 1, 3] }),
   ligand('SnCl3', 'SnCl3', -1, 'Sn', 'trichloridostannato', '[Sn-](Cl)(Cl)Cl', 'acceptor', {}),
-  ligand('H2', 'H2', 0, 'H', 'dihydrogen', '[HH]', 'acceptor', { hapticity: 2 }),
+  ligand('H2', 'H2', 0, 'H H', 'dihydrogen', '[H][H]', 'acceptor', { hapticity: 2 }),
 ];
