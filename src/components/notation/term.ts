@@ -1,10 +1,19 @@
 import { MINUS, type Run, RunBuilder, toPrimes } from './runs.ts';
 
-const GREEK: Record<string, string> = { Sigma: 'Σ', Pi: 'Π', Delta: 'Δ', Phi: 'Φ', Gamma: 'Γ' };
+const GREEK: Record<string, string> = {
+  Sigma: 'Σ',
+  Pi: 'Π',
+  Delta: 'Δ',
+  Phi: 'Φ',
+  Gamma: 'Γ',
+  sigma: 'σ',
+  pi: 'π',
+  delta: 'δ',
+};
 
 /** multiplicity, letter, index with parity, primes, reflection sign, parent in brackets */
 const TERM =
-  /^(\d+)?(Sigma|Pi|Delta|Phi|Gamma|[ΣΠΔΦΓ]|[A-Za-z])(?:_?(\d+(?:\/\d+)?)?_?([gu])?)('{1,3}|")?([gu])?([+\-−])?(\(.+\))?$/;
+  /^(\d+)?(Sigma|Pi|Delta|Phi|Gamma|sigma|pi|delta|[ΣΠΔΦΓ]|[A-Za-z])(?:_?(\d+(?:\/\d+)?)?_?([gu])?)('{1,3}|")?([gu])?([+\-−])?(\(.+\))?$/;
 
 /**
  * Sets a term or an irrep: `4A2g`, `4T1g(F)`, `A1'`, `E''`, `2Sigma_g+`, `t2g`, `4F3/2`. The parity stands in the

@@ -42,7 +42,8 @@ export function AllTransitions({ accession, table, view, bands, onChoose }: Prop
               <Term term={term} />
             </Fragment>
           ))}
-          . Excited terms are those of <PointGroup group={parent} />. {view.axes}
+          . Excited terms are those of <PointGroup group={parent} />.{' '}
+          {/[1-9] on [xyz]|lies in/.test(view.axes) && view.axes}
         </p>
         <CopyButton text={transitionsText(table, view, bands)} what="the table" label="Copy" />
         <button

@@ -104,9 +104,7 @@ export function CharacterTable({ group: symbol, double, onDouble }: Props) {
         </table>
       </section>
       {isLinear && (
-        <p className="mt-2 text-xs text-ink-soft">
-          The table goes on without end: Γ and further irreps of higher Λ follow in the same way.
-        </p>
+        <p className="mt-2 text-xs text-ink-soft">The table goes on without end, with irreps of higher Λ.</p>
       )}
       {table.rows.some(({ pair }) => pair) && (
         <p className="mt-2 text-xs text-ink-soft">

@@ -60,18 +60,18 @@ export function ModePicture({ shown, mode }: Props) {
             strokeWidth="2"
           />
         ))}
+        {arrows.map(({ index, shaft: [from, to], head }) => (
+          <g key={index} stroke="var(--color-band-lmct)" fill="var(--color-band-lmct)">
+            <line x1={from.x} y1={from.y} x2={to.x} y2={to.y} strokeWidth="2.2" />
+            <polygon points={head.map(({ x, y }) => `${x},${y}`).join(' ')} stroke="none" />
+          </g>
+        ))}
         {atoms.map(({ index, x, y, radius }) => (
           <g key={index}>
             <circle cx={x} cy={y} r={radius} fill="var(--color-glaze)" stroke="var(--color-zaffre)" strokeWidth="1.4" />
             <text x={x} y={y + 4} fontSize="11" textAnchor="middle" fill="var(--color-ink)">
               {shown.labels[index]}
             </text>
-          </g>
-        ))}
-        {arrows.map(({ index, shaft: [from, to], head }) => (
-          <g key={index} stroke="var(--color-band-lmct)" fill="var(--color-band-lmct)">
-            <line x1={from.x} y1={from.y} x2={to.x} y2={to.y} strokeWidth="2.2" />
-            <polygon points={head.map(({ x, y }) => `${x},${y}`).join(' ')} stroke="none" />
           </g>
         ))}
       </svg>

@@ -79,7 +79,7 @@ export function lowerLine({ analysis }: Pick<ArgumentFacts, 'analysis'>): Argume
       ...(more > 0 ? [...listed(shown, ', '), ` or ${more} other${more > 1 ? 's' : ''}`] : listed(shown, ' or ')),
       ` opens a ${before > 0 ? 'further ' : ''}polarisation: in `,
       { group: first.group },
-      ' ',
+      ', ',
       ...along(open(first.dipole)),
       ` ${open(first.dipole).length > 1 ? 'are' : 'is'} allowed (`,
       ...listed(

@@ -59,10 +59,11 @@ export function bandsByRow(table: TransitionTable, bands: readonly PlacedBand[])
     );
 }
 
-/** The band to begin with: the strongest d–d one, then the strongest that is assigned at all. */
+/** The band to begin with: the strongest d–d one, then the strongest that the metal takes part in, then any. */
 export function firstBand(bands: readonly PlacedBand[]): PlacedBand | null {
   const strength = ({ band }: PlacedBand): number => band.epsilon ?? -1;
   const strongest = (some: readonly PlacedBand[]) =>
     some.reduce<PlacedBand | null>((best, each) => (best && strength(best) >= strength(each) ? best : each), null);
-  return strongest(bands.filter(({ band }) => band.assignment.class === 'd-d')) ?? strongest(bands);
+  const of = (...classes: string[]) => bands.filter(({ band }) => classes.includes(band.assignment.class));
+  return strongest(of('d-d')) ?? strongest(of('LMCT', 'MLCT', 'intervalence', 'metal-metal')) ?? strongest(bands);
 }

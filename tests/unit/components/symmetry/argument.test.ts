@@ -28,7 +28,7 @@ test('a spin-allowed d–d band of an octahedron: Laporte-forbidden, vibronic by
     'Vibrations: of metal and donors in Oh: A1g + Eg + T2g + 2T1u + T2u.',
     'Vibronic (lent): T1u and T2u lend intensity along x, y and z.',
     'Spin–orbit: not needed, as the spin does not change.',
-    'Lower group (lent): a fall from Oh to O, T, D4, C4v or 10 others opens a polarisation: in O x, y and z are allowed (4A2 to 4T2).',
+    'Lower group (lent): a fall from Oh to O, T, D4, C4v or 10 others opens a polarisation: in O, x, y and z are allowed (4A2 to 4T2).',
   ]);
 });
 

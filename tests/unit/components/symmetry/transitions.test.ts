@@ -68,7 +68,9 @@ test('the strongest d–d band comes first, charge transfer only where there is 
   const strong = placed('strong', 40, { class: 'd-d', to: '4T1g' });
   const charge = placed('charge', 12_000, { class: 'LMCT' });
   expect(firstBand([weak, charge, strong])?.band.id).toBe('strong');
-  expect(firstBand([charge])?.band.id).toBe('charge');
+  const ligand = placed('ligand', 80_000, { class: 'intraligand' });
+  expect(firstBand([ligand, charge])?.band.id).toBe('charge');
+  expect(firstBand([ligand])?.band.id).toBe('ligand');
   expect(firstBand([])).toBeNull();
 });
 
