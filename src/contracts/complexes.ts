@@ -118,6 +118,13 @@ export const ComplexFilters = z.object({
   pointGroup: listOf(z.string()).optional(),
   spinState: listOf(SpinState).optional(),
   ligand: listOf(z.string()).optional(),
+  substructure: z
+    .string()
+    .trim()
+    .min(1)
+    .max(500)
+    .optional()
+    .describe('SMILES of a fragment that one of the ligands holds'),
   lab: listOf(z.string()).optional(),
   folio: z.string().optional(),
   bandFrom: z.coerce.number().positive().optional().describe('nm'),

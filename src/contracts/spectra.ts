@@ -1,6 +1,9 @@
 import * as z from 'zod';
 import { Caution, Instant, LabRef, listOf, Paging, RecordState, Visibility } from './common.ts';
 import { BandClass } from './complexes.ts';
+import { FitHistory } from './fit-history.ts';
+
+export type { FitHistory } from './fit-history.ts';
 
 export const Technique = z.enum(['solution', 'reflectance', 'transmission', 'emission', 'circular-dichroism']);
 const Note = z.object({ code: z.string(), detail: z.string() });
@@ -136,6 +139,11 @@ export const BandInput = z.strictObject({
 export const BandList = z.array(BandInput).max(100).meta({ id: 'BandList' });
 export type BandList = z.infer<typeof BandList>;
 
+export const FittedBands = z
+  .strictObject({ bands: BandList, fit: FitHistory })
+  .meta({ id: 'FittedBands', description: 'Bands of which some were fitted, with the history of the fit' });
+export type FittedBands = z.infer<typeof FittedBands>;
+
 export const BandRecord = z
   .object({
     id: z.string(),
@@ -213,6 +221,7 @@ export const SpectrumRecord = SpectrumSummary.extend({
   reading: z.record(z.string(), z.unknown()),
   warnings: z.array(Note),
   bands: z.array(BandRecord),
+  fit: FitHistory.nullable().describe('How the fitted bands were found; null for guests, and where none is fitted'),
   cautions: z.array(Caution),
   may: z.object({ change: z.boolean(), propose: z.boolean(), attest: z.boolean(), download: z.boolean() }),
 }).meta({ id: 'Spectrum' });
@@ -278,3 +287,20 @@ export type ReadBlock = z.infer<typeof ReadBlock>;
 
 export const Judgement = z.strictObject({ reason: z.string().trim().max(2000).optional() });
 export type Judgement = z.infer<typeof Judgement>;
+
+export const SimilarQuery = z.object({ limit: z.coerce.number().int().min(1).max(100).default(20) });
+export const SimilarSpectra = z
+  .object({
+    items: z.array(
+      z.object({
+        spectrum: SpectrumSummary,
+        cosine: z.number().describe('1 for curves of one shape'),
+        angle: z.number().describe('degrees'),
+        from: z.number().describe('cm⁻¹: the range that both cover'),
+        to: z.number(),
+      }),
+    ),
+    compared: z.number().int().describe('Spectra of the same technique in sight that cover enough of the range'),
+  })
+  .meta({ id: 'SimilarSpectra' });
+export type SimilarSpectra = z.infer<typeof SimilarSpectra>;

@@ -1,5 +1,6 @@
 export * from './absorbance.ts';
 export { ABSORBANCE_LIMIT, checkConditions, type Flag, type MeasuredCurve, type SolventGiven } from './conditions.ts';
+export { componentArea } from './fit/components.ts';
 export {
   type BandFit,
   combinedPositionError,
@@ -12,7 +13,9 @@ export * from './oscillator-strength.ts';
 export { type PickedBand, type PickOptions, pickBands } from './pick-bands.ts';
 export { ascending, type Curve, decimate } from './points.ts';
 export { readSpectrumFile } from './read.ts';
+export { type SpectralSimilarity, spectralSimilarity } from './similarity.ts';
 export { findSolvent, type Solvent, solvents } from './solvents.ts';
+export * from './transition-dipole.ts';
 export * from './types.ts';
 export { isAbscissaLabel, xUnitFromText, xUnitNames, yUnitFromText, yUnitNames } from './unit-names.ts';
 export { convertEnergy, convertX, type EnergyUnit, toWavenumber, wavenumberInterval } from './units.ts';

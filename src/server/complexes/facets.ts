@@ -64,7 +64,7 @@ function facetsFor(asker: Asker): Record<string, Facet> {
  * @returns for each filter its values with counts, most frequent first (the histogram by wavelength)
  */
 export async function facets(db: Db, asker: Asker, query: ComplexFilters): Promise<Record<string, FacetCount[]>> {
-  const conditions = filterConditions(asker, query);
+  const conditions = await filterConditions(asker, query);
   const table = Object.entries(facetsFor(asker));
   const nameOf = (own: keyof Conditions) => sql.raw(own in conditions ? `hits_without_${own}` : 'hits');
   const set = (name: SQL, without?: keyof Conditions) =>

@@ -3,6 +3,7 @@ import type { ComplexFilters } from '../../contracts/complexes.ts';
 import { bands, centres, complexes, complexLigands, folioItems, spectra } from '../../db/schema/index.ts';
 import { type Asker, isMember } from '../access/asker.ts';
 import { bandSightWithin, complexSight, spectrumSightWithin } from '../access/sight.ts';
+import { ligandsWithFragment } from '../ligands/fragment.ts';
 
 /** A filter of the table of complexes: what it is called in the query, and its condition. */
 export type Conditions = Partial<Record<keyof ComplexFilters | 'bandWindow', SQL>>;
@@ -37,8 +38,17 @@ const searched = (asker: Asker): SQL =>
     ? sql`${complexes.search}`
     : sql`lower(${complexes.accession} || ' ' || ${complexes.formula} || ' ' || coalesce(${complexes.descriptor}, '') || ' ' || ${complexes.hill} || ' ' || coalesce((select group_concat(${complexLigands.abbreviation}, ' ') from ${complexLigands} where ${complexLigands.complexId} = ${complexes.id}), '') || ' ' || coalesce((select group_concat(merged.accession, ' ') from ${complexes} merged where merged.merged_into = ${complexes.accession}), ''))`;
 
-/** The conditions that a query sets, one a filter, so that a facet can leave its own out. */
-export function filterConditions(asker: Asker, f: ComplexFilters): Conditions {
+const hasLigand = (abbreviations: string[]): SQL =>
+  abbreviations.length === 0
+    ? sql`0`
+    : sql`${complexes.id} in (select ${complexLigands.complexId} from ${complexLigands} where ${inArray(complexLigands.abbreviation, abbreviations)})`;
+
+/**
+ * The conditions that a query sets, one a filter, so that a facet can leave its own out.
+ *
+ * @throws {HttpError} 400 for a substructure that is no SMILES
+ */
+export async function filterConditions(asker: Asker, f: ComplexFilters): Promise<Conditions> {
   const conditions: Conditions = {};
   if (f.metal?.length) conditions.metal = hasCentre(inArray(centres.element, f.metal));
   if (f.oxidationState?.length)
@@ -47,8 +57,8 @@ export function filterConditions(asker: Asker, f: ComplexFilters): Conditions {
   if (f.geometry?.length) conditions.geometry = hasCentre(inArray(centres.geometry, f.geometry));
   if (f.spinState?.length) conditions.spinState = hasCentre(inArray(centres.spinState, f.spinState));
   if (f.pointGroup?.length) conditions.pointGroup = inArray(complexes.pointGroup, f.pointGroup);
-  if (f.ligand?.length)
-    conditions.ligand = sql`${complexes.id} in (select ${complexLigands.complexId} from ${complexLigands} where ${inArray(complexLigands.abbreviation, f.ligand)})`;
+  if (f.ligand?.length) conditions.ligand = hasLigand(f.ligand);
+  if (f.substructure) conditions.substructure = hasLigand(await ligandsWithFragment(f.substructure));
   if (f.lab?.length)
     conditions.lab = sql`(${inArray(complexes.labId, f.lab)} or ${complexes.id} in (select ${spectra.complexId} from ${spectra} where ${and(inArray(spectra.labId, f.lab), spectrumSightWithin(asker))}))`;
   if (f.folio)

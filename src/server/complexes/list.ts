@@ -52,7 +52,7 @@ export async function listComplexes(asker: Asker, query: ComplexQuery): Promise<
   const falling = query.sort.startsWith('-');
   const by = sortValue(asker, query.sort.replace(/^-/, ''));
   const id = sql`${complexes.id}`;
-  const where = whereOf(asker, filterConditions(asker, query));
+  const where = whereOf(asker, await filterConditions(asker, query));
 
   const [found, [counted], facetCounts] = await Promise.all([
     db

@@ -36,6 +36,14 @@ const labOnlySpectrum = (f: Fixture) => {
 };
 
 const band = { wavenumber: 21_000, height: 2, quantity: 'epsilon', found: 'typed', assignment: { class: 'd-d' } };
+const fittedBand = { ...band, fwhm: 3000, found: 'fitted' };
+const fit = {
+  points: 20,
+  quantity: 'epsilon',
+  wavelengthCheck: 0.2,
+  steps: [{ operation: 'find', parameters: {} }],
+  components: [{ wavenumber: 21_000, height: 2, fwhm: 3000, area: 6387, error: 12 }],
+};
 /** A band that North's contributor proposed, attested by their lead where the guests' folio is to show it. */
 async function bandOf(f: Fixture, { attested = false } = {}): Promise<string> {
   const id = await spectrumOf(f);
@@ -114,6 +122,11 @@ export const rows: Record<string, MatrixRow> = {
     send: async (f) => ({ path: `/api/spectra/${await labOnlySpectrum(f)}/points` }),
     expect: labReads,
   },
+  listSimilar: { send: async (f) => ({ path: `/api/spectra/${await sharedSpectrum(f)}/similar` }), expect: reads },
+  'listSimilar, lab only': {
+    send: async (f) => ({ path: `/api/spectra/${await labOnlySpectrum(f)}/similar` }),
+    expect: labReads,
+  },
   readBands: { send: async (f) => ({ path: `/api/spectra/${await sharedSpectrum(f)}/bands` }), expect: reads },
   'readBands, lab only': {
     send: async (f) => ({ path: `/api/spectra/${await labOnlySpectrum(f)}/bands` }),
@@ -121,6 +134,10 @@ export const rows: Record<string, MatrixRow> = {
   },
   replaceBands: {
     send: async (f) => ({ path: `/api/spectra/${await spectrumOf(f)}/bands`, json: [band] }),
+    expect: statuses({ guests: 403, readToken: 403, southMembers: 403, others: 200 }),
+  },
+  replaceFittedBands: {
+    send: async (f) => ({ path: `/api/spectra/${await spectrumOf(f)}/fit`, json: { bands: [fittedBand], fit } }),
     expect: statuses({ guests: 403, readToken: 403, southMembers: 403, others: 200 }),
   },
   attestBand: {
