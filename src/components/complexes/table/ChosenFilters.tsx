@@ -64,6 +64,12 @@ function setChosen(
       return 'one folio';
     case 'q':
       return `“${value}”`;
+    case 'substructure':
+      return (
+        <>
+          fragment <span className="num">{value}</span>
+        </>
+      );
     default:
       return value;
   }

@@ -25,7 +25,7 @@ const CLASSES = ['d-d', 'LMCT', 'MLCT', 'intraligand', 'interligand', 'intervale
 
 /** Everything one can filter by; what is asked most is always in sight. */
 export function Console({ view, facets, names, onChange, aside }: ConsoleProps) {
-  const hidden = MORE.filter((name) => view.lists[name].length > 0).length;
+  const hidden = MORE.filter((name) => view.lists[name].length > 0).length + (view.substructure ? 1 : 0);
   const [showsMore, setShowsMore] = useState(hidden > 0);
   const moreId = useId();
   const facet = (name: ListFilter) => ({
@@ -60,12 +60,28 @@ export function Console({ view, facets, names, onChange, aside }: ConsoleProps) 
           <FacetList title="Spin state" {...facet('spinState')} show={spinWords} nameOf={spinWords} />
           <FacetList title="Ligand" {...facet('ligand')} show={(ligand) => <Formula formula={ligand} />} isSearchable />
           <FacetList title="Lab, home or measuring" {...facet('lab')} isSearchable />
+          <div className="min-w-0">
+            <p className="mb-1 text-xs text-ink-soft">Ligand holds the fragment</p>
+            <SearchField
+              label="Fragment of a ligand as SMILES"
+              placeholder="SMILES, such as c1ccncc1"
+              longest={500}
+              value={view.substructure}
+              onSet={(substructure) => onChange(changeView(view, { substructure }))}
+            />
+          </div>
           <Choices title="Has a band of class" values={CLASSES} {...facet('bandClass')} show={bandClassWords} />
           <Choices title="State" values={['draft', 'registered', 'withdrawn']} {...facet('state')} show={stateWords} />
         </div>
       )}
       <div className="mt-3 flex flex-wrap items-center gap-2 border-t border-faint pt-3">
-        <SearchField value={view.q} onSet={(q) => onChange(changeView(view, { q }))} />
+        <SearchField
+          label="Search by formula, accession, ligand or element"
+          placeholder="formula, accession, ligand, element"
+          longest={200}
+          value={view.q}
+          onSet={(q) => onChange(changeView(view, { q }))}
+        />
         <button
           type="button"
           aria-expanded={showsMore}
@@ -119,8 +135,16 @@ function Choices({
   );
 }
 
-/** Words in formula, ligand names, accession; asked once the typing rests. */
-function SearchField({ value, onSet }: { value: string; onSet: (text: string) => void }) {
+interface SearchFieldProps {
+  label: string;
+  placeholder: string;
+  longest: number;
+  value: string;
+  onSet: (text: string) => void;
+}
+
+/** Text to look for, asked once the typing rests. */
+function SearchField({ label, placeholder, longest, value, onSet }: SearchFieldProps) {
   const [text, setText] = useState(value);
   const timer = useRef<ReturnType<typeof setTimeout>>(undefined);
   const asked = useRef(value);
@@ -133,10 +157,10 @@ function SearchField({ value, onSet }: { value: string; onSet: (text: string) =>
   return (
     <input
       type="search"
-      aria-label="Search by formula, accession, ligand or element"
-      placeholder="formula, accession, ligand, element"
+      aria-label={label}
+      placeholder={placeholder}
       value={text}
-      maxLength={200}
+      maxLength={longest}
       onChange={(event) => {
         const next = event.currentTarget.value;
         setText(next);

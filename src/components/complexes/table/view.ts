@@ -11,6 +11,8 @@ export interface ComplexView {
   bandTo: string;
   minEpsilon: string;
   q: string;
+  /** SMILES of a fragment of a ligand. */
+  substructure: string;
   folio: string;
   sort: string;
   /** Counted from 1. */
@@ -73,6 +75,7 @@ export function readView(search: URLSearchParams): ComplexView {
     bandTo: number('bandTo'),
     minEpsilon: number('minEpsilon'),
     q: (search.get('q') ?? '').slice(0, 200),
+    substructure: (search.get('substructure') ?? '').slice(0, 500),
     folio: search.get('folio') ?? '',
     sort: SORTS.test(sort) ? sort : DEFAULT_SORT,
     page: Number.isInteger(page) && page >= 1 && page <= 10_000 ? page : 1,
@@ -85,6 +88,7 @@ export function filterSearch(view: ComplexView): URLSearchParams {
   for (const name of LIST_FILTERS) if (view.lists[name].length > 0) search.set(name, view.lists[name].join(','));
   for (const name of NUMBER_FILTERS) if (isFilterNumber(name, view[name])) search.set(name, view[name]);
   if (view.q.trim()) search.set('q', view.q.trim());
+  if (view.substructure.trim()) search.set('substructure', view.substructure.trim());
   if (view.folio) search.set('folio', view.folio);
   return search;
 }
@@ -128,7 +132,7 @@ export const hasFilters = (view: ComplexView): boolean => filterSearch(view).siz
 /** One thing that is chosen, with the view without it. */
 export interface Chosen {
   key: string;
-  filter: ListFilter | 'band' | 'q' | 'folio';
+  filter: ListFilter | 'band' | 'q' | 'substructure' | 'folio';
   value: string;
   without: ComplexView;
 }
@@ -143,12 +147,13 @@ export function chosenOf(view: ComplexView): Chosen[] {
       without: toggleValue(view, filter, value),
     })),
   );
-  const one = (filter: 'band' | 'q' | 'folio', value: string, part: Partial<ComplexView>) =>
+  const one = (filter: 'band' | 'q' | 'substructure' | 'folio', value: string, part: Partial<ComplexView>) =>
     value ? [{ key: filter, filter, value, without: changeView(view, part) }] : [];
   return [
     ...lists,
     ...one('band', bandText(view), { bandFrom: '', bandTo: '', minEpsilon: '' }),
     ...one('q', view.q.trim(), { q: '' }),
+    ...one('substructure', view.substructure.trim(), { substructure: '' }),
     ...one('folio', view.folio, { folio: '' }),
   ];
 }
