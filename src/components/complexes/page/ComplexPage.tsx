@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import type { LigandReading } from '#src/chem/formula/index.ts';
+import { LevelsOfComplex } from '#src/components/ligand-field/LevelsOfComplex.tsx';
 import { SymmetryOfComplex } from '#src/components/symmetry/SymmetryOfComplex.tsx';
 import { Button, ButtonLink } from '#src/components/ui/Button.tsx';
 import { StatusLine } from '#src/components/ui/StatusLine.tsx';
@@ -59,6 +60,12 @@ export function ComplexPage({ first, ligands, answers, labs, sentences }: Comple
           )}
           <SpectraPanel spectra={first.spectra} total={first.totalSpectra} bandLists={bandLists} addAt={addAt} />
           <BandsPanel lists={bandLists} hasSpectra={first.spectra.length > 0} />
+          <LevelsOfComplex
+            complex={complex}
+            ligands={ligands}
+            lists={bandLists}
+            maySave={labs !== null && complex.state !== 'withdrawn'}
+          />
           <SymmetryOfComplex complex={complex} lists={bandLists} />
           <div className={`grid items-start gap-5 ${labs ? 'xl:grid-cols-[minmax(0,1fr)_minmax(0,1fr)]' : ''}`}>
             {labs && <PreparationsPanel complex={complex} labs={labs} onAdded={saved('The preparation is added')} />}
