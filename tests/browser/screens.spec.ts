@@ -22,7 +22,7 @@ const people = [
   { who: 'nobody', email: null, paths: ['/signin', '/outbox', '/join', '/reset', '/confirm-address'] },
   { who: 'contributor', email: 'contributor@demo.example', paths: [...MEMBER, '/tokens', '/account'] },
   { who: 'lead', email: 'lead@demo.example', paths: ['/', '/folios'] },
-  { who: 'steward', email: 'steward@demo.example', paths: ['/', '/labs', '/people'] },
+  { who: 'steward', email: 'steward@demo.example', paths: ['/', '/labs', '/people', '/trail', '/merges'] },
   { who: 'guest', email: 'guest@demo.example', paths: GUEST },
 ] as const;
 
