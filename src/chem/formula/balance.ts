@@ -119,24 +119,33 @@ function mismatch(
   const usual = stated || !first ? [] : first.candidates;
   const chosen = usual.find((c) => String(c.charge) === answer);
   if (first && chosen) return settle(new Map([[first, chosen.charge]]), ions + others + chosen.charge * first.count);
+  const choices = [
+    ...(stated
+      ? [
+          {
+            value: 'stated',
+            label: `the charge stated, ${chargeOf(first?.typed ?? 0) || '0'}; counter-ions are missing or too many`,
+          },
+        ]
+      : []),
+    ...(canBalance ? [{ value: 'balance', label: `the charge that balances, ${chargeOf(balancing) || '0'}` }] : []),
+    ...usual.map((c) => ({ value: String(c.charge), label: `charge ${chargeOf(c.charge) || '0'}` })),
+  ];
+  const at = salt.entities[0]?.start ?? 0;
+  if (choices.length === 0)
+    throw refuse(
+      'ambiguous',
+      'no charge of the entity balances the ions: write it behind the bracket',
+      context.source,
+      at,
+    );
   context.ask({
     code,
     detail: stated
       ? `The charges typed sum to ${ions + unknowns.reduce((s, u) => s + (u.typed ?? 0) * u.count, 0)}, not to ${rest + ions}.`
-      : `No whole charge of the entity balances the counter-ions (${balancing} would).`,
-    choices: [
-      ...(stated
-        ? [
-            {
-              value: 'stated',
-              label: `the charge stated, ${chargeOf(first?.typed ?? 0) || '0'}; counter-ions are missing or too many`,
-            },
-          ]
-        : []),
-      ...(canBalance ? [{ value: 'balance', label: `the charge that balances, ${chargeOf(balancing) || '0'}` }] : []),
-      ...usual.map((c) => ({ value: String(c.charge), label: `charge ${chargeOf(c.charge) || '0'}` })),
-    ],
-    position: context.source.at[salt.entities[0]?.start ?? 0],
+      : `No whole charge of the entity balances the counter-ions (${Number(balancing.toFixed(3))} would).`,
+    choices,
+    position: context.source.at[at],
   });
   return null;
 }

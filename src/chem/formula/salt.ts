@@ -9,6 +9,9 @@ import { descriptorOf, stereoBefore, withoutStereo } from './stereo.ts';
 import { type Component, countOf, type Group, type Item, readCharge, refuse } from './syntax.ts';
 import { interpretUnbracketed } from './unbracketed.ts';
 
+/** As many entities and bare metal ions as charges are shared out over. */
+const MOST_UNKNOWNS = 8;
+
 /** Everything typed, taken apart into entities, free ions and solvates. */
 export function interpretSalt(components: readonly Component[], context: Context): RawSalt {
   const salt: RawSalt = { entities: [], ions: [], bareMetals: [], solvates: [], overallCharge: null };
@@ -22,6 +25,9 @@ export function interpretSalt(components: readonly Component[], context: Context
     salt.solvates.push(...part.solvates.map((one) => ({ ...one, count: one.count * k })));
     if (part.overallCharge !== null) salt.overallCharge = (salt.overallCharge ?? 0) + part.overallCharge * k;
   }
+  const beyond = [...salt.entities, ...salt.bareMetals][MOST_UNKNOWNS];
+  if (beyond)
+    throw refuse('too-large', `more than ${MOST_UNKNOWNS} complexes and metal ions`, context.source, beyond.start);
   salt.ions = mergeIons(salt.ions);
   salt.solvates = mergeSolvates(salt.solvates);
   return salt;

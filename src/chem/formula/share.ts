@@ -264,12 +264,17 @@ function shareBetweenElements(entity: RawEntity, charge: number, metals: RawMeta
     const centres = centresOf(entity, (m) => chosen[m.element] ?? null);
     return { centres: centres.map((c) => ({ ...c, nominal: true })), ligandCharges: new Map(), settled: true };
   }
+  if (context.answers[code] === 'open')
+    return { centres: centresOf(entity, () => null), ligandCharges: new Map(), settled: true };
   context.ask({
     code,
     detail: `${metals.map((m) => m.element).join(' and ')} share the charge; the formula alone does not say how.`,
-    choices: splits
-      .slice(0, 6)
-      .map((s) => ({ value: keyOf(s), label: metals.map((m) => stateLabel(m.element, s[m.element]!)).join(' ') })),
+    choices: [
+      ...splits
+        .slice(0, 6)
+        .map((s) => ({ value: keyOf(s), label: metals.map((m) => stateLabel(m.element, s[m.element]!)).join(' ') })),
+      { value: 'open', label: 'not known: leave the oxidation states out' },
+    ],
     position: context.source.at[entity.start],
   });
   return null;
