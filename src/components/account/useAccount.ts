@@ -2,6 +2,7 @@ import { useMutation, useQuery } from '@tanstack/react-query';
 import type { Account, AddressChangeInput, PasswordChange, SessionRecord } from '../../contracts/account.ts';
 import { getJson, getVersioned, sendJson } from '../ui/http.ts';
 import { queryClient } from '../ui/query-client.ts';
+import { leaveNothing } from '../ui/signed-out.ts';
 
 const ACCOUNT = ['account'];
 const SESSIONS = ['account', 'sessions'];
@@ -81,7 +82,10 @@ export function useSessions(first: SessionRecord[]) {
   const endAll = useMutation(
     {
       mutationFn: () => sendJson('DELETE', '/api/account/sessions'),
-      onSuccess: () => location.assign('/signin'),
+      onSuccess: () => {
+        leaveNothing();
+        location.assign('/signin');
+      },
     },
     queryClient,
   );

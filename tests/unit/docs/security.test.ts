@@ -69,7 +69,7 @@ describe('the page about security', () => {
   });
 
   test('says of every item of the checklist, once, how it stands', () => {
-    const rows = [...page.matchAll(/\| (\d+\.\d+\.\d+) \| (met|partly|open|operator|n\/a) \|/g)].map(
+    const rows = [...page.matchAll(/- \*\*(\d+\.\d+\.\d+)\*\* \((?:met|partly|open|operator|n\/a)\): /g)].map(
       ([, item]) => item,
     );
     expect([...rows].sort()).toEqual([...items].sort());
