@@ -98,7 +98,7 @@ function firstSeeds(curve: Curve, { signed }: Settings, edge: boolean, most: num
   const sides = signed ? [1, -1] : [1];
   const seeds = sides.flatMap((sign) => {
     const y = sign === 1 ? curve.y : curve.y.map((value) => -value);
-    return pickBands(curve.x, y, { prominence: 0.02 }).map(({ wavenumber, height, fwhm }) => ({
+    return pickBands(curve.x, y, { prominence: 0.02, count: most }).map(({ wavenumber, height, fwhm }) => ({
       wavenumber,
       height: sign * height,
       fwhm: fwhm ?? curve.width / 8,

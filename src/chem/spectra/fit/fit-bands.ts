@@ -33,6 +33,8 @@ export interface FittedErrors {
 }
 
 export interface FittedBand {
+  /** Its place in the components that the fit began with, from 0. */
+  component: number;
   /** cm⁻¹ */
   wavenumber: number;
   height: number;
@@ -130,6 +132,7 @@ function bandOf(fit: CurveFit, band: number, maxima: readonly number[]): FittedB
   const relativeArea = covariance && entry(1, 1) / height ** 2 + entry(2, 2) + (2 * entry(1, 2)) / height;
   const areaError = relativeArea === null ? null : Math.abs(area) * Math.sqrt(Math.max(0, relativeArea));
   return {
+    component: band,
     wavenumber,
     height,
     fwhm,
