@@ -340,3 +340,49 @@ describe('judgement', () => {
     expect((await judge(bare, 'attest', lead.token)).status).toBe(422);
   });
 });
+
+describe('fitted bands', () => {
+  const component = { wavenumber: 14_000.4, height: 12.4, fwhm: 2300, area: 44_800, error: 9 };
+  const fit = {
+    points: 20,
+    quantity: 'epsilon',
+    wavelengthCheck: 0.3,
+    steps: [
+      { operation: 'settings', parameters: { shape: 'lorentzian', count: 1, edge: false, constant: false } },
+      { operation: 'find', parameters: {} },
+    ],
+    components: [component],
+  };
+  const fitted = { ...first, wavenumber: 14_000.4, found: 'fitted' };
+  const putFit = (json: unknown) => call('PUT', `/api/spectra/${spectrum.id}/fit`, { as: ada.token, json });
+
+  test('come with their history, the uncertainty of fit and instrument, and the strength of their shape', async () => {
+    const [band] = await json<[Band]>(putFit({ bands: [fitted], fit }));
+    // 1 nm is 14 000.4² / 1e7 = 19.601 cm⁻¹; 0.3 nm by the check, a tenth of the bandwidth of 2 nm.
+    expect(band.uncertainty as number).toBeCloseTo(Math.hypot(9, 0.3 * 19.601, 0.2 * 19.601), 2);
+    expect(band.oscillatorStrength as number).toBeCloseTo(4.319e-9 * 44_800, 9);
+    expect((await read()).fit).toEqual(fit);
+  });
+
+  test('keep history and uncertainty when an assignment is mended without it, and lose it with the last of them', async () => {
+    const [band] = await json<[Band]>(putFit({ bands: [fitted], fit }));
+    const mended = { ...fitted, id: band.id, assignment: { class: 'LMCT' } };
+    const [after] = await json<[Band]>(put([mended]));
+    expect(after).toMatchObject({ id: band.id, uncertainty: band.uncertainty });
+    expect((await read()).fit).toEqual(fit);
+    await json(put([second]));
+    expect((await read()).fit).toBeNull();
+  });
+
+  test('are refused as a whole where a step is none, or where no band was fitted', async () => {
+    const before = await read();
+    const pointer = async (body: unknown) =>
+      (await json<{ errors: { pointer: string }[] }>(putFit(body), 422)).errors[0]!.pointer;
+    expect(await pointer({ bands: [fitted], fit: { ...fit, steps: [{ operation: 'guess', parameters: {} }] } })).toBe(
+      '#/fit/steps/0/operation',
+    );
+    expect(await pointer({ bands: [first], fit })).toBe('#/fit');
+    expect(await pointer({ bands: [{ ...fitted, id: 'nobody' }], fit })).toBe('#/bands/0/id');
+    expect(await read()).toEqual(before);
+  });
+});

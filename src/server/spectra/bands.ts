@@ -1,5 +1,5 @@
 import { eq, inArray } from 'drizzle-orm';
-import type { BandList } from '#src/contracts/spectra.ts';
+import type { BandList, FitHistory } from '#src/contracts/spectra.ts';
 import { bands, centres } from '#src/db/schema/index.ts';
 import type { SpectrumPropose } from '#src/server/access/records.ts';
 import { database } from '#src/server/database.ts';
@@ -8,6 +8,7 @@ import { newId } from '#src/server/ids.ts';
 import { notifyMentions } from '#src/server/mentions/notify.ts';
 import { record } from '#src/server/trail.ts';
 import { takeVersion } from './change.ts';
+import { historyFor } from './fit-history.ts';
 import { bandContext, deriveBand } from './quantities.ts';
 import { refuse } from './refuse.ts';
 import { speciesCount } from './species-count.ts';
@@ -37,12 +38,12 @@ const told = ({ wavenumber, height, quantity, fwhm, shoulder, found, assignment 
 const same = (a: Told, b: Told, names: readonly (keyof Told)[]) => names.every((name) => a[name] === b[name]);
 
 /** For each band of the list the one that stands for it: by its id, else by being equal in everything. */
-function pairUp(list: readonly Input[], standing: readonly Band[]): (Band | undefined)[] {
+function pairUp(list: readonly Input[], standing: readonly Band[], at: string): (Band | undefined)[] {
   const free = new Map(standing.map((band) => [band.id, band]));
   const pairs = list.map((input, i) => {
     if (input.id === undefined) return undefined;
     const band = free.get(input.id);
-    if (!band) throw refuse(`#/${i}/id`, 'This spectrum has no such band, or the list names it twice');
+    if (!band) throw refuse(`${at}/${i}/id`, 'This spectrum has no such band, or the list names it twice');
     free.delete(input.id);
     return band;
   });
@@ -58,11 +59,18 @@ function pairUp(list: readonly Input[], standing: readonly Band[]): (Band | unde
  * Put a list of bands in the place of those that stand. A band of which nothing changed keeps its id and its
  * judgement; one that changed is proposed again, by whoever changed its assignment; one left out is gone.
  *
+ * @param fit - how the fitted ones were found, where that is told anew
  * @throws {HttpError} 422 for an id or a centre that is not there, 409 for a withdrawn spectrum, 412
  */
-export async function replaceBands({ asker, complex, spectrum }: SpectrumPropose, list: BandList): Promise<void> {
+export async function replaceBands(
+  { asker, complex, spectrum }: SpectrumPropose,
+  list: BandList,
+  fit?: FitHistory,
+): Promise<void> {
   if (spectrum.state === 'withdrawn')
     throw new HttpError(409, 'This spectrum is withdrawn: its bands stay as they are');
+  const history = historyFor(list, fit, spectrum.history);
+  const at = fit ? '#/bands' : '#';
   const { write } = await database();
   await write(async (tx) => {
     const standing = await tx.select().from(bands).where(eq(bands.spectrumId, spectrum.id));
@@ -70,10 +78,10 @@ export async function replaceBands({ asker, complex, spectrum }: SpectrumPropose
     list.forEach(({ assignment }, i) => {
       const centre = assignment?.centre;
       if (centre !== undefined && !known.some(({ ordinal }) => ordinal === centre))
-        throw refuse(`#/${i}/assignment/centre`, 'The complex has no such centre');
+        throw refuse(`${at}/${i}/assignment/centre`, 'The complex has no such centre');
     });
-    const pairs = pairUp(list, standing);
-    const context = bandContext(spectrum, await speciesCount(spectrum.id, tx));
+    const pairs = pairUp(list, standing, at);
+    const context = bandContext({ ...spectrum, history }, await speciesCount(spectrum.id, tx));
     const kept = new Set(pairs.flatMap((band) => band?.id ?? []));
     const gone = standing.filter(({ id }) => !kept.has(id));
     if (gone.length > 0)
@@ -114,7 +122,7 @@ export async function replaceBands({ asker, complex, spectrum }: SpectrumPropose
       else await tx.insert(bands).values({ id, spectrumId: spectrum.id, ...row });
       await notifyMentions(tx, asker, { text: now.reason, before: before?.reason, subject: { type: 'band', id } });
     }
-    await takeVersion(tx, spectrum);
+    await takeVersion(tx, spectrum, { history });
     await record(tx, asker, {
       action: 'propose-bands',
       subjectType: 'spectrum',
@@ -123,6 +131,7 @@ export async function replaceBands({ asker, complex, spectrum }: SpectrumPropose
         changed,
         gone: gone.map(({ id, wavenumber, state }) => ({ id, wavenumber, state })),
         kept: list.length - changed.length,
+        ...(fit ? { fit } : {}),
       },
     });
   });

@@ -1,5 +1,6 @@
 import {
   type CellConditions,
+  combinedPositionError,
   gaussianArea,
   molarAbsorptionCoefficient,
   oscillatorStrength,
@@ -7,7 +8,9 @@ import {
   wavenumberInterval,
   type YUnit,
 } from '#src/chem/spectra/index.ts';
+import type { FitHistory } from '#src/contracts/spectra.ts';
 import type { bands, spectra } from '#src/db/schema/index.ts';
+import { componentOf, fitOf } from './fit-history.ts';
 
 type Spectrum = typeof spectra.$inferSelect;
 type Band = typeof bands.$inferSelect;
@@ -31,6 +34,8 @@ export interface BandContext {
   mixture: boolean;
   /** nm */
   bandwidth: number | null;
+  /** How the fitted bands were found. */
+  fit: FitHistory | null;
 }
 
 /** @param speciesCount - how many species absorb; with more than one no ε belongs to the complex */
@@ -40,12 +45,13 @@ export function bandContext(
     concentration,
     pathLength,
     bandwidth,
-  }: Pick<Spectrum, 'technique' | 'concentration' | 'pathLength' | 'bandwidth'>,
+    history,
+  }: Pick<Spectrum, 'technique' | 'concentration' | 'pathLength' | 'bandwidth' | 'history'>,
   speciesCount: number,
 ): BandContext {
   const mixture = speciesCount > 1;
   const known = !mixture && ABSORBING.has(technique) && concentration && pathLength;
-  return { cell: known ? { concentration, pathLength } : null, mixture, bandwidth };
+  return { cell: known ? { concentration, pathLength } : null, mixture, bandwidth, fit: fitOf(history) };
 }
 
 /** Stored ordinates as ε, or null where the conditions do not give it. */
@@ -58,21 +64,40 @@ export function epsilonOf(value: Float64Array, quantity: YUnit, cell: CellCondit
 /**
  * What follows from a band and the conditions of its spectrum.
  *
- * ε is per mole of the entity. The oscillator strength is that of a Gaussian of this height and width. The uncertainty
- * of the position is what the spectral bandwidth alone leaves, taken as a rectangle of that width (JCGM 100:2008,
- * 4.3.7); a typed position has none that is known here.
+ * ε is per mole of the entity. The oscillator strength is that of a Gaussian of this height and width, or of the shape
+ * that was fitted. The uncertainty of a picked position is what the spectral bandwidth alone leaves, taken as a rectangle
+ * of that width (JCGM 100:2008, 4.3.7); that of a fitted one combines fit, wavelength check and bandwidth; a typed
+ * position has none that is known here.
  */
 export function deriveBand(
   band: Pick<Band, 'wavenumber' | 'height' | 'quantity' | 'fwhm' | 'found'>,
-  { cell, mixture, bandwidth }: BandContext,
+  { cell, mixture, bandwidth, fit }: BandContext,
 ): Pick<Band, 'epsilon' | 'oscillatorStrength' | 'uncertainty'> {
   const epsilon = mixture ? null : epsilonOfBand(band, cell);
+  const component = band.found === 'fitted' ? componentOf(fit, band.wavenumber) : undefined;
   return {
     epsilon,
-    oscillatorStrength:
-      epsilon !== null && epsilon > 0 && band.fwhm ? oscillatorStrength(gaussianArea(epsilon, band.fwhm)) : null,
-    uncertainty: band.found === 'typed' || !bandwidth ? null : bandwidthUncertainty(band.wavenumber, bandwidth),
+    oscillatorStrength: strengthOf(epsilon, band, component),
+    uncertainty: component ? fittedUncertainty(component, fit, bandwidth) : positionUncertainty(band, bandwidth),
   };
+}
+
+type Component = FitHistory['components'][number];
+
+function strengthOf(epsilon: number | null, { fwhm }: Pick<Band, 'fwhm'>, component: Component | undefined) {
+  if (epsilon === null || !(epsilon > 0) || !fwhm) return null;
+  const isOwnWidth = component && component.height !== 0 && component.fwhm === fwhm;
+  return oscillatorStrength(isOwnWidth ? (epsilon * component.area) / component.height : gaussianArea(epsilon, fwhm));
+}
+
+/** Null where nothing but a locked position is known. */
+function fittedUncertainty({ wavenumber, error }: Component, fit: FitHistory | null, bandwidth: number | null) {
+  const instrument = { wavelengthCheck: fit?.wavelengthCheck ?? undefined, bandwidth: bandwidth ?? undefined };
+  return combinedPositionError(wavenumber, error, instrument) || null;
+}
+
+function positionUncertainty({ found, wavenumber }: Pick<Band, 'found' | 'wavenumber'>, bandwidth: number | null) {
+  return found === 'typed' || !bandwidth ? null : bandwidthUncertainty(wavenumber, bandwidth);
 }
 
 function epsilonOfBand({ height, quantity }: Pick<Band, 'height' | 'quantity'>, cell: CellConditions | null) {

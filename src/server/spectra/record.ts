@@ -14,6 +14,7 @@ import { database } from '#src/server/database.ts';
 import { notInSight } from '#src/server/http.ts';
 import { describeBands } from './band-record.ts';
 import { cautionsOf } from './cautions.ts';
+import { fitOf } from './fit-history.ts';
 import { solventsOf, summaryColumns, summaryOf } from './summary.ts';
 
 /** A spectrum with its conditions and bands, as this asker gets it. */
@@ -68,6 +69,7 @@ export async function describeSpectrum(access: SpectrumAccess): Promise<Spectrum
     reading: spectrum.reading,
     warnings: spectrum.warnings,
     bands,
+    fit: seesAsMember(asker, fresh.complex, spectrum) ? fitOf(spectrum.history) : null,
     cautions: await cautionsOf(fresh, solvent),
     may: {
       change: canChangeSpectrum(asker, spectrum),
