@@ -1,14 +1,24 @@
 import type { BandRecord, SpectrumSummary } from '#src/contracts/spectra.ts';
 import { mediumText } from '../words.ts';
 
-type SentenceBand = Pick<BandRecord, 'wavenumber' | 'epsilon' | 'shoulder'>;
+type SentenceBand = Pick<BandRecord, 'wavenumber' | 'epsilon' | 'shoulder'> &
+  Partial<Pick<BandRecord, 'found' | 'uncertainty'>>;
 
 /** Three significant figures, as papers give ε; no grouping, so that the text can be read again by programs. */
 const rounded = (epsilon: number) => String(Number(epsilon.toPrecision(3)));
 
+/** A wavelength in whole nm; of a fitted band with its standard uncertainty to two figures: `464.03 ± 0.86`. */
+function positionText({ wavenumber, found, uncertainty }: SentenceBand): string {
+  const wavelength = 1e7 / wavenumber;
+  if (found !== 'fitted' || !uncertainty) return String(Math.round(wavelength));
+  const error = (uncertainty * wavelength ** 2) / 1e7;
+  const decimals = Math.min(6, Math.max(0, 1 - Math.floor(Math.log10(error))));
+  return `${wavelength.toFixed(decimals)} ± ${error.toFixed(decimals)}`;
+}
+
 /**
  * A band list as the sentence papers use: `λmax/nm (ε/dm³ mol⁻¹ cm⁻¹): 351 (33), 464sh (40); water, 298 K`. Longest
- * wavelength last; a band without ε stands with its wavelength alone.
+ * wavelength last; fitted positions with their standard uncertainty; a band without ε stands with its wavelength alone.
  *
  * @returns null where there is no band
  */
@@ -18,8 +28,9 @@ export function bandSentence(
 ): string | null {
   if (bands.length === 0) return null;
   const rising = [...bands].sort((a, b) => b.wavenumber - a.wavenumber);
-  const parts = rising.map(({ wavenumber, epsilon, shoulder }) => {
-    const position = `${Math.round(1e7 / wavenumber)}${shoulder ? 'sh' : ''}`;
+  const parts = rising.map((band) => {
+    const { epsilon, shoulder } = band;
+    const position = `${positionText(band)}${shoulder ? 'sh' : ''}`;
     return epsilon === null ? position : `${position} (${rounded(epsilon)})`;
   });
   const head = rising.some(({ epsilon }) => epsilon !== null) ? 'λmax/nm (ε/dm³ mol⁻¹ cm⁻¹)' : 'λmax/nm';

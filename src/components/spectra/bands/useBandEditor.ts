@@ -1,7 +1,7 @@
 import { useMemo, useState } from 'react';
 import { getJson, sendJson } from '#src/components/ui/http.ts';
 import { useDraft } from '#src/components/ui/useDraft.ts';
-import type { BandRecord, SpectrumRecord } from '#src/contracts/spectra.ts';
+import type { BandRecord, FitHistory, SpectrumRecord } from '#src/contracts/spectra.ts';
 import type { FetchedCurve } from '../page/curves.ts';
 import {
   type BandDraft,
@@ -22,8 +22,10 @@ interface Kept {
   base: string;
   /** Null while nothing is changed. */
   list: BandDraft[] | null;
+  /** How the fitted bands of the list were found, where they were fitted since. */
+  fit: FitHistory | null;
 }
-const NOTHING: Kept = { base: '', list: null };
+const NOTHING: Kept = { base: '', list: null, fit: null };
 
 const asSent = (bands: readonly BandRecord[]) => JSON.stringify(bandInputs(bands.map(draftOf)));
 
@@ -39,7 +41,8 @@ export function useBandEditor(spectrum: SpectrumRecord, curve: FetchedCurve | nu
   const list = draft.list ?? standing;
   const candidates = useMemo(() => (curve ? pickable(curve) : []), [curve]);
   const quantity = curve ? heightQuantity(curve.quantity) : null;
-  const isChanged = draft.list !== null && !sameBands(draft.list, standing);
+  const hasNewFit = draft.fit !== null && list.some(({ found }) => found === 'fitted');
+  const isChanged = draft.list !== null && (hasNewFit || !sameBands(draft.list, standing));
   const isStale = isChanged && draft.base !== asSent(bands);
 
   const set = (work: { list: BandDraft[]; past: BandDraft[][] }) => {
@@ -69,7 +72,8 @@ export function useBandEditor(spectrum: SpectrumRecord, curve: FetchedCurve | nu
         onSaved(); // reads the record again, which shows that it is another than the one worked on
         return;
       }
-      await sendJson('PUT', `/api/spectra/${id}/bands`, bandInputs(list));
+      if (hasNewFit) await sendJson('PUT', `/api/spectra/${id}/fit`, { bands: bandInputs(list), fit: draft.fit });
+      else await sendJson('PUT', `/api/spectra/${id}/bands`, bandInputs(list));
       forget();
       setSaid('Saved');
       onSaved();
@@ -98,6 +102,11 @@ export function useBandEditor(spectrum: SpectrumRecord, curve: FetchedCurve | nu
     pick: (wavenumber: number) => {
       const found = curve && bandAt(curve, candidates, wavenumber);
       if (found) add(found);
+    },
+    /** The list with fitted bands in it, and how they were found. */
+    takeFitted: (next: BandDraft[], fit: FitHistory) => {
+      put(next, `${fit.components.length} fitted bands taken over; look at each before you save`);
+      change({ fit });
     },
     takeOffered: () => {
       if (!quantity) return;

@@ -14,6 +14,7 @@ import { heightAt } from '../bands/band-list.ts';
 import { bandSentence } from '../bands/band-sentence.ts';
 import { CopyButton } from '../bands/CopyButton.tsx';
 import { useBandEditor } from '../bands/useBandEditor.ts';
+import { FitPanel } from '../fit/FitPanel.tsx';
 import { Banner } from './Banner.tsx';
 import { ConditionsPanel } from './ConditionsPanel.tsx';
 import { CurvePanel } from './CurvePanel.tsx';
@@ -36,6 +37,7 @@ export function SpectrumPage({ first, choices, preparation, sentences }: Spectru
   const curve = useCurve(spectrum);
   const [open, setOpen] = useState<'conditions' | StateChange | null>(null);
   const [isEditing, setIsEditing] = useState(false);
+  const [isFitting, setIsFitting] = useState(false);
   const [said, setSaid] = useState<string | null>(null);
   const editing = useBandEditor(spectrum, curve.data ?? null, () => void reload());
   const { may, state, bands } = spectrum;
@@ -85,18 +87,36 @@ export function SpectrumPage({ first, choices, preparation, sentences }: Spectru
       <div className="grid items-start gap-6 lg:grid-cols-[minmax(0,1fr)_360px]">
         <div className="grid min-w-0 grid-cols-[minmax(0,1fr)] gap-5">
           <Problem problem={curve.error} onRetry={() => void curve.refetch()} />
-          <CurvePanel
-            spectrum={spectrum}
-            curve={curve.data ?? null}
-            bands={shownBands}
-            onPick={isEditing ? editing.pick : undefined}
-          />
+          {isFitting && curve.data ? (
+            <FitPanel
+              spectrum={spectrum}
+              curve={curve.data}
+              editing={editing}
+              onTaken={() => {
+                setIsFitting(false);
+                setIsEditing(true);
+              }}
+              onClose={() => setIsFitting(false)}
+            />
+          ) : (
+            <CurvePanel
+              spectrum={spectrum}
+              curve={curve.data ?? null}
+              bands={shownBands}
+              onPick={isEditing ? editing.pick : undefined}
+            />
+          )}
           <Panel
             title="Bands"
             aside={
               <span className="flex flex-wrap items-center gap-3">
                 {sentence && !isEditing && (
                   <CopyButton text={sentence} what="the band list" label="Copy as a sentence" />
+                )}
+                {may.propose && !isFitting && editing.quantity && (
+                  <Button size="small" onClick={() => setIsFitting(true)}>
+                    Fit bands
+                  </Button>
                 )}
                 {may.propose && !isEditing && (
                   <Button size="small" onClick={() => setIsEditing(true)}>

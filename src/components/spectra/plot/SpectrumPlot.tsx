@@ -8,7 +8,7 @@ import { joinSeries, nearestIndex } from './join-series.ts';
 import { PlotKey } from './PlotKey.tsx';
 import { PlotOverlay } from './PlotOverlay.tsx';
 import { PlotTable } from './PlotTable.tsx';
-import type { PlotBand, PlotSeries } from './types.ts';
+import type { PlotArea, PlotBand, PlotSeries } from './types.ts';
 import { fromWavenumber, toWavenumber, X_FIGURES, X_TITLES, type XUnit, Y_TITLES, type YUnit } from './units.ts';
 import { useSpectrumPlot } from './useSpectrumPlot.ts';
 import { panned, type ViewWindow, zoomed } from './view-window.ts';
@@ -27,6 +27,10 @@ export interface SpectrumPlotProps {
   label?: string;
   /** A place chosen by click or Enter: cm⁻¹, and y as the axis shows it. */
   onPick?: (wavenumber: number, y: number) => void;
+  /** What is laid over the axes, such as handles. */
+  overlay?: (area: PlotArea) => ReactNode;
+  /** What is drawn under the axes in line with them. */
+  below?: (area: PlotArea) => ReactNode;
 }
 
 const NO_BANDS: readonly PlotBand[] = [];
@@ -40,6 +44,8 @@ export function SpectrumPlot({
   height = 320,
   label = 'Spectrum',
   onPick,
+  overlay,
+  below,
 }: SpectrumPlotProps) {
   const host = useRef<HTMLDivElement>(null);
   // In cm⁻¹, so that window and cursor stay where they are when the unit changes.
@@ -128,21 +134,30 @@ export function SpectrumPlot({
           />
         </div>
       </div>
-      <div
-        role="slider"
-        tabIndex={0}
-        aria-label={`${label}: data cursor. Arrows move it, plus and minus zoom, 0 shows all.`}
-        aria-valuemin={whole[0]}
-        aria-valuemax={whole[1]}
-        aria-valuenow={centre ?? whole[0]}
-        aria-valuetext={spoken}
-        onKeyDown={onKeyDown}
-        className="relative"
-        style={{ minHeight: height }}
-      >
-        <div ref={host} />
-        {area && <PlotOverlay area={area} bands={bands} xUnit={xUnit} yUnit={yUnit} />}
+      <div className="relative">
+        <div
+          role="slider"
+          tabIndex={0}
+          aria-label={`${label}: data cursor. Arrows move it, plus and minus zoom, 0 shows all.`}
+          aria-valuemin={whole[0]}
+          aria-valuemax={whole[1]}
+          aria-valuenow={centre ?? whole[0]}
+          aria-valuetext={spoken}
+          onKeyDown={onKeyDown}
+          className="relative"
+          style={{ minHeight: height }}
+        >
+          <div ref={host} />
+          {area && <PlotOverlay area={area} bands={bands} xUnit={xUnit} yUnit={yUnit} />}
+        </div>
+        {/* Outside the slider: what is in here has keys and names of its own. */}
+        {area && overlay && (
+          <div className="absolute inset-x-0 top-0" style={{ height: 0 }}>
+            {overlay(area)}
+          </div>
+        )}
       </div>
+      {area && below?.(area)}
       <figcaption className="mt-1 flex flex-wrap items-baseline justify-between gap-x-6 gap-y-1">
         <PlotKey series={series} joined={joined} index={index} />
         <span className="ml-auto text-xs text-ink-soft">

@@ -34,6 +34,14 @@ test('a band without ε among others stands with its wavelength alone; a mixture
   );
 });
 
+test('a fitted position comes with its standard uncertainty, turned into nm', () => {
+  // 40 cm⁻¹ at 21 550 cm⁻¹ are 40 · 464.04² / 1e7 = 0.861 nm
+  const fitted = { wavenumber: 21_550, epsilon: 40.1, shoulder: false, found: 'fitted' as const, uncertainty: 40 };
+  const head = 'λmax/nm (ε/dm³ mol⁻¹ cm⁻¹)';
+  expect(bandSentence([fitted], water)).toBe(`${head}: 464.04 ± 0.86 (40.1); water, 298 K`);
+  expect(bandSentence([{ ...fitted, found: 'picked' }], water)).toBe(`${head}: 464 (40.1); water, 298 K`);
+});
+
 test('no bands, no sentence', () => {
   expect(bandSentence([], water)).toBeNull();
 });
