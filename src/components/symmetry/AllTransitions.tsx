@@ -43,7 +43,7 @@ export function AllTransitions({ accession, table, view, bands, onChoose }: Prop
             </Fragment>
           ))}
           . Excited terms are those of <PointGroup group={parent} />.{' '}
-          {/[1-9] on [xyz]|lies in/.test(view.axes) && view.axes}
+          {/[1-9] on [xyz]|lies in/.test(view.axes) && <Prose text={view.axes} />}
         </p>
         <CopyButton text={transitionsText(table, view, bands)} what="the table" label="Copy" />
         <button

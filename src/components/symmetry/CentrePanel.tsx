@@ -1,4 +1,5 @@
 import { type ReactNode, useMemo, useState } from 'react';
+import { findGroup } from '#src/chem/symmetry/index.ts';
 import { BandTag } from '#src/components/marks/BandTag.tsx';
 import { PointGroup, Term, Transition, Unit } from '#src/components/notation/index.tsx';
 import { groupDigits } from '#src/components/notation/quantity.ts';
@@ -181,14 +182,22 @@ function Steps(props: StepsProps) {
   const parts = partsIn(props);
   const [at, setAt] = useState(0);
   const part = parts[at];
-  if (!judged || !part) return band ? <ArgumentList lines={classArgument(band, centre)} /> : null;
+  if (!judged || !part)
+    return band ? (
+      <ArgumentList
+        lines={classArgument(band, {
+          ...centre,
+          centrosymmetric: judged ? findGroup(judged.group)!.centrosymmetric : true,
+        })}
+      />
+    ) : null;
   const lines = panelArgument(judged, part, band, skeletonOf(complex, centre));
   return (
     <>
       {row && parts.length > 1 && (
         <div className="mb-2.5 flex flex-wrap items-center gap-x-3 gap-y-1 text-xs">
           <span className="text-ink-soft">
-            In <PointGroup group={judged.group} /> <Term term={row.label} /> falls apart:
+            In <PointGroup group={judged.group} />, <Term term={row.label} /> falls apart:
           </span>
           <Segmented
             label="Part"

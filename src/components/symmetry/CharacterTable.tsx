@@ -79,7 +79,7 @@ export function CharacterTable({ group: symbol, double, onDouble }: Props) {
                 key={row.label}
                 className={row.spinor && !table.rows[i - 1]?.spinor ? '[&>*]:border-t-2! [&>*]:border-t-hairline!' : ''}
               >
-                <th scope="row" className="border-faint! text-sm! font-medium! text-ink!">
+                <th scope="row" className="border-faint! align-middle! text-sm! font-medium! text-ink!">
                   <Irrep irrep={row.label} />
                 </th>
                 {table.bethe && (

@@ -90,7 +90,7 @@ export function DescentPanel({ state: { group, into, along }, change, choose }: 
               <tbody>
                 {result.maps.map(({ irrep, terms }) => (
                   <tr key={irrep}>
-                    <th scope="row" className="border-faint! text-sm! font-normal! text-ink!">
+                    <th scope="row" className="border-faint! align-middle! text-sm! font-normal! text-ink!">
                       <Irrep irrep={irrep} />
                     </th>
                     <td>

@@ -8,7 +8,7 @@ const FAMILY = /^([CDS])(2?n)(\w*)$/;
 export function GroupPicker({ group, onChoose }: { group: string; onChoose: (symbol: string) => void }) {
   return (
     <nav aria-label="Point groups">
-      <dl className="grid grid-cols-[auto_1fr] items-baseline gap-x-3 gap-y-1.5">
+      <dl className="grid grid-cols-[auto_1fr] items-baseline gap-x-3 gap-y-1.5 md:max-lg:grid-cols-[auto_1fr_auto_1fr]">
         {groupFamilies.map(({ name, symbols }) => (
           <div key={name} className="contents">
             <dt className="text-ink-soft">{FAMILY.test(name) ? <FamilyName name={name} /> : name}</dt>

@@ -5,12 +5,17 @@ import { Segmented } from '#src/components/ui/Segmented.tsx';
 import type { ComplexRecord } from '#src/contracts/complexes.ts';
 import type { BandRecord, SpectrumSummary } from '#src/contracts/spectra.ts';
 import { CentrePanel } from './CentrePanel.tsx';
+import type { CentreTransitions } from './panel-argument.ts';
 import { type SpinChoice, useTransitions } from './useTransitions.ts';
 
 interface Props {
   complex: ComplexRecord;
   lists: readonly { spectrum: SpectrumSummary; bands: BandRecord[] }[];
 }
+
+/** Whether the ground term is open only because the spin state is. */
+const hangsOnSpin = ({ ground, parent, notes }: CentreTransitions): boolean =>
+  ground === null && parent !== null && notes.some((note) => /spin state|two spin/.test(note));
 
 /** Why a band is weak or strong, step by step, and all transitions that there are beside it. */
 export function SymmetryPanel({ complex, lists }: Props) {
@@ -42,7 +47,7 @@ export function SymmetryPanel({ complex, lists }: Props) {
           onChange={(next) => setAt(Number(next))}
         />
       )}
-      {(spin !== null || (centre.ground === null && (centre.dCount ?? 0) > 0 && (centre.dCount ?? 10) < 10)) && (
+      {(spin !== null || hangsOnSpin(centre)) && (
         <Segmented
           label="Spin state"
           options={[

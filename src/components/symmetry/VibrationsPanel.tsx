@@ -6,6 +6,7 @@ import { CONTROL } from '#src/components/ui/Field.tsx';
 import { Panel } from '#src/components/ui/Panel.tsx';
 import { Segmented } from '#src/components/ui/Segmented.tsx';
 import { ModePicture } from './ModePicture.tsx';
+import { Prose } from './Prose.tsx';
 import { modeKey, motionWord, type ShownVibrations, shownVibrations, sitesOf } from './shown-vibrations.ts';
 import type { SymmetryState } from './symmetry-address.ts';
 
@@ -55,7 +56,9 @@ export function VibrationsPanel({ state, change, choose }: Props) {
           <p>
             Group <PointGroup group={shown.placed.group} />: Γ<sub>vib</sub> ={' '}
             <IrrepSum terms={shown.vibrations} className="whitespace-normal!" />
-            <span className="text-ink-soft">. {shown.axes}</span>
+            <span className="text-ink-soft">
+              . <Prose text={shown.axes} />
+            </span>
           </p>
         )}
         {shown?.notes.map((note) => (

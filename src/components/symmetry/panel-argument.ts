@@ -77,9 +77,12 @@ export function isStrong(group: string, { from, to }: Part, band: PlacedBand | n
 }
 
 /** What can be said of a band whose terms are not told or not of a group: its class and its strength. */
-export function classArgument(band: PlacedBand, centre: { element: string; geometry: string | null }): ArgumentLine[] {
+export function classArgument(
+  band: PlacedBand,
+  { element, geometry, centrosymmetric }: { element: string; geometry: string | null; centrosymmetric: boolean },
+): ArgumentLine[] {
   const { class: bandClass } = band.band.assignment;
-  const usual = usualOf({ bandClass, spinAllowed: true, ...centre, centrosymmetric: true });
+  const usual = usualOf({ bandClass, spinAllowed: true, element, geometry, centrosymmetric });
   const charge = ['LMCT', 'MLCT'].includes(bandClass);
   return [
     {

@@ -1,9 +1,9 @@
 /** What stands in a sentence as it is written, and what is set as chemistry. */
-export type ProsePiece = string | { count: number } | { operation: string };
+export type ProsePiece = string | { count: number } | { operation: string } | { direction: string };
 
-const SYMBOL = /(?<![\p{L}\d])(d\d{1,2}|[CS]\d(?:[′″]|'{1,2})?|σ[hvd])(?![\p{L}\d-])/u;
+const SYMBOL = /(?<![\p{L}\d])(d\d{1,2}|[CS]\d(?:[′″]|'{1,2})?|σ[hvd]|[xyz]{1,2})(?![\p{L}\d-])/u;
 
-/** Finds d-counts (d6), axes (C4, C2′) and mirrors (σv) in a plain sentence. */
+/** Finds d-counts (d6), axes (C4, C2′), mirrors (σv) and directions (x, xz) in a plain sentence. */
 export function prosePieces(text: string): ProsePiece[] {
   return text
     .split(SYMBOL)
@@ -11,6 +11,7 @@ export function prosePieces(text: string): ProsePiece[] {
     .map((part) => {
       if (SYMBOL.exec(part)?.[0] !== part) return part;
       if (part.startsWith('d')) return { count: Number(part.slice(1)) };
+      if (/^[xyz]/.test(part)) return { direction: part };
       return { operation: part.replace('σ', 'sigma_').replace('″', "''").replace('′', "'") };
     });
 }

@@ -91,9 +91,13 @@ test('d-counts, axes and mirrors within a sentence are told apart from other wor
   expect(prosePieces('A d0 centre; x a C2′, xz a σv; OC-6, SPY-5')).toEqual([
     'A ',
     { count: 0 },
-    ' centre; x a ',
+    ' centre; ',
+    { direction: 'x' },
+    ' a ',
     { operation: "C2'" },
-    ', xz a ',
+    ', ',
+    { direction: 'xz' },
+    ' a ',
     { operation: 'sigma_v' },
     '; OC-6, SPY-5',
   ]);
