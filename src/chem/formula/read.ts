@@ -217,9 +217,10 @@ function separateBareIons(salt: RawSalt): RawSalt {
 /** The charge a person chose for a doubtful oxidation state takes the place of the typed one. */
 function withAnsweredCharge(salt: RawSalt, answers: Answers): RawSalt {
   const answered = salt.entities.map((_, i) => {
-    const answer =
-      answers[codeOfPlace('impossible-oxidation-state', i)] ?? answers[codeOfPlace('implausible-oxidation-state', i)];
-    return answer !== undefined && /^-?\d{1,2}$/.test(answer) ? Number(answer) : null;
+    // The answer to the later question first: a repair of an impossible state may still be an implausible one.
+    const given = ['implausible', 'impossible'].map((kind) => answers[codeOfPlace(`${kind}-oxidation-state`, i)] ?? '');
+    const answer = given.find((value) => /^-?\d{1,2}$/.test(value));
+    return answer === undefined ? null : Number(answer);
   });
   if (answered.every((charge) => charge === null)) return salt;
   return {
