@@ -12,11 +12,13 @@ const MEMBER = [
   '/spectra',
   '/ligands',
   '/symmetry',
+  '/levels',
+  '/plan',
   '/folios',
   '/labs',
   '/api-reference',
 ];
-const GUEST = ['/', '/complexes', '/symmetry', '/folios'];
+const GUEST = ['/', '/complexes', '/symmetry', '/levels', '/folios'];
 
 const people = [
   { who: 'nobody', email: null, paths: ['/signin', '/outbox', '/join', '/reset', '/confirm-address'] },
