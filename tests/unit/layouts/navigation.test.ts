@@ -3,9 +3,9 @@ import { isUnder, navigationFor } from '#src/layouts/navigation.ts';
 
 const labels = (role: string | undefined) => navigationFor(role).map(({ label }) => label);
 
-test('a guest is led to complexes, symmetry and folios only, nobody nowhere', () => {
-  expect(labels('guest')).toEqual(['Complexes', 'Symmetry', 'Folios']);
-  expect(labels('contributor')).toHaveLength(7);
+test('a guest is led to complexes, symmetry, levels and folios only, nobody nowhere', () => {
+  expect(labels('guest')).toEqual(['Complexes', 'Symmetry', 'Levels', 'Folios']);
+  expect(labels('contributor')).toHaveLength(9);
   expect(labels('lead')).toEqual(labels('contributor'));
   expect(labels('steward')).toEqual([...labels('lead'), 'People', 'Trail']);
   expect(labels(undefined)).toEqual([]);
