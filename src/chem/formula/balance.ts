@@ -1,9 +1,9 @@
 import { isDBlock } from '../elements.ts';
 import { chargeOf } from './charge-text.ts';
 import type { Context } from './entity.ts';
+import { usualCharges } from './metal-charge.ts';
 import { commonStates, stateLabel } from './oxidation-states.ts';
 import type { RawEntity, RawSalt } from './raw.ts';
-import { usualCharges } from './share.ts';
 import { refuse } from './syntax.ts';
 
 /** Charges after balancing; null where a question is open. */

@@ -1,6 +1,7 @@
 import { findElement } from '../elements.ts';
 import { findLigand, type Ligand, type LigandIndex, ligand as makeLigand, nearestLigand } from '../ligands/index.ts';
 import { compositionOf, entitySymbol, longest } from './lexicon.ts';
+import { KAPPA_SUFFIX, kappaOf, type Marks, NO_MARKS, readMarks } from './marks.ts';
 import type { NormalText } from './normalise.ts';
 import type { Fragment, RawLigand, RawMetal } from './raw.ts';
 import { countOf, type Group, type Item, refuse } from './syntax.ts';
@@ -22,30 +23,6 @@ export type Part =
   | { kind: 'ligand'; ligand: RawLigand }
   | { kind: 'fragment'; fragment: Fragment };
 
-const PREFIX =
-  /^(?:(?:μ|mu)_?\^?(\d?)|(?:η|eta|h)\^?(\d{1,2})|(?:κ|kappa)\^?(\d?)((?:[A-Z][a-z]?[′″]*,?(?:κ(?=[A-Z]))?)*))-/;
-const SUFFIX = /-κ\^?(\d?)((?:[A-Z][a-z]?[′″]*,?(?:κ(?=[A-Z]))?)+)$/;
-
-/** Donor atoms that a κ names: how many, and the symbol of the first where one is given. */
-interface Kappa {
-  count: number;
-  atom: string | null;
-}
-
-interface Marks {
-  mu: number | null;
-  hapticity: number | null;
-  kappa: Kappa | null;
-}
-
-const NO_MARKS: Marks = { mu: null, hapticity: null, kappa: null };
-
-/** `κ2`, `κO`, `κ2O,O′`, `κN,κO`: a number, else as many as atoms are named. */
-function kappaOf(digits: string, atoms: string): Kappa {
-  const named = atoms.match(/[A-Z][a-z]?/g) ?? [];
-  return { count: digits === '' ? Math.max(1, named.length) : Number(digits), atom: named[0] ?? null };
-}
-
 /** The metals, ligands and fragments written in the brackets of an entity (or in an unbracketed formula). */
 export function interpretParts(items: readonly Item[], context: Context): Part[] {
   const parts: Part[] = [];
@@ -59,20 +36,6 @@ export function interpretParts(items: readonly Item[], context: Context): Part[]
     }
   }
   return parts;
-}
-
-/** Strip `μ-`, `μ3-`, `η5-` from the front of a text. */
-function readMarks(text: string, before: Marks): { marks: Marks; length: number } {
-  let length = 0;
-  const marks = { ...before };
-  for (let match = PREFIX.exec(text); match; match = PREFIX.exec(text.slice(length))) {
-    const [whole, mu, eta, kappa, atoms] = match;
-    if (eta !== undefined) marks.hapticity = Number(eta);
-    else if (kappa !== undefined) marks.kappa = kappaOf(kappa, atoms ?? '');
-    else marks.mu = mu ? Number(mu) : 2;
-    length += whole.length;
-  }
-  return { marks, length };
 }
 
 function interpretRun(text: string, start: number, before: Marks, parts: Part[], context: Context): Marks {
@@ -110,7 +73,7 @@ function interpretRun(text: string, start: number, before: Marks, parts: Part[],
 function interpretGroup(group: Group, before: Marks, context: Context): Part[] {
   if (group.charge !== null) throw chargeInside(context, group.start);
   const { marks: read, length } = readMarks(group.inner, before);
-  const suffix = SUFFIX.exec(group.inner);
+  const suffix = KAPPA_SUFFIX.exec(group.inner);
   const name = group.inner.slice(length, suffix?.index);
   const marks = suffix ? { ...read, kappa: kappaOf(suffix[1] ?? '', suffix[2] ?? '') } : read;
   const start = group.start + 1 + length;

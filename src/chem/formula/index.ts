@@ -1,5 +1,6 @@
+export { cautionContext } from './entity-reading.ts';
 export { compareSymbols } from './print.ts';
-export { cautionContext, readFormula } from './read.ts';
+export { readFormula } from './read.ts';
 export type {
   Answers,
   CentreReading,

@@ -1,8 +1,8 @@
 import { findLigand } from '../ligands/index.ts';
 import type { Context } from './entity.ts';
+import { chargeOnMetals, dMetals, ligandField } from './metal-charge.ts';
 import { plausibility, stateLabel } from './oxidation-states.ts';
 import type { RawEntity, RawLigand } from './raw.ts';
-import { chargeOnMetals, dMetals, ligandField } from './share.ts';
 
 /** A symbol that the literature uses for two ligands, which differ in protons. */
 interface DoubleMeaning {

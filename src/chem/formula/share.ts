@@ -1,91 +1,18 @@
 import { dElectronCount } from '../electrons.ts';
 import { findElement, isDBlock } from '../elements.ts';
-import { ligandKey } from './assemble.ts';
 import { chargeOf } from './charge-text.ts';
 import type { Context } from './entity.ts';
-import { commonStates, type LigandField, type Plausibility, plausibility, stateLabel } from './oxidation-states.ts';
-import type { RawEntity, RawLigand, RawMetal } from './raw.ts';
+import { chooseLigandCharges } from './ligand-charges.ts';
+import { chargeOnMetals, dMetals, isDiimine, type LigandCharges, ligandField, usualCharges } from './metal-charge.ts';
+import { commonStates, plausibility, stateLabel } from './oxidation-states.ts';
+import type { RawEntity, RawMetal } from './raw.ts';
 import type { CentreReading } from './types.ts';
-
-/** Atoms inside an entity that keep one state: heteroatoms of polyoxometalates, and s-block cations between oxides. */
-const FIXED: Readonly<Record<string, number>> = {
-  P: 5,
-  As: 5,
-  Sb: 5,
-  Si: 4,
-  Ge: 4,
-  Sn: 4,
-  B: 3,
-  Al: 3,
-  Ga: 3,
-  In: 3,
-  Bi: 3,
-  Tl: 1,
-  Pb: 2,
-  Te: 6,
-  Li: 1,
-  Na: 1,
-  K: 1,
-  Rb: 1,
-  Cs: 1,
-  Mg: 2,
-  Ca: 2,
-  Sr: 2,
-  Ba: 2,
-};
-
-/** Charge counted for each ligand of an entity: that of the library unless a person or the metal says otherwise. */
-export type LigandCharges = ReadonlyMap<RawLigand, number>;
 
 export interface Shared {
   centres: CentreReading[];
   ligandCharges: LigandCharges;
   /** False while a question about oxidation states is open. */
   settled: boolean;
-}
-
-/** Facts about the ligands that tell believable from unbelievable oxidation states. */
-export function ligandField(entity: RawEntity): LigandField {
-  const ligands = entity.ligands.map(({ ligand }) => ligand);
-  return {
-    acceptor: ligands.some(
-      (l) => l.donors.some((d) => /^(C|H|P|As|Sn|S)$/.test(d)) || /^(NO|N2)$/.test(l.abbreviation),
-    ),
-    diimine: ligands.some(isDiimine),
-    strongDonor: ligands.some((l) => /^(O|F|N|O2|OOH|S|OH)$/.test(l.abbreviation)),
-    allNeutral: ligands.length > 0 && ligands.every((l) => l.charge === 0),
-  };
-}
-
-/** Chelating N-heterocycles, which take up electrons before a metal reaches zero: bpy, phen, tpy. */
-function isDiimine({ piCharacter, donors, denticity }: RawLigand['ligand']): boolean {
-  return piCharacter === 'acceptor' && denticity > 1 && donors.every((d) => d === 'N');
-}
-
-/** Charge left for the d-block centres once ligands and atoms of fixed state have theirs; null when a ligand is open. */
-export function chargeOnMetals(entity: RawEntity, charge: number, charges?: LigandCharges): number | null {
-  if (entity.ligands.some((l) => !l.known)) return null;
-  const bound = entity.ligands.reduce((sum, l) => sum + l.count * (charges?.get(l) ?? l.ligand.charge), 0);
-  const fixed = entity.metals.reduce((sum, m) => sum + m.count * (isDBlock(m.element) ? 0 : fixedState(m.element)), 0);
-  return charge - bound - fixed;
-}
-
-function fixedState(symbol: string): number {
-  return FIXED[symbol] ?? (findElement(symbol)?.block === 'f' ? 3 : 0);
-}
-
-export function dMetals(entity: RawEntity): RawMetal[] {
-  return entity.metals.filter((m) => isDBlock(m.element));
-}
-
-/** Entity charges that give the metal one of its usual states, usual first; for one kind of d-block metal only. */
-export function usualCharges(entity: RawEntity): { charge: number; state: number }[] {
-  const [metal, other] = dMetals(entity);
-  const zero = chargeOnMetals(entity, 0);
-  if (zero === null || other) return [];
-  // Without a d-block centre all states are fixed, and so is the charge: [Al(H2O)6]3+
-  if (!metal) return [{ charge: -zero || 0, state: fixedState(entity.metals[0]?.element ?? '') }];
-  return commonStates(metal.element).map((state) => ({ charge: state * metal.count - zero || 0, state }));
 }
 
 /**
@@ -135,79 +62,6 @@ function centresOf(entity: RawEntity, stateOf: (metal: RawMetal) => number | nul
       };
     });
   });
-}
-
-/** One way to count the ligands of an entity, and the state it leaves to the metal. */
-interface ChargeOption {
-  /** `-1`; where several kinds of ligand are open, `NO=1,dmit=-2`. */
-  value: string;
-  /** `NO counted +` */
-  words: string;
-  charges: LigandCharges;
-  state: number;
-  fit: Plausibility;
-}
-
-const MOST_OPTIONS = 81;
-
-/** All ways to count the ligands that can be counted in several, each usual way first; whatever the order typed. */
-function chargeOptions(entity: RawEntity, open: readonly RawLigand[], charge: number, metal: RawMetal): ChargeOption[] {
-  const field = ligandField(entity);
-  const usual: LigandCharges = new Map(entity.ligands.map((l) => [l, l.ligand.charge]));
-  return open
-    .reduce<LigandCharges[]>(
-      (ways, l) =>
-        ways
-          .flatMap((way) => [l.ligand.charge, ...l.ligand.alternativeCharges].map((z) => new Map(way).set(l, z)))
-          .slice(0, MOST_OPTIONS),
-      [usual],
-    )
-    .flatMap((charges) => {
-      const left = chargeOnMetals(entity, charge, charges);
-      if (left === null) return [];
-      const state = left / metal.count;
-      const each = open.map((l) => ({ symbol: l.ligand.abbreviation, z: charges.get(l) ?? 0 }));
-      const value = each.length === 1 ? String(each[0]!.z) : each.map(({ symbol, z }) => `${symbol}=${z}`).join(',');
-      const words = each.map(({ symbol, z }) => `${symbol} counted ${chargeOf(z) || '0'}`).join(', ');
-      return [{ value, words, charges, state, fit: plausibility(metal.element, state, field) }];
-    });
-}
-
-/** Ligands that may be counted in several ways: the usual way unless only another one gives the metal a usual state. */
-function chooseLigandCharges(
-  entity: RawEntity,
-  charge: number,
-  metal: RawMetal,
-  context: Context,
-): (ChargeOption & { alternatives: number[] }) | null {
-  const open = entity.ligands
-    .filter((l) => l.ligand.alternativeCharges.length > 0)
-    .sort((a, b) => (ligandKey(a) < ligandKey(b) ? -1 : 1));
-  const options = chargeOptions(entity, open, charge, metal);
-  const [first] = options;
-  if (!first) return null;
-  if (open.length === 0) return { ...first, alternatives: [] };
-  const code = context.codeAt('ligand-charge', entity.start);
-  const answered = options.find((o) => o.value === context.answers[code]?.replace('+', ''));
-  const usual = options.filter((o) => o.fit === 'usual');
-  const believable = options.filter((o) => o.fit === 'usual' || o.fit === 'rare');
-  const dioxygen = open.some((l) => l.ligand.abbreviation === 'O2');
-  const doubtful = dioxygen ? usual.length > 1 : first.fit !== 'usual' && believable.length > 1;
-  if (!answered && doubtful) {
-    const names = open.map((l) => l.ligand.abbreviation);
-    context.ask({
-      code,
-      detail: `${names.join(' and ')} can be counted in several ways, and each gives ${metal.element} a state of its own.`,
-      choices: believable.map((o) => ({ value: o.value, label: `${o.words}: ${stateLabel(metal.element, o.state)}` })),
-      position: context.source.at[Math.min(...open.map((l) => l.start))],
-    });
-    return null;
-  }
-  const taken =
-    answered ??
-    (first.fit === 'usual' ? first : (usual[0] ?? (believable.includes(first) ? first : (believable[0] ?? first))));
-  const others = believable.filter((o) => o !== taken).map((o) => o.state);
-  return { ...taken, alternatives: [...new Set(others)].filter((state) => state !== taken.state) };
 }
 
 /** Ask about a state that cannot be or is in no known compound; true when it stands. */
