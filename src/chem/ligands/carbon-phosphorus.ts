@@ -1,4 +1,4 @@
-import { type Ligand, ligand } from './ligand.ts';
+import { type Ligand, ligand, ring } from './ligand.ts';
 
 const PPH2 = 'P(c1ccccc1)c1ccccc1';
 
@@ -101,6 +101,29 @@ export const carbonPhosphorusLigands: readonly Ligand[] = [
   }),
   ligand('dppp', 'C27H26P2', 0, 'P P', '1,3-bis(diphenylphosphanyl)propane', `C(C${PPH2})C${PPH2}`, 'acceptor'),
   ligand('dmpe', 'C6H16P2', 0, 'P P', '1,2-bis(dimethylphosphanyl)ethane', 'CP(C)CCP(C)C', 'acceptor'),
+  ligand(
+    'triphos',
+    'C41H39P3',
+    0,
+    'P P P',
+    '1,1,1-tris(diphenylphosphanylmethyl)ethane',
+    `CC(C${PPH2})(C${PPH2})C${PPH2}`,
+    'acceptor',
+    {
+      bite: ring(3),
+      span: 'fac',
+    },
+  ),
+  ligand(
+    'IMes',
+    'C21H24N2',
+    0,
+    'C',
+    '1,3-dimesitylimidazol-2-ylidene',
+    'Cc1cc(C)c(c(C)c1)N1C=CN([C]1)c1c(C)cc(C)cc1C',
+    'none',
+  ),
+  ligand('CNXyl', 'C9H9N', 0, 'C', '2,6-dimethylphenyl isocyanide', '[C-]#[N+]c1c(C)cccc1C', 'acceptor'),
   ligand('diars', 'C10H16As2', 0, 'As As', '1,2-phenylenebis(dimethylarsane)', 'C[As](C)c1ccccc1[As](C)C', 'acceptor', {
     synonyms: ['das'],
   }),

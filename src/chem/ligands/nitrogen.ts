@@ -169,6 +169,62 @@ export const nitrogenLigands: readonly Ligand[] = [
   ligand('tap', 'C10H6N4', 0, 'N N', '1,4,5,8-tetraazaphenanthrene', 'c1cnc2c(n1)ccc1nccnc12', 'acceptor', {
     synonyms: ['TAP'],
   }),
+  ligand('bpym', 'C8H6N4', 0, 'N N', '2,2′-bipyrimidine', 'c1cnc(nc1)-c1ncccn1', 'acceptor', { canBridge: true }),
+  ligand(
+    'phendione',
+    'C12H6N2O2',
+    0,
+    'N N',
+    '1,10-phenanthroline-5,6-dione',
+    'O=C1C(=O)c2cccnc2-c2ncccc21',
+    'acceptor',
+    {
+      redoxActive: true,
+    },
+  ),
+  ligand(
+    'tppz',
+    'C24H16N6',
+    0,
+    'N N N',
+    'tetra(pyridin-2-yl)pyrazine',
+    'c1ccnc(c1)-c1nc(-c2ccccn2)c(-c2ccccn2)nc1-c1ccccn1',
+    'acceptor',
+    { canBridge: true, span: 'mer' },
+  ),
+  ligand('bpa', 'C12H13N3', 0, 'N N N', 'bis(pyridin-2-ylmethyl)amine', 'C(NCc1ccccn1)c1ccccn1', 'acceptor'),
+  ligand(
+    'tpa',
+    'C18H18N4',
+    0,
+    'N N N N',
+    'tris(pyridin-2-ylmethyl)amine',
+    'C(N(Cc1ccccn1)Cc1ccccn1)c1ccccn1',
+    'acceptor',
+    {
+      synonyms: ['tmpa', 'TPA'],
+      bite: [
+        [0, 1],
+        [0, 2],
+        [0, 3],
+      ],
+    },
+  ),
+  ligand('Me6tren', 'C12H30N4', 0, 'N N N N', 'tris(2-dimethylaminoethyl)amine', 'CN(C)CCN(CCN(C)C)CCN(C)C', 'none', {
+    bite: [
+      [0, 1],
+      [0, 2],
+      [0, 3],
+    ],
+  }),
+  ligand('Me3tacn', 'C9H21N3', 0, 'N N N', '1,4,7-trimethyl-1,4,7-triazacyclononane', 'CN1CCN(C)CCN(C)CC1', 'none', {
+    bite: ring(3),
+    span: 'fac',
+  }),
+  ligand('tmc', 'C14H32N4', 0, 'N N N N', 'tetramethylcyclam', 'CN1CCCN(C)CCN(C)CCCN(C)CC1', 'none', {
+    synonyms: ['Me4cyclam', 'TMC'],
+    bite: ring(4),
+  }),
   ligand('bpz', 'C8H6N4', 0, 'N N', '2,2′-bipyrazine', 'c1cnc(cn1)-c1cnccn1', 'acceptor'),
   ligand('tpy', 'C15H11N3', 0, 'N N N', '2,2′:6′,2″-terpyridine', 'c1ccnc(c1)-c1cccc(n1)-c1ccccn1', 'acceptor', {
     synonyms: ['terpy', 'trpy', 'terpyridine'],

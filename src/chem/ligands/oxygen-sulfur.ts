@@ -1,4 +1,4 @@
-import { type Ligand, ligand } from './ligand.ts';
+import { type Ligand, ligand, ring } from './ligand.ts';
 
 const JORGENSEN = 'f: C. K. Jørgensen, Modern Aspects of Ligand Field Theory, 1971, p. 347 (reprinted table)';
 
@@ -72,6 +72,20 @@ export const oxygenSulfurLigands: readonly Ligand[] = [
     alternativeCharges: [-1, 0],
     redoxActive: true,
   }),
+  ligand(
+    'dbcat',
+    'C14H20O2',
+    -2,
+    'O O',
+    '3,5-di-tert-butylcatecholato',
+    'CC(C)(C)c1cc([O-])c([O-])c(c1)C(C)(C)C',
+    'donor',
+    {
+      synonyms: ['3,5-dbcat', 'DBCat'],
+      alternativeCharges: [-1, 0],
+      redoxActive: true,
+    },
+  ),
   ligand('tropolonato', 'C7H5O2', -1, 'O O', 'tropolonato', '[O-]c1cccccc1=O', 'donor', { synonyms: ['trop'] }),
   ligand(
     'edta',
@@ -131,6 +145,11 @@ export const oxygenSulfurLigands: readonly Ligand[] = [
   ligand('SMe', 'CH3S', -1, 'S', 'methanethiolato', 'C[S-]', 'donor', { synonyms: ['SCH3', 'MeS'], canBridge: true }),
   ligand('SEt', 'C2H5S', -1, 'S', 'ethanethiolato', 'CC[S-]', 'donor', { synonyms: ['SC2H5', 'EtS'], canBridge: true }),
   ligand('SMe2', 'C2H6S', 0, 'S', 'dimethyl sulfide', 'CSC', 'none', { synonyms: ['Me2S', 'dms'] }),
+  ligand('9aneS3', 'C6H12S3', 0, 'S S S', '1,4,7-trithiacyclononane', 'C1CSCCSCCS1', 'none', {
+    synonyms: ['[9]aneS3', 'ttcn'],
+    bite: ring(3),
+    span: 'fac',
+  }),
   ligand('tu', 'CH4N2S', 0, 'S', 'thiourea', 'NC(N)=S', 'donor', { synonyms: ['thiourea', 'CS(NH2)2', 'SC(NH2)2'] }),
   ligand('dtc', 'C5H10NS2', -1, 'S S', 'diethyldithiocarbamato', 'CCN(CC)C(=S)[S-]', 'donor', {
     synonyms: ['Et2dtc', 'S2CNEt2', 'Et2NCS2', 'dedtc'],
