@@ -6,6 +6,9 @@ import { expect, signIn, test } from './people.ts';
 const RULES = ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'];
 /** Until the page listens, a press is only what the browser makes of it. */
 const listening = (page: import('@playwright/test').Page) => expect(page.locator('astro-island[ssr]')).toHaveCount(0);
+/** The heading of a panel that waits makes way for that of the panel itself. */
+const scrollTo = (page: import('@playwright/test').Page, name: RegExp) =>
+  expect(() => page.getByRole('heading', { name }).scrollIntoViewIfNeeded({ timeout: 2000 })).toPass();
 /** Text as it is read, without the spaces that only part its pieces. */
 const squeezed = (text: string | null) => (text ?? '').replace(/\s+/g, ' ').trim();
 
@@ -37,7 +40,7 @@ test('a guest multiplies, descends and judges, and the address brings all of it 
   });
 
   await test.step('D2h through the other axes changes B1g and B2g', async () => {
-    await page.getByRole('heading', { name: /^Descent/ }).scrollIntoViewIfNeeded();
+    await scrollTo(page, /^Descent/);
     const descent = page.getByRole('region', { name: /^Descent/ });
     await descent.getByRole('radio', { name: 'D2h' }).check({ force: true });
     const row = (irrep: string) =>
@@ -51,7 +54,7 @@ test('a guest multiplies, descends and judges, and the address brings all of it 
   await test.step('what was chosen stands in the address', async () => {
     await page.goto(page.url());
     await expect(page.getByRole('region', { name: 'Products' }).getByRole('status')).toHaveText('Γ = A2g');
-    await page.getByRole('heading', { name: /^Descent/ }).scrollIntoViewIfNeeded();
+    await scrollTo(page, /^Descent/);
     await expect(page.getByRole('radio', { name: /C 2 double prime/ })).toBeChecked();
     await expect(page.getByLabel('Double group')).toBeChecked();
   });
@@ -65,7 +68,7 @@ test('vibrations: arrows rest for who asked for little motion, atoms may be past
   await signIn(page, 'contributor@demo.example');
   await page.goto('/symmetry');
   await listening(page);
-  await page.getByRole('heading', { name: 'Vibrations' }).scrollIntoViewIfNeeded();
+  await scrollTo(page, /^Vibrations$/);
   const panel = page.getByRole('region', { name: 'Vibrations', exact: true });
   await expect(panel.getByRole('button', { name: 'Play' })).toBeVisible();
   await panel.getByRole('button', { name: 'Show T2u, partner 1' }).click();
@@ -96,7 +99,7 @@ test('a complex tells why its strongest d–d band is weak, in the group that is
   const { items } = (await found.json()) as { items: { accession: string; formula: string }[] };
   const { accession } = items.find(({ formula }) => formula === '[Cr(en)3]3+')!;
   await page.goto(`/complexes/${accession}`);
-  await page.getByRole('heading', { name: /^Why/ }).scrollIntoViewIfNeeded();
+  await scrollTo(page, /^Why/);
   const panel = page.getByRole('region', { name: /^Why this band is weak/ });
   const steps = panel.getByRole('listitem');
   await expect(steps.first()).toContainText('Spin: quartet to quartet, allowed.');
@@ -137,6 +140,6 @@ test('a complex without d–d transitions says in words why', async ({ page }) =
   const { items } = (await found.json()) as { items: { accession: string; formula: string }[] };
   const { accession } = items.find(({ formula }) => formula === '[MnO4]-')!;
   await page.goto(`/complexes/${accession}`);
-  await page.getByRole('heading', { name: /^Why/ }).scrollIntoViewIfNeeded();
+  await scrollTo(page, /^Why/);
   await expect(page.getByText(/centre has no d–d transitions: its d shell is empty/)).toBeVisible();
 });
