@@ -1,5 +1,5 @@
 import type { BandFit } from '#src/chem/spectra/fit/fit-bands.ts';
-import { formatNumber } from '#src/components/notation/quantity.ts';
+import { groupDigits } from '#src/components/notation/quantity.ts';
 
 /** Rows by number of bands, lowest AICc of each column; pure for its test. */
 export function comparedRows(compared: BandFit['compared']) {
@@ -27,7 +27,7 @@ export function ComparedFits({ compared, chosen }: ComparedFitsProps) {
     const isChosen = chosen.count === count && chosen.edge === edge;
     return (
       <td className={`num text-right! ${isChosen ? 'font-semibold text-zaffre' : ''}`}>
-        {value === null ? '–' : formatNumber(Math.round(value * 10) / 10, 4)}
+        {value === null ? '–' : groupDigits(value.toFixed(1))}
         {isChosen && <span className="sr-only"> (taken)</span>}
       </td>
     );
@@ -35,11 +35,11 @@ export function ComparedFits({ compared, chosen }: ComparedFitsProps) {
   return (
     <details>
       <summary className="cursor-pointer text-xs text-ink-soft hover:text-zaffre">Numbers of bands compared</summary>
-      <table className="table table-compact mt-2 w-auto!">
-        <caption className="max-w-prose pb-1 text-left text-xs text-ink-soft">
-          AICc above the lowest of all. More bands count only where each of them is significant and the criterion falls
-          by more than 15.
-        </caption>
+      <p className="mt-2 max-w-prose text-xs text-ink-soft">
+        AICc above the lowest of all. More bands count only where each of them is significant and the criterion falls by
+        more than 15.
+      </p>
+      <table className="table table-compact mt-1 w-auto!">
         <thead>
           <tr>
             <th scope="col">bands</th>
@@ -58,9 +58,7 @@ export function ComparedFits({ compared, chosen }: ComparedFitsProps) {
         <tbody>
           {rows.map(({ count, without, withEdge }) => (
             <tr key={count}>
-              <th scope="row" className="num">
-                {count}
-              </th>
+              <td className="num">{count}</td>
               {hasPlain && cell(count, false, without)}
               {hasEdge && cell(count, true, withEdge)}
             </tr>

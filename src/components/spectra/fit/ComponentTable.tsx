@@ -27,7 +27,7 @@ export function ComponentTable({ fitting, symbol, isEpsilon, bandwidth }: Compon
   const { state, make, wavelengthCheck, refractiveIndex } = fitting;
   return (
     // biome-ignore lint/a11y/noNoninteractiveTabindex: a region that scrolls must be reachable by keyboard
-    <section aria-label="Components of the fit" tabIndex={0} className="overflow-x-auto">
+    <section aria-label="Components of the fit" tabIndex={0} className="relative overflow-x-auto">
       <table className="table table-compact">
         <thead>
           <tr>
@@ -71,9 +71,7 @@ export function ComponentTable({ fitting, symbol, isEpsilon, bandwidth }: Compon
               });
             return (
               <tr key={i}>
-                <th scope="row" className="num align-top! pt-4!">
-                  {i + 1}
-                </th>
+                <td className="num align-top! pt-4!">{i + 1}</td>
                 {COMPONENT_PARTS.map((part) => (
                   <td key={part} className="align-top!">
                     <PartField
@@ -83,20 +81,17 @@ export function ComponentTable({ fitting, symbol, isEpsilon, bandwidth }: Compon
                     />
                   </td>
                 ))}
-                <td className="num text-right!">
-                  <Quantity value={area} uncertainty={errors?.area} figures={3} />
-                </td>
+                <Derived value={area} share={errors && shareOf(errors.area, area)} />
                 {isEpsilon && (
                   <>
-                    <td className="num text-right!">
-                      <Quantity value={oscillatorStrength(area)} uncertainty={errors?.oscillatorStrength} figures={2} />
-                    </td>
-                    <td className="num text-right!">
-                      {formatNumber(transitionDipole(area / wavenumber, refractiveIndex), 2)}
-                    </td>
+                    <Derived value={oscillatorStrength(area)} share={errors && shareOf(errors.area, area)} />
+                    <Derived
+                      value={transitionDipole(area / wavenumber, refractiveIndex)}
+                      share={errors && shareOf(errors.area, 2 * area)}
+                    />
                   </>
                 )}
-                <td className="text-right!">
+                <td className="text-right! align-top! pt-3!">
                   <Button
                     size="small"
                     aria-label={`Remove component ${i + 1}`}
@@ -111,6 +106,18 @@ export function ComponentTable({ fitting, symbol, isEpsilon, bandwidth }: Compon
         </tbody>
       </table>
     </section>
+  );
+}
+
+const shareOf = (error: number | null, value: number) => (error === null ? null : Math.abs(error / value));
+
+/** What follows from a component, and the part of it that its standard error is. */
+function Derived({ value, share }: { value: number; share: number | null }) {
+  return (
+    <td className="num text-right! align-top! pt-4!">
+      <Quantity value={value} figures={3} />
+      <p className="mt-1 text-xs text-ink-soft">{share !== null && `± ${formatNumber(100 * share, 2)} %`}</p>
+    </td>
   );
 }
 

@@ -11,7 +11,7 @@ interface FitHandlesProps {
   /** While it is dragged; nothing is made of it yet. */
   onPreview: (component: number, parts: Parts) => void;
   onSet: (component: number, parts: Parts, byKey: boolean) => void;
-  onRange: (range: { from: number; to: number }) => void;
+  onRange: (range: { from: number; to: number }, byKey: boolean) => void;
 }
 
 /** Ends of the range and, on each component, its top and its two sides at half height: for pointer and keyboard. */
@@ -25,7 +25,7 @@ export function FitHandles({ area, components, range, onPreview, onSet, onRange 
     const by = { ArrowRight: 1, ArrowLeft: -1 }[event.key];
     if (!by) return;
     event.preventDefault();
-    onRange(ordered({ ...range, [end]: Math.round(range[end] + by * (event.shiftKey ? 1000 : 100)) }));
+    onRange(ordered({ ...range, [end]: Math.round(range[end] + by * (event.shiftKey ? 1000 : 100)) }), true);
   };
   const shade = (from: number, to: number) => {
     const [a, b] = [from, to].map((v) => Math.min(area.width, Math.max(0, pixelsOf(area, v, 0).left))) as [
@@ -57,7 +57,7 @@ export function FitHandles({ area, components, range, onPreview, onSet, onRange 
           at={{ left: pixelsOf(area, range[end], 0).left, top: area.height / 2 }}
           area={area}
           onKey={(event) => rangeKey(event, end)}
-          onDrop={(event) => onRange(ordered({ ...range, [end]: Math.round(placeOf(event).wavenumber) }))}
+          onDrop={(event) => onRange(ordered({ ...range, [end]: Math.round(placeOf(event).wavenumber) }), false)}
         />
       ))}
       {components.map((component, i) => {
@@ -82,6 +82,7 @@ export function FitHandles({ area, components, range, onPreview, onSet, onRange 
             now={wavenumber}
             text={`${formatNumber(Math.round(wavenumber), 5)} per centimetre, height ${formatNumber(height, 3)}`}
             at={pixelsOf(area, wavenumber, height)}
+            mark={String(i + 1)}
             {...dragging('top')}
           />,
           ...[-1, 1].map((side) => (
@@ -109,6 +110,8 @@ interface HandleProps {
   now: number;
   text: string;
   at: { left: number; top: number };
+  /** Stands beside it. */
+  mark?: string;
   area: PlotArea;
   onKey: (event: KeyboardEvent) => void;
   onMove?: (event: PointerEvent) => void;
@@ -122,7 +125,7 @@ const LOOKS = {
 };
 
 /** 24 px to take hold of, however small it is drawn. */
-function Handle({ look, name, now, text, at, area, onKey, onMove, onDrop }: HandleProps) {
+function Handle({ look, name, now, text, at, mark, area, onKey, onMove, onDrop }: HandleProps) {
   const isHeld = useRef(false);
   if (at.left < -1 || at.left > area.width + 1 || !Number.isFinite(at.top)) return null;
   return (
@@ -154,6 +157,11 @@ function Handle({ look, name, now, text, at, area, onKey, onMove, onDrop }: Hand
       style={{ left: at.left, top: Math.min(area.height, Math.max(0, at.top)) }}
     >
       <span className={LOOKS[look]} />
+      {mark && (
+        <span aria-hidden="true" className="num absolute left-5 top-1 text-xs text-zaffre">
+          {mark}
+        </span>
+      )}
     </div>
   );
 }

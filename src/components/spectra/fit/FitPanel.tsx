@@ -11,6 +11,7 @@ import type { SpectrumRecord } from '#src/contracts/spectra.ts';
 import { NumberInput } from '../bands/NumberInput.tsx';
 import type { BandEditing } from '../bands/useBandEditor.ts';
 import type { FetchedCurve } from '../page/curves.ts';
+import type { PlotBand } from '../plot/types.ts';
 import { HEIGHTS } from '../words.ts';
 import { ComparedFits } from './ComparedFits.tsx';
 import { ComponentTable } from './ComponentTable.tsx';
@@ -24,6 +25,8 @@ interface FitPanelProps {
   spectrum: SpectrumRecord;
   curve: FetchedCurve;
   editing: BandEditing;
+  /** Bands of the list, to be marked over the curve. */
+  bands: readonly PlotBand[];
   /** The bands were taken over, or the fit is left as it is. */
   onTaken: () => void;
   onClose: () => void;
@@ -32,7 +35,7 @@ interface FitPanelProps {
 const nothing = {};
 
 /** Bands fitted to the curve: treatment, components to drag and lock, residual, and the way into the band list. */
-export function FitPanel({ spectrum, curve, editing, onTaken, onClose }: FitPanelProps) {
+export function FitPanel({ spectrum, curve, editing, bands, onTaken, onClose }: FitPanelProps) {
   const fitting = useFit(spectrum, curve);
   const { state, work, make } = fitting;
   const { quantity } = editing;
@@ -62,7 +65,7 @@ export function FitPanel({ spectrum, curve, editing, onTaken, onClose }: FitPane
       <div className="flex flex-col gap-4">
         {fitting.formerSteps && fitting.formerSteps.length > 0 && <OtherCurve fitting={fitting} />}
         {work.entries.length === 0 && spectrum.fit && <OnRecord fitting={fitting} fit={spectrum.fit} curve={curve} />}
-        <FitPlot fitting={fitting} curve={curve} yUnit={curve.quantity} title={spectrum.title} />
+        <FitPlot fitting={fitting} curve={curve} yUnit={curve.quantity} title={spectrum.title} bands={bands} />
         <div className="flex flex-wrap items-center gap-2">
           <Button size="small" kind="primary" onClick={() => make({ operation: 'find', parameters: nothing })}>
             Find and fit bands
@@ -80,6 +83,7 @@ export function FitPanel({ spectrum, curve, editing, onTaken, onClose }: FitPane
           <Button size="small" onClick={add}>
             Add a component
           </Button>
+          <StatusLine kind="busy">{said(fitting)}</StatusLine>
           <span className="ml-auto inline-flex gap-2">
             <Button size="small" disabled={work.done === 0} onClick={fitting.undo}>
               <Undo2 aria-hidden="true" size={14} />
@@ -92,7 +96,6 @@ export function FitPanel({ spectrum, curve, editing, onTaken, onClose }: FitPane
           </span>
         </div>
         {fitting.isSlow && <Progress label="Fitting" value={null} onCancel={fitting.cancel} />}
-        <StatusLine kind="busy">{said(fitting)}</StatusLine>
         {fitting.problem && (
           <div role="alert">
             <Notice title="This step was not made.">{fitting.problem.message}</Notice>
@@ -110,6 +113,7 @@ export function FitPanel({ spectrum, curve, editing, onTaken, onClose }: FitPane
           compared={state.compared}
           chosen={{ count: state.components.length, edge: state.edge !== null }}
         />
+        <h3 className="-mb-2 text-sm font-semibold">How it is fitted</h3>
         <FitTreatment fitting={fitting} whole={whole} />
         <Instrument fitting={fitting} spectrum={spectrum} isEpsilon={quantity === 'epsilon'} />
         <FitSteps work={work} />

@@ -1,7 +1,7 @@
 import { useMemo, useState } from 'react';
 import { componentValues, fittedValues, foundationValues } from '#src/chem/spectra/fit/components.ts';
 import type { FitComponent } from '#src/chem/spectra/fit/fit-steps.ts';
-import { type PlotSeries, SpectrumPlot } from '../plot/SpectrumPlot.tsx';
+import { type PlotBand, type PlotSeries, SpectrumPlot } from '../plot/SpectrumPlot.tsx';
 import type { YUnit } from '../plot/units.ts';
 import type { Parts } from './drag.ts';
 import { FitHandles } from './FitHandles.tsx';
@@ -13,6 +13,8 @@ interface FitPlotProps {
   curve: { x: readonly number[]; y: readonly (number | null)[] };
   yUnit: YUnit;
   title: string;
+  /** Bands as they stand in the list, to be marked. */
+  bands: readonly PlotBand[];
 }
 
 /** Points of which a component is drawn. */
@@ -20,7 +22,7 @@ const DRAWN_POINTS = 400;
 const DASH = [4, 3];
 
 /** The curve, its components and their sum on the wavenumber axis, and the residual under it. */
-export function FitPlot({ fitting, curve, yUnit, title }: FitPlotProps) {
+export function FitPlot({ fitting, curve, yUnit, title, bands }: FitPlotProps) {
   const { state, treated, make } = fitting;
   const [held, setHeld] = useState<{ component: number; parts: Parts } | null>(null);
   const shown = useMemo(
@@ -49,7 +51,7 @@ export function FitPlot({ fitting, curve, yUnit, title }: FitPlotProps) {
       ...(components.length > 0 ? [sum] : []),
       ...components.map((one, i) => ({
         id: `component ${i}`,
-        label: `${i + 1}`,
+        label: `component ${i + 1}`,
         x,
         y: [...componentValues(settings.shape, one, x)],
         colour: 'var(--color-band-dd)',
@@ -68,6 +70,7 @@ export function FitPlot({ fitting, curve, yUnit, title }: FitPlotProps) {
   return (
     <SpectrumPlot
       series={series}
+      bands={bands}
       xUnit="cm-1"
       yUnit={yUnit}
       height={340}
@@ -82,11 +85,14 @@ export function FitPlot({ fitting, curve, yUnit, title }: FitPlotProps) {
             setHeld(null);
             if (Object.keys(parts).length > 0) make({ operation: 'set', parameters: { component, ...parts } }, byKey);
           }}
-          onRange={({ from, to }) =>
-            make({
-              operation: 'range',
-              parameters: { from: from <= first ? null : from, to: to >= last ? null : to },
-            })
+          onRange={({ from, to }, byKey) =>
+            make(
+              {
+                operation: 'range',
+                parameters: { from: from <= first ? null : from, to: to >= last ? null : to },
+              },
+              byKey,
+            )
           }
         />
       )}

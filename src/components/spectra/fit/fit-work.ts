@@ -18,20 +18,20 @@ export const stateOf = ({ entries, done }: FitWork): FitState => entries[done - 
 export const stepsOf = ({ entries, done }: FitWork): FitStep[] => entries.slice(0, done).map(({ step }) => step);
 
 const isSame = (a: FitStep | undefined, b: FitStep): boolean =>
-  a?.operation === 'set' && b.operation === 'set' && a.parameters.component === b.parameters.component;
+  (a?.operation === 'range' && b.operation === 'range') ||
+  (a?.operation === 'set' && b.operation === 'set' && a.parameters.component === b.parameters.component);
 
 /**
  * One step more; what was taken back before it is gone.
  *
- * @param joined - whether a component set again right after it was set makes one step with it, as a row of key strokes does
+ * @param joined - whether a component or a range set again right after it was set makes one step with it, as a row of key
+ *   strokes does
  */
 export function made(work: FitWork, step: FitStep, state: FitState, joined = false): FitWork {
   const kept = work.entries.slice(0, work.done);
   const last = kept.at(-1)?.step;
   const joins = joined && isSame(last, step);
-  const told = joins
-    ? ({ operation: 'set', parameters: { ...last?.parameters, ...step.parameters } } as FitStep)
-    : step;
+  const told = joins ? ({ ...step, parameters: { ...last?.parameters, ...step.parameters } } as FitStep) : step;
   const entries = [...(joins ? kept.slice(0, -1) : kept), { step: told, state }];
   return { entries, done: entries.length };
 }

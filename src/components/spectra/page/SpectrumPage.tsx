@@ -92,6 +92,7 @@ export function SpectrumPage({ first, choices, preparation, sentences }: Spectru
               spectrum={spectrum}
               curve={curve.data}
               editing={editing}
+              bands={shownBands.filter(({ quantity }) => quantity === curve.data?.quantity)}
               onTaken={() => {
                 setIsFitting(false);
                 setIsEditing(true);

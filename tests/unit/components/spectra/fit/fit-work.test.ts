@@ -40,6 +40,12 @@ test('a row of key strokes on one component is one step; on another, or after so
   expect(stepsOf(work)).toHaveLength(3);
 });
 
+test('a row of key strokes on an end of the range is one step', () => {
+  const range = (from: number): FitStep => ({ operation: 'range', parameters: { from, to: null } });
+  const work = made(made(NO_WORK, range(15_000), state(1), true), range(15_100), state(2), true);
+  expect(stepsOf(work)).toEqual([range(15_100)]);
+});
+
 test('a fit is full at 200 steps', () => {
   let work = NO_WORK;
   for (let i = 0; i < 200; i++) work = made(work, smooth(i), state(i));
