@@ -24,10 +24,7 @@ export function ProfilePanel({ account }: { account: Account }) {
         facts={[
           ['E-mail address', account.email],
           account.steward ? ['Part', 'steward'] : null,
-          [
-            'Labs',
-            account.labs.length > 0 ? <Labs labs={account.labs} /> : 'none: you read what folios share with you',
-          ],
+          ['Labs', account.labs.length > 0 ? <Labs labs={account.labs} /> : withoutLab(account.steward)],
           ['Account since', longDay(account.createdAt)],
         ]}
       />
@@ -56,6 +53,9 @@ export function ProfilePanel({ account }: { account: Account }) {
     </Panel>
   );
 }
+
+const withoutLab = (steward: boolean): string =>
+  steward ? 'none: you look after the whole registry' : 'none: you read what folios share with you';
 
 function Labs({ labs }: Pick<Account, 'labs'>) {
   return (
