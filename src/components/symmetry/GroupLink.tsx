@@ -2,7 +2,7 @@ import { PointGroup, Term } from '#src/components/notation/index.tsx';
 
 /** Address of a group, or of a term in it, on the symmetry page. */
 export const groupAddress = (group: string, from?: string): string =>
-  `/symmetry?${new URLSearchParams({ group, ...(from ? { from } : {}) })}`;
+  `/symmetry?${new URLSearchParams({ group, ...(from ? { from } : {}) })}${from ? '#selection' : ''}`;
 
 /** The symbol of a group that leads to its tables. */
 export function GroupLink({ group }: { group: string }) {

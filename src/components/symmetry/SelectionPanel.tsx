@@ -16,17 +16,17 @@ interface Props {
   change: (part: Partial<SymmetryState>) => void;
 }
 
-/** Terms to begin with: of the symmetric irrep to that of a rotation, as the first band of a low-spin d⁶ ion. */
-function firstTerms({ irreps }: Group): { from: string; to: string } {
+/** A transition to begin with: to the irrep of a rotation, with the spin kept, as the first band of a low-spin d⁶ ion. */
+function transitionOf({ irreps }: Group, { from, to }: Pick<SymmetryState, 'from' | 'to'>) {
   const rotation = irreps.find(({ functions }) => functions.includes('Rx')) ?? irreps.at(-1)!;
-  return { from: `1${irreps[0]!.label}`, to: `1${rotation.label}` };
+  const start = from ?? `1${irreps[0]!.label}`;
+  return { from: start, to: to ?? `${partsOf(start).multiplicity}${rotation.label}` };
 }
 
 /** Why a transition between two terms is strong or weak, in steps. */
 export function SelectionPanel({ state: { group: symbol, from, to }, change }: Props) {
   const group = useMemo(() => findGroup(symbol)!, [symbol]);
-  const start = firstTerms(group);
-  const part = { from: from ?? start.from, to: to ?? start.to };
+  const part = transitionOf(group, { from, to });
   const result = useMemo(() => judge(group, part.from, part.to), [group, part.from, part.to]);
   const groups = [{ choices: group.irreps.map(({ label }) => ({ value: label, label: <Irrep irrep={label} /> })) }];
   const field = (which: 'from' | 'to', words: string) => {

@@ -38,7 +38,9 @@ export function SymmetryPage({ search }: { search: string }) {
           <SplittingPanel {...props} />
         </div>
         <WhenNear waiting={later('Descent')}>{() => <DescentPanel {...props} choose={choose} />}</WhenNear>
-        <WhenNear waiting={later('Selection')}>{() => <SelectionPanel {...props} />}</WhenNear>
+        <div id="selection" className="min-w-0">
+          <WhenNear waiting={later('Selection')}>{() => <SelectionPanel {...props} />}</WhenNear>
+        </div>
         <WhenNear waiting={later('Vibrations')}>{() => <VibrationsPanel {...props} choose={choose} />}</WhenNear>
       </div>
     </div>
