@@ -34,6 +34,9 @@ export const FormulaReading = z
     ),
     counterIons: z.array(Counted),
     solvates: z.array(Counted),
+    isotopes: z
+      .array(z.object({ isotope: z.string(), element: z.string(), massNumber: z.number().int(), count: z.number() }))
+      .describe('Labelled atoms; all other values are those of natural abundance'),
     entities: z.array(
       z.looseObject({ entity: z.string(), charge: z.number().nullable(), hill: z.string(), count: z.number() }),
     ),

@@ -20,6 +20,7 @@ export function settleAquaIon(salt: RawSalt, context: Context): { salt: RawSalt;
   if (each < 1) return { salt, open: false };
   const oxides = countOf(entity, isOxide);
   const halides = countOf(entity, (l) => !isOxide(l));
+  if (halides >= (/^(Pd|Pt|Au)$/.test(entity.metals[0]!.element) ? 4 : 6)) return { salt, open: false }; // no room left
   const outside = Math.min(6 - oxides, each);
   const inside = Math.min(6 - oxides - halides, each);
   const answer = context.answers[CODE];

@@ -25,6 +25,7 @@ const NAMES: Readonly<Record<string, string>> = {
   'wilkinson′scatalyst': '[RhCl(PPh3)3]',
   'creutz–taubeion': '[{Ru(NH3)5}2(μ-pyz)]5+',
   prussianblue: 'Fe4[Fe(CN)6]3',
+  firpic: '[Ir(dfppy)2(pic)]',
   ferroin: '[Fe(phen)3]2+',
   ferrocyanide: '[Fe(CN)6]4-',
   ferricyanide: '[Fe(CN)6]3-',

@@ -37,6 +37,10 @@ export const carbonPhosphorusLigands: readonly Ligand[] = [
     synonyms: ['H2C=CH2', 'CH2CH2', 'CH2=CH2'],
     hapticity: 2,
   }),
+  ligand('dba', 'C17H14O', 0, 'C C', 'dibenzylideneacetone', 'O=C(/C=C/c1ccccc1)/C=C/c1ccccc1', 'acceptor', {
+    hapticity: 2,
+    canBridge: true,
+  }),
   ligand('C3H5', 'C3H5', -1, 'C C C', 'allyl', 'C=C[CH2-]', 'acceptor', { synonyms: ['allyl'], hapticity: 3 }),
   ligand('cod', 'C8H12', 0, 'C C', 'cycloocta-1,5-diene', 'C1CC=CCCC=C1', 'acceptor', {
     synonyms: ['COD', '1,5-cod'],

@@ -70,6 +70,17 @@ export const nitrogenLigands: readonly Ligand[] = [
     canBridge: true,
   }),
   ligand('Hpz', 'C3H4N2', 0, 'N', '1H-pyrazole', 'c1cn[nH]c1', 'acceptor', { synonyms: ['pzH'] }),
+  ligand('Htrz', 'C2H3N3', 0, 'N', '4H-1,2,4-triazole', 'c1nnc[nH]1', 'acceptor', {
+    synonyms: ['trzH'],
+    canBridge: true,
+  }),
+  ligand('trz', 'C2H2N3', -1, 'N', '1,2,4-triazolato', 'c1nc[n-]n1', 'donor', { canBridge: true }),
+  ligand('NH2trz', 'C2H4N4', 0, 'N', '4-amino-4H-1,2,4-triazole', 'Nn1cnnc1', 'acceptor', { canBridge: true }),
+  ligand('ptz', 'C4H8N4', 0, 'N', '1-propyl-1H-tetrazole', 'CCCn1cnnn1', 'acceptor'),
+  ligand('bpe', 'C12H10N2', 0, 'N', '1,2-di(pyridin-4-yl)ethene', 'C(=C/c1ccncc1)\\c1ccncc1', 'acceptor', {
+    canBridge: true,
+  }),
+  ligand('dca', 'C2N3', -1, 'N', 'dicyanamido', 'N#C[N-]C#N', 'donor', { synonyms: ['N(CN)2'], canBridge: true }),
   ligand('Him', 'C3H4N2', 0, 'N', '1H-imidazole', 'c1c[nH]cn1', 'donor', { synonyms: ['imH', 'im', 'imidazole'] }),
   ligand('imidazolato', 'C3H3N2', -1, 'N', 'imidazolato', 'c1c[n-]cn1', 'donor', {
     synonyms: ['imidazolate'],

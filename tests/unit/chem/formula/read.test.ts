@@ -59,6 +59,7 @@ describe('everyday forms without brackets', () => {
     expect(readFormula('NiCl2·6H2O', { 'aqua-ion': 'inner' }).formula).toBe('[NiCl2(H2O)4]·2H2O');
     expect(readFormula('VOSO4·5H2O', { 'aqua-ion': 'aqua' }).formula).toBe('[V(H2O)5O]SO4');
     expect(codes('NiCl2·6H2O', { 'aqua-ion': 'as-typed' })).toEqual([]);
+    for (const full of ['H2PtCl6·6H2O', 'HAuCl4·3H2O', 'K2PtCl4·H2O']) expect(codes(full), full).toEqual([]);
   });
 });
 
