@@ -14,7 +14,6 @@ const ITEMS: readonly NavigationItem[] = [
   { href: '/ligands', label: 'Ligands', forGuests: false },
   { href: '/symmetry', label: 'Symmetry', forGuests: true },
   { href: '/levels', label: 'Levels', forGuests: true },
-  { href: '/plan', label: 'Plan', forGuests: false },
   { href: '/folios', label: 'Folios', forGuests: true },
   { href: '/labs', label: 'Labs', forGuests: false },
   { href: '/people', label: 'People', forGuests: false, forStewards: true },

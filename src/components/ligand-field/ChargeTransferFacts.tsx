@@ -43,10 +43,10 @@ export function ChargeTransferFacts({ told: { lmct, mlct, reasons } }: { told: C
             <tbody>
               {lmct.map((one) => (
                 <tr key={one.ligand}>
-                  <th scope="row" className="!pl-[18px] !text-sm !text-ink">
+                  <td className="!pl-[18px] text-ink">
                     <Formula formula={one.ligand} />{' '}
                     <span className="font-normal text-ink-soft">{ORBITAL[one.orbital]}</span>
-                  </th>
+                  </td>
                   <td>
                     <Term term={one.acceptor} />
                   </td>
@@ -77,7 +77,7 @@ export function ChargeTransferFacts({ told: { lmct, mlct, reasons } }: { told: C
           No MLCT is expected: {[...new Set(implausible.map(({ reason }) => reason))].join(' ')}
         </p>
       )}
-      {reasons.length > 0 && <p className="max-w-prose text-xs text-ink-soft">{reasons.join(' ')}</p>}
+      {reasons.length > 0 && <p className="max-w-[95ch] text-xs text-ink-soft">{reasons.join(' ')}</p>}
     </div>
   );
 }

@@ -5,7 +5,7 @@ const labels = (role: string | undefined) => navigationFor(role).map(({ label })
 
 test('a guest is led to complexes, symmetry, levels and folios only, nobody nowhere', () => {
   expect(labels('guest')).toEqual(['Complexes', 'Symmetry', 'Levels', 'Folios']);
-  expect(labels('contributor')).toHaveLength(9);
+  expect(labels('contributor')).toHaveLength(8);
   expect(labels('lead')).toEqual(labels('contributor'));
   expect(labels('steward')).toEqual([...labels('lead'), 'People', 'Trail']);
   expect(labels(undefined)).toEqual([]);

@@ -8,6 +8,7 @@ import { saveText } from '#src/components/ui/save-text.ts';
 import { type DataColumn, tableCsv } from '#src/components/ui/table-csv.ts';
 import { LevelDiagram } from '../drawing/LevelDiagram.tsx';
 import { svgFile } from '../drawing/svg-file.ts';
+import { useWidth } from '../drawing/useWidth.ts';
 import { LevelsControls } from './LevelsControls.tsx';
 import { addressOf, type LevelsState, type LevelsView, stateOf } from './levels-address.ts';
 import { readOut } from './read-out.ts';
@@ -56,6 +57,7 @@ function Diagrams({ state, change }: StateProps) {
   const drawing = useDrawing(state);
   const holder = useRef<HTMLDivElement>(null);
   const name = `levels-d${state.n}-${state.view === 'path' ? state.path : state.view === 'orgel' ? 'orgel' : state.geometry}`;
+  const width = useWidth(holder, 880);
   const saveSvg = () => {
     const svg = holder.current?.querySelector('svg');
     if (svg) saveText(`${name}.svg`, svgFile(new XMLSerializer().serializeToString(svg)), 'image/svg+xml');
@@ -81,8 +83,8 @@ function Diagrams({ state, change }: StateProps) {
         <div ref={holder}>
           <LevelDiagram
             title={drawing.title}
-            width={880}
-            height={600}
+            width={width}
+            height={Math.min(600, Math.max(420, Math.round(width * 0.68)))}
             window={drawing.window}
             curves={drawing.curves}
             crossings={drawing.crossings}
@@ -95,8 +97,11 @@ function Diagrams({ state, change }: StateProps) {
         </div>
         {drawing.crossings.length > 0 && (
           <ul className="mt-1 text-xs text-ink-soft">
-            {drawing.crossings.map(({ x, title }) => (
-              <li key={x}>{title}.</li>
+            {drawing.crossings.map(({ x, from, to }) => (
+              <li key={x}>
+                At <i>Δ</i>/<i>B</i> = <span className="num">{x.toFixed(2)}</span> the ground level changes from{' '}
+                <Term term={from} /> to <Term term={to} />.
+              </li>
             ))}
           </ul>
         )}
@@ -187,9 +192,9 @@ function ReadOut({ drawing: { curves, window, unit }, at, view, change }: ReadOu
           <tbody>
             {levels.map(({ label, energy, strong }, i) => (
               <tr key={i} className={strong ? '' : 'text-ink-soft'}>
-                <th scope="row" className="!pl-[18px] !text-sm !text-ink">
+                <td className="!pl-[18px] text-ink">
                   <Term term={label} />
-                </th>
+                </td>
                 <td className="num !pr-[18px] text-right">
                   {unit === 'B' ? energy.toFixed(2).replace('-', '−') : formatNumber(Math.round(energy), 7)}
                 </td>

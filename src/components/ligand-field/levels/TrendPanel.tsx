@@ -12,12 +12,13 @@ import { type DataColumn, tableCsv } from '#src/components/ui/table-csv.ts';
 import { ticksOf } from '../drawing/clip-curve.ts';
 import { placeAlong } from '../drawing/place-along.ts';
 import { svgFile } from '../drawing/svg-file.ts';
+import { useWidth } from '../drawing/useWidth.ts';
 import type { LevelsState, TrendGeometry } from './levels-address.ts';
 import { TREND_IONS } from './trend-ions.ts';
 
 const COLOURS = ['dd', 'lmct', 'mlct', 'intraligand', 'intervalence'].map((name) => `var(--color-band-${name})`);
 const DASHES = [undefined, '6 3', '2 3'];
-const SIZE = { width: 900, height: 460, left: 64, right: 96, top: 26, bottom: 44 };
+const SIZE = { height: 460, left: 64, right: 96, top: 26, bottom: 44 };
 /** The lowest edge of what is drawn, cm⁻¹. */
 const FLOOR = 0;
 
@@ -29,8 +30,9 @@ interface TrendPanelProps {
 /** LMCT of several ions over ligands of rising optical electronegativity, field and spin pairing left out. */
 export function TrendPanel({ state: { trend: geometry }, change }: TrendPanelProps) {
   const holder = useRef<HTMLDivElement>(null);
+  const width = useWidth(holder, 900);
   const { ligands, lines } = useMemo(() => trendOf(geometry), [geometry]);
-  const toX = (i: number) => SIZE.left + ((i + 0.5) / ligands.length) * (SIZE.width - SIZE.left - SIZE.right);
+  const toX = (i: number) => SIZE.left + ((i + 0.5) / ligands.length) * (width - SIZE.left - SIZE.right);
   const highest = Math.max(60_000, ...lines.flatMap(({ points }) => points.map(({ wavenumber }) => wavenumber)));
   const bottom = SIZE.height - SIZE.bottom;
   const toY = (wavenumber: number) => bottom - ((wavenumber - FLOOR) / (highest - FLOOR)) * (bottom - SIZE.top);
@@ -78,8 +80,8 @@ export function TrendPanel({ state: { trend: geometry }, change }: TrendPanelPro
           xmlns="http://www.w3.org/2000/svg"
           role="img"
           aria-label={`LMCT estimates of ${lines.length} ions with ${ligands.length} ligands`}
-          viewBox={`0 0 ${SIZE.width} ${SIZE.height}`}
-          width={SIZE.width}
+          viewBox={`0 0 ${width} ${SIZE.height}`}
+          width={width}
           height={SIZE.height}
           className="h-auto w-full"
           fontFamily="Noto Sans, sans-serif"
@@ -90,7 +92,7 @@ export function TrendPanel({ state: { trend: geometry }, change }: TrendPanelPro
               <g key={tick}>
                 <line
                   x1={SIZE.left}
-                  x2={SIZE.width - SIZE.right}
+                  x2={width - SIZE.right}
                   y1={toY(tick)}
                   y2={toY(tick)}
                   stroke="var(--color-hairline)"
@@ -109,7 +111,7 @@ export function TrendPanel({ state: { trend: geometry }, change }: TrendPanelPro
                 ]}
               />
             </text>
-            <path d={`M${SIZE.left} ${bottom}H${SIZE.width - SIZE.right}`} stroke="var(--color-ink-soft)" />
+            <path d={`M${SIZE.left} ${bottom}H${width - SIZE.right}`} stroke="var(--color-ink-soft)" />
           </g>
           {ligands.map(({ abbreviation }, i) => (
             <text key={abbreviation} x={toX(i)} y={bottom + 19} textAnchor="middle" fill="var(--color-ink)">
@@ -139,11 +141,11 @@ export function TrendPanel({ state: { trend: geometry }, change }: TrendPanelPro
                 {places[k] !== null && (
                   <>
                     <path
-                      d={`M${(place(end.ligand) + 5).toFixed(1)} ${toY(end.wavenumber).toFixed(1)}L${SIZE.width - SIZE.right + 4} ${places[k]!.toFixed(1)}`}
+                      d={`M${(place(end.ligand) + 5).toFixed(1)} ${toY(end.wavenumber).toFixed(1)}L${width - SIZE.right + 4} ${places[k]!.toFixed(1)}`}
                       stroke="var(--color-hairline)"
                       fill="none"
                     />
-                    <text x={SIZE.width - SIZE.right + 8} y={places[k]! + 4} fill={colour}>
+                    <text x={width - SIZE.right + 8} y={places[k]! + 4} fill={colour}>
                       {oxidationStateText(ion.element, ion.oxidationState)}
                     </text>
                   </>
@@ -153,7 +155,7 @@ export function TrendPanel({ state: { trend: geometry }, change }: TrendPanelPro
           })}
         </svg>
       </div>
-      <p className="mt-2 max-w-prose text-xs text-ink-soft">
+      <p className="mt-2 max-w-[95ch] text-xs text-ink-soft">
         Estimates of 30 000 cm⁻¹ times the difference of optical electronegativities; they usually err by 3 000 cm⁻¹ or
         more. Field splitting and spin pairing are left out, so that lines compare ligands: a page of a complex and the
         plan add them.

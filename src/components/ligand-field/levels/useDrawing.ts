@@ -1,5 +1,6 @@
 import { useMemo } from 'react';
 import type { Run } from '#src/components/notation/runs.ts';
+import { parsePointGroup } from '#src/components/notation/term.ts';
 import type { Window } from '../drawing/clip-curve.ts';
 import type { DrawnCurve } from '../drawing/lay-out.ts';
 import { useComputed } from '../worker/useComputed.ts';
@@ -8,7 +9,7 @@ import type { LevelsState } from './levels-address.ts';
 export interface Drawing {
   curves: DrawnCurve[];
   window: Window;
-  crossings: { x: number; title: string }[];
+  crossings: { x: number; from: string; to: string; title: string }[];
   xLabel: Run[];
   yLabel: Run[];
   xNames?: { x: number; text: string }[];
@@ -86,7 +87,7 @@ export function useDrawing(state: LevelsState): Drawing {
         ...none,
         curves,
         window: { x: [0, 1], y: [0, top * B] },
-        xLabel: [run(`labels in ${answer?.group ?? '…'}`)],
+        xLabel: answer ? [run('labels in '), ...parsePointGroup(answer.group)] : [run('labels')],
         yLabel: WAVENUMBERS,
         xNames: [
           { x: 0, text: ends[0] },
@@ -112,6 +113,8 @@ export function useDrawing(state: LevelsState): Drawing {
       window: { x: [0, max], y: [low, top] },
       crossings: (diagram?.crossings ?? []).map(({ x, from, to }) => ({
         x,
+        from,
+        to,
         title: `At Δ/B ${x.toFixed(2)} the ground level changes from ${from} to ${to}`,
       })),
       title: `Energy over B against Δ over B of d${n} in ${geometry}, C/B ${ratio}`,

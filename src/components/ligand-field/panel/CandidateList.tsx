@@ -39,7 +39,8 @@ export function CandidateList({ candidates, chosen, onChoose }: CandidateListPro
                   <i>Δ</i>{' '}
                   <Quantity value={candidate.delta === null ? null : Math.round(candidate.delta)} figures={6} />,{' '}
                   <i>B</i> <Quantity value={candidate.B === null ? null : Math.round(candidate.B)} figures={6} />,
-                  ground <Term term={candidate.ground} />, rms <Quantity value={candidate.rms} figures={2} />
+                  ground <Term term={candidate.ground} />, rms{' '}
+                  <span className="num">{candidate.rms < 0.5 ? '0' : formatNumber(Math.round(candidate.rms), 5)}</span>
                 </span>
                 {candidate.remarks.map((remark) => (
                   <span key={remark} className="block text-xs text-alert">

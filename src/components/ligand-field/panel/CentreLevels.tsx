@@ -8,6 +8,7 @@ import type { LevelFitRecord } from '#src/contracts/level-fits.ts';
 import { LevelDiagram } from '../drawing/LevelDiagram.tsx';
 import type { Applicability } from './applicability.ts';
 import { BandChoice } from './BandChoice.tsx';
+import { FitFacts } from './FitFacts.tsx';
 import { FitPart } from './FitPart.tsx';
 import { firstSliders } from './first-sliders.ts';
 import type { LevelPanelProps } from './LevelPanel.tsx';
@@ -139,6 +140,11 @@ export function CentreLevels({ complex, ordinal, ligands, lists, found, maySave 
             = <span className="num">{formatNumber(sliders.C / sliders.B, 3)}</span>. Full lines are of a spin that the
             ground level has here; filled dots are assigned bands, hollow ones those that the fit proposes.
           </p>
+          {fitting.candidate && (
+            <div className="mt-4">
+              <FitFacts fit={fitting.candidate} />
+            </div>
+          )}
         </div>
         <div className="flex min-w-0 flex-col gap-4">
           <fieldset className="min-w-0">
@@ -185,14 +191,14 @@ export function CentreLevels({ complex, ordinal, ligands, lists, found, maySave 
         </div>
       </div>
       {(quick.refusal ?? coupled.refusal) && <p className="mt-2 text-alert">{quick.refusal ?? coupled.refusal}</p>}
-      <div className="-mx-[18px] mt-4">
-        <LevelsTable rows={rows} coupled={sliders.zeta > 0 && coupled.answer !== null} label={`Levels of ${element}`} />
-      </div>
       <SavedFits
         fits={(saved.list.data ?? []).filter((fit) => fit.centre === ordinal)}
         onShow={show}
         onWithdraw={(id) => saved.withdraw.mutateAsync(id)}
       />
+      <div className="-mx-[18px] mt-4 -mb-4">
+        <LevelsTable rows={rows} coupled={sliders.zeta > 0 && coupled.answer !== null} label={`Levels of ${element}`} />
+      </div>
     </>
   );
 }

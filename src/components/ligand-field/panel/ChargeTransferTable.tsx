@@ -9,11 +9,26 @@ import { ChargeTransferFacts } from '../ChargeTransferFacts.tsx';
 type Centre = ComplexRecord['centres'][number];
 
 /** Charge transfer to be expected of the one centre of a complex, from its ligands. */
-export function ChargeTransferTable({ centre, ligands }: { centre: Centre; ligands: readonly LigandReading[] }) {
+export function ChargeTransferTable({
+  accession,
+  centre,
+  ligands,
+}: {
+  accession: string;
+  centre: Centre;
+  ligands: readonly LigandReading[];
+}) {
   const told = useMemo(() => expected(centre, ligands), [centre, ligands]);
   if (!told) return null;
   return (
-    <Panel title="Charge transfer to be expected">
+    <Panel
+      title="Charge transfer to be expected"
+      aside={
+        <a className="link no-print" href={`/plan?complex=${accession}`}>
+          Plan a measurement
+        </a>
+      }
+    >
       <ChargeTransferFacts told={told} />
     </Panel>
   );

@@ -4,7 +4,6 @@ import { TextInput } from '#src/components/ui/controls.tsx';
 import { Problem } from '#src/components/ui/Problem.tsx';
 import { StatusLine } from '#src/components/ui/StatusLine.tsx';
 import { CandidateList } from './CandidateList.tsx';
-import { FitFacts } from './FitFacts.tsx';
 import type { Fitting } from './useFit.ts';
 import type { useSavedFits } from './useSavedFits.ts';
 
@@ -42,7 +41,6 @@ export function FitPart({ fitting, saved, centre, maySave, labOnly }: FitPartPro
     );
   return (
     <>
-      <FitFacts fit={candidate} />
       <CandidateList candidates={candidates} chosen={index} onChoose={choose} />
       {maySave && (
         <div className="no-print flex flex-col gap-2">

@@ -47,7 +47,7 @@ export function LevelPanel({ complex, ligands, lists, maySave }: LevelPanelProps
           <CentreLevels key={ordinal} {...{ complex, ordinal, ligands, lists, found, maySave }} />
         )}
       </Panel>
-      {!several && <ChargeTransferTable centre={centre} ligands={ligands} />}
+      {!several && <ChargeTransferTable accession={complex.accession} centre={centre} ligands={ligands} />}
     </>
   );
 }

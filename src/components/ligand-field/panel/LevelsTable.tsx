@@ -4,6 +4,12 @@ import type { LevelRow } from './level-rows.ts';
 
 const whole = (value: number) => formatNumber(Math.round(value), 7);
 
+/** How far a level lies above a band. */
+const signed = (distance: number): string => {
+  const rounded = Math.round(distance);
+  return `${rounded > 0 ? '+' : rounded < 0 ? '−' : ''}${whole(Math.abs(rounded))}`;
+};
+
 /** Levels with what the rules say of them and the bands that lie on them. */
 export function LevelsTable({ rows, coupled, label }: { rows: readonly LevelRow[]; coupled: boolean; label: string }) {
   return (
@@ -12,7 +18,9 @@ export function LevelsTable({ rows, coupled, label }: { rows: readonly LevelRow[
       <table className="table table-compact">
         <thead className="sticky top-0 z-10 bg-glaze">
           <tr>
-            <th scope="col">Level</th>
+            <th scope="col" className="!pl-[18px]">
+              Level
+            </th>
             <th scope="col" className="!text-right">
               <Unit unit="cm-1" />
             </th>
@@ -31,9 +39,9 @@ export function LevelsTable({ rows, coupled, label }: { rows: readonly LevelRow[
         <tbody>
           {rows.map((row) => (
             <tr key={row.key} className={row.spinAllowed === false ? 'text-ink-soft' : ''}>
-              <th scope="row" className="!text-sm !text-ink">
+              <td className="!pl-[18px] text-ink">
                 {coupled ? <Irrep irrep={row.label} /> : <Term term={row.label} />}
-              </th>
+              </td>
               <td className="num text-right">{whole(row.energy)}</td>
               <td className="num text-right">{row.energy > 1 ? formatNumber(Math.round(1e7 / row.energy), 6) : '–'}</td>
               <td className="num text-right">{row.degeneracy}</td>
@@ -50,10 +58,7 @@ export function LevelsTable({ rows, coupled, label }: { rows: readonly LevelRow[
                 {row.bands.map(({ band, distance }) => (
                   <span key={band.id} className="mr-3">
                     <span className="num">{whole(band.wavenumber)}</span>{' '}
-                    <span className="num text-xs text-ink-soft">
-                      ({distance >= 0 ? '+' : '−'}
-                      {whole(Math.abs(distance))})
-                    </span>
+                    <span className="num text-xs text-ink-soft">({signed(distance)})</span>
                   </span>
                 ))}
               </td>

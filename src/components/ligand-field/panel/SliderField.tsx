@@ -37,7 +37,7 @@ export function SliderField({ name, symbol, value, least, most, step, onChange }
         min={least}
         max={most}
         step="any"
-        value={Math.round(value * 10) / 10}
+        value={step >= 1 ? Math.round(value) : Math.round(value * 100) / 100}
         onChange={(event) =>
           Number.isFinite(event.currentTarget.valueAsNumber) && onChange(event.currentTarget.valueAsNumber)
         }

@@ -65,16 +65,14 @@ export function DilutionPanel({ page: { draft, change, limits, dilution } }: { p
             <tbody>
               {dilution.dilutions.map(({ concentration, path, bands }, i) => (
                 <tr key={`${concentration} ${path}`}>
-                  <th scope="row" className="!pl-[18px] !text-sm !text-ink">
-                    {i + 1}
-                  </th>
+                  <td className="!pl-[18px] text-ink">{i + 1}</td>
                   <td className="num text-right">{formatNumber(concentration * 1000, 2)}</td>
                   <td className="num text-right">{path}</td>
                   <td className="whitespace-normal">
                     {bands.map(({ wavenumber, absorbance, least, most }) => (
                       <span key={wavenumber} className="mr-4 inline-block whitespace-nowrap">
                         <span className="num">{formatNumber(wavenumber, 6)}</span>{' '}
-                        <b className="num font-medium">{absorbance.toFixed(2)}</b>{' '}
+                        <b className="num ml-1 font-medium">{absorbance.toFixed(2)}</b>{' '}
                         <span className="num text-xs text-ink-soft">
                           ({rough(least)} – {rough(most)})
                         </span>
@@ -96,7 +94,7 @@ export function DilutionPanel({ page: { draft, change, limits, dilution } }: { p
           ))}
         </ul>
       )}
-      <p className="max-w-prose border-t border-faint px-[18px] py-3 text-xs text-ink-soft">
+      <p className="max-w-[95ch] border-t border-faint px-[18px] py-3 text-xs text-ink-soft">
         For the typical ε of a band of its kind. The limits of ε span a factor of a hundred: measure the first solution,
         then correct the others by what it showed. Ions that take up solvent or lose ligands on dilution do not follow
         the plan.

@@ -2,11 +2,15 @@ import type { SolutionColour } from '#src/chem/colour/index.ts';
 import type { Plan } from '#src/chem/planning/index.ts';
 import { Cuvette } from '#src/components/marks/Cuvette.tsx';
 import { DCount, Formula, Quantity, Term, Unit } from '#src/components/notation/index.tsx';
-import { formatNumber } from '#src/components/notation/quantity.ts';
+import { formatNumber, groupDigits } from '#src/components/notation/quantity.ts';
 import { Panel } from '#src/components/ui/Panel.tsx';
 
 /** A limit of ε to two figures, as such limits deserve. */
-export const rough = (value: number): string => formatNumber(Number(value.toPrecision(2)), 2);
+export const rough = (value: number): string => groupDigits(String(Number(value.toPrecision(2))));
+
+/** Whether a cubic field of this d-count has two spin states. */
+const hasSpinChoice = (dCount: number, geometry: string): boolean =>
+  geometry === 'T-4' ? dCount >= 3 && dCount <= 6 : dCount >= 4 && dCount <= 7;
 
 interface PlannedBandsProps {
   plan: Plan;
@@ -30,7 +34,7 @@ export function PlannedBands({ plan, geometry, colour }: PlannedBandsProps) {
                 , <Term term={ground} />
               </>
             )}
-            {spin && `, ${spin} spin`}
+            {spin && hasSpinChoice(dCount, geometry) && `, ${spin} spin`}
           </span>
           {delta !== null && (
             <span>
@@ -78,7 +82,7 @@ export function PlannedBands({ plan, geometry, colour }: PlannedBandsProps) {
               {bands.map((band, i) => (
                 <tr key={i} className={band.spinAllowed ? '' : 'text-ink-soft'}>
                   <td className="!pl-[18px]">{band.kind === 'd-d' ? 'd–d' : 'LMCT'}</td>
-                  <th scope="row" className="!text-sm !text-ink">
+                  <td className="text-ink">
                     {band.kind === 'd-d' ? (
                       <Term term={band.to} />
                     ) : (
@@ -86,7 +90,7 @@ export function PlannedBands({ plan, geometry, colour }: PlannedBandsProps) {
                         from <Formula formula={band.to} />
                       </>
                     )}
-                  </th>
+                  </td>
                   <td className="num text-right">{formatNumber(band.wavenumber, 6)}</td>
                   <td className="num text-right">{Math.round(band.wavelength)}</td>
                   <td className="text-xs">{band.spinAllowed ? 'allowed' : 'forbidden'}</td>
@@ -101,12 +105,12 @@ export function PlannedBands({ plan, geometry, colour }: PlannedBandsProps) {
       )}
       <div className="border-t border-faint px-[18px] py-3 text-xs text-ink-soft">
         {reasons.map((reason) => (
-          <p key={reason} className="max-w-prose">
+          <p key={reason} className="max-w-[95ch]">
             {reason}
           </p>
         ))}
         {bands[0] && (
-          <p className="max-w-prose">
+          <p className="max-w-[95ch]">
             Usual limits of ε: {[...new Set(bands.map((b) => b.epsilon.source))].join('; ')}.
           </p>
         )}
