@@ -11,7 +11,7 @@ function spectrumFile(): string {
     const y = gaussian(x, 21_550, 40.1, 3600) + gaussian(x, 28_500, 33.4, 4100) + 0.02 * Math.sin(i * i);
     return `${x},${y.toFixed(5)}`;
   });
-  return ['wavenumber / cm-1,epsilon / dm3 mol-1 cm-1', ...rows].join('\n');
+  return [`wavenumber / cm-1,epsilon / dm3 mol-1 cm-1`, ...rows].join('\n');
 }
 
 test('bands are fitted, locked, moved by keys, taken back, taken over, and stand on record as fitted', async ({

@@ -30,6 +30,23 @@ export function subtractBaseline(x: ArrayLike<number>, y: ArrayLike<number>, bas
   return Float64Array.from(y, (value, i) => value - (y0 + slope * (rise(x[i]!) - u0)));
 }
 
+/**
+ * Two places where a base line may go through: the lowest points of the lower and of the upper half of a curve.
+ *
+ * @param x - wavenumbers in cm⁻¹, ascending
+ * @returns null where one half has no point
+ */
+export function quietPlaces(x: ArrayLike<number>, y: ArrayLike<number>): { from: number; to: number } | null {
+  const middle = ((x[0] ?? 0) + (x[x.length - 1] ?? 0)) / 2;
+  let [from, to] = [-1, -1];
+  for (let i = 0; i < x.length; i++) {
+    if (!Number.isFinite(y[i]!)) continue;
+    if (x[i]! < middle && (from < 0 || y[i]! < y[from]!)) from = i;
+    if (x[i]! > middle && (to < 0 || y[i]! < y[to]!)) to = i;
+  }
+  return from < 0 || to < 0 ? null : { from: x[from]!, to: x[to]! };
+}
+
 function meanAt(x: ArrayLike<number>, y: ArrayLike<number>, wavenumber: number): number {
   const reach = ANCHOR_SHARE * ((x[x.length - 1] ?? 0) - (x[0] ?? 0));
   let [sum, count] = [0, 0];

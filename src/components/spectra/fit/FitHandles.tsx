@@ -158,7 +158,7 @@ function Handle({ look, name, now, text, at, mark, area, onKey, onMove, onDrop }
     >
       <span className={LOOKS[look]} />
       {mark && (
-        <span aria-hidden="true" className="num absolute left-5 top-1 text-xs text-zaffre">
+        <span aria-hidden="true" className="num absolute -top-3.5 text-xs text-zaffre">
           {mark}
         </span>
       )}

@@ -1,3 +1,4 @@
+import { quietPlaces } from '#src/chem/spectra/baseline.ts';
 import type { FitState } from '#src/chem/spectra/fit/fit-steps.ts';
 import { Unit } from '#src/components/notation/index.tsx';
 import { Checkbox, Select } from '#src/components/ui/controls.tsx';
@@ -19,7 +20,7 @@ const perCm = (words: string) => (
 );
 
 /** What is done to the curve before it is fitted, and what is fitted to it. */
-export function FitTreatment({ fitting: { state, make }, whole }: FitTreatmentProps) {
+export function FitTreatment({ fitting: { state, treated, make }, whole }: FitTreatmentProps) {
   const { range, smoothing, baseline, settings } = state;
   const set = (part: Partial<FitState['settings']>) =>
     make({ operation: 'settings', parameters: { ...settings, ...part } });
@@ -28,8 +29,12 @@ export function FitTreatment({ fitting: { state, make }, whole }: FitTreatmentPr
   const setBaseline = (part: Partial<NonNullable<FitState['baseline']>>) =>
     make({
       operation: 'baseline',
-      parameters: { baseline: { kind: 'line', ...anchors(range, whole), ...baseline, ...part } },
+      parameters: { baseline: { kind: 'line', ...(baseline ?? places()), ...part } },
     });
+  const places = () => {
+    const { from, to } = quietPlaces(treated.x, treated.y) ?? whole;
+    return { from: Math.round(from), to: Math.round(to) };
+  };
   const edge = settings.edge === null ? 'auto' : settings.edge ? 'yes' : 'no';
   return (
     <div className="grid grid-cols-2 items-start gap-3 md:grid-cols-4">
@@ -112,11 +117,4 @@ export function FitTreatment({ fitting: { state, make }, whole }: FitTreatmentPr
       />
     </div>
   );
-}
-
-/** Places for a base line to begin with: a little inside the ends of what is fitted. */
-function anchors(range: FitState['range'], whole: { from: number; to: number }) {
-  const [from, to] = [range.from ?? whole.from, range.to ?? whole.to];
-  const inset = 0.02 * (to - from);
-  return { from: Math.round(from + inset), to: Math.round(to - inset) };
 }

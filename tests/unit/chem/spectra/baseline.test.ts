@@ -1,6 +1,6 @@
 import { expect, test } from 'vitest';
 import { DomainError } from '#src/chem/errors.ts';
-import { subtractBaseline } from '#src/chem/spectra/baseline.ts';
+import { quietPlaces, subtractBaseline } from '#src/chem/spectra/baseline.ts';
 
 const x = Float64Array.from({ length: 301 }, (_, i) => 10_000 + 100 * i);
 const band = (v: number) => 50 * Math.exp(-(((v - 25_000) / 1500) ** 2));
@@ -19,6 +19,19 @@ test('scattering that grows as ν̄⁴ is taken off but for the curvature within
   flat.forEach((value, i) => {
     expect(value).toBeCloseTo(band(x[i]!), 2);
   });
+});
+
+test('a base line may go through the lowest points of both halves, whatever rises at the end', () => {
+  const y = x.map(
+    (v) => band(v) + 2 * ((v - 14_000) / 1000) ** 2 * (v < 14_000 ? 1 : 0) + 80 * Math.exp((v - 40_000) / 900),
+  );
+  y[60] = Number.NaN;
+  const places = quietPlaces(x, y)!;
+  expect(places.from).toBeGreaterThan(13_000);
+  expect(places.from).toBeLessThan(18_000);
+  expect(places.to).toBeGreaterThan(28_000);
+  expect(places.to).toBeLessThan(35_000);
+  expect(quietPlaces([1, 2], [Number.NaN, 1])).toBeNull();
 });
 
 test('a gap stays a gap', () => {
