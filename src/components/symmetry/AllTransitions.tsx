@@ -149,7 +149,7 @@ function Line({ row, onChoose }: { row: TransitionRow; onChoose: (row: string) =
         {from === 0 ? `below ${groupDigits(String(to))}` : `${groupDigits(String(from))} to ${groupDigits(String(to))}`}
       </td>
       <td>
-        <span className="flex gap-2.5">
+        <span className="flex min-w-24 max-w-56 flex-wrap gap-x-2.5">
           {bands.map(({ band, spectrum }) => (
             <a
               key={band.id}
