@@ -1,6 +1,7 @@
 import { assembleEntity } from './assemble.ts';
 import type { Context, Part } from './entity.ts';
 import type { RawEntity, RawLigand, RawSalt } from './raw.ts';
+import type { Group, Item } from './syntax.ts';
 
 const CODE = 'bridges';
 
@@ -65,4 +66,12 @@ function oligomerOf(entity: RawEntity, bridge: Bridge | null): RawEntity {
   });
   const part: Part = { kind: 'fragment', fragment: { metals: [...entity.metals], ligands, count: entity.count } };
   return assembleEntity([part], { ...entity, count: 1 });
+}
+
+/** `[Fe(salen)]2O`: an oxide or sulfide behind a pair of parts holds them together. */
+export function bridgedPair([part, bridge, more]: readonly Item[]): Group | null {
+  if (part?.kind !== 'group' || bridge?.kind !== 'run' || more || !/^(O|S)$/.test(bridge.text)) return null;
+  if (part.open !== '[' || part.count !== 2 || part.charge !== null) return null;
+  const inside: Item[] = [{ ...part, open: '{' }, bridge];
+  return { ...part, open: '[', items: inside, inner: `{${part.inner}}2${bridge.text}`, count: 1 };
 }

@@ -4,6 +4,7 @@ import { assembleEntity } from './assemble.ts';
 import { type Context, holdsMetal, interpretParts, runHoldsMetal } from './entity.ts';
 import type { Ion } from './ions.ts';
 import { compositionOf, findAnion, findCation, findSolvent, ionSpellings, longest, metalOxoanion } from './lexicon.ts';
+import { bridgedPair } from './oligomer.ts';
 import type { BareMetal, RawSalt } from './raw.ts';
 import { descriptorOf, stereoBefore, withoutStereo } from './stereo.ts';
 import { type Component, countOf, type Group, type Item, readCharge, refuse } from './syntax.ts';
@@ -93,6 +94,11 @@ function anionOf(text: string): Ion | null {
 }
 
 function interpretBracketed(items: readonly Item[], salt: RawSalt, context: Context): void {
+  const dimer = bridgedPair(items);
+  if (dimer) {
+    pushEntity(dimer, 1, null, salt, context);
+    return;
+  }
   let configuration: string | null = null;
   items.forEach((item, i) => {
     if (item.kind === 'run') {

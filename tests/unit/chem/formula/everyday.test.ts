@@ -26,6 +26,7 @@ describe('one substance, many spellings', () => {
     ['[{WCl3}2(μ-Cl)3]3-', ['[Cl3W(μ-Cl)3WCl3]3-', '[W2Cl6(μ-Cl)3]3-']],
     ['[{Ru(NH3)5}2(μ-pyz)]5+', ['[(NH3)5Ru(pz)Ru(NH3)5]5+', '[{Ru(NH3)5}2(pyz)]5+', 'Creutz–Taube ion']],
     ['[{Ir(ppy)2(μ-Cl)}2]', ['[Ir(ppy)2(μ-Cl)]2', '[Ir2(ppy)4(μ-Cl)2]']],
+    ['[{Fe(salen)}2(μ-O)]', ['[Fe(salen)]2O', '[(salen)Fe-O-Fe(salen)]', '[Fe2(salen)2(μ-O)]']],
     ['[OsN(O)3]-', ['[Os(N)O3]-', '[OsO3N]-']],
     ['[ReCl2N(PPh3)2]', ['[ReNCl2(PPh3)2]', '[Re(N)(PPh3)2Cl2]']],
     ['[Co(NCS)(NH3)5]2+', ['[Co(NH3)5(SCN-κN)]2+', '[Co(κN-NCS)(NH3)5]2+']],
