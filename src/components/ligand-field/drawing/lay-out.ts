@@ -35,13 +35,17 @@ const LINE = 15;
 const CHARACTER = 7.2;
 const LEADER = 12;
 
+/** Finer than any screen, and the same on every machine. */
+const hundredths = (px: number): number => Math.round(px * 100) / 100;
+
 /** Width of a term in px at 12 px. It errs on the wide side. */
 export const termWidth = (label: string): number => runsToText(parseTerm(label)).length * CHARACTER;
 
 /** Paths of the curves within the window, and labels at their ends: to the right and above, none upon another. */
 export function layOut(curves: readonly DrawnCurve[], window: Window, plot: Plot) {
-  const toX = (x: number) => plot.x + ((x - window.x[0]) / (window.x[1] - window.x[0])) * plot.width;
-  const toY = (y: number) => plot.y + plot.height - ((y - window.y[0]) / (window.y[1] - window.y[0])) * plot.height;
+  const toX = (x: number) => hundredths(plot.x + ((x - window.x[0]) / (window.x[1] - window.x[0])) * plot.width);
+  const toY = (y: number) =>
+    hundredths(plot.y + plot.height - ((y - window.y[0]) / (window.y[1] - window.y[0])) * plot.height);
   const drawn = curves.map((curve, i) => ({
     curve,
     key: `${curve.label} ${i}`,

@@ -20,6 +20,7 @@ export const PAPER: Record<string, string> = {
 export function svgFile(markup: string): string {
   const plain = markup
     .replace(/ (?:class|style|data-[a-z-]+|aria-[a-z-]+|role|id)="[^"]*"/g, '')
+    .replace(/<(?=(?:path|line|text|g|circle)[ >])/g, '\n<')
     .replace(/var\((--[a-z-]+)\)/g, (_, token: string) => {
       const value = PAPER[token];
       if (value === undefined) throw new Error(`${token} has no value on paper`);
