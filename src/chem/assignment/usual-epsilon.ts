@@ -32,7 +32,7 @@ export function usualEpsilon({ kind, spinAllowed, site, period }: IntensityFacts
     return site === 'centrosymmetric' ? limits(from, to, SHRIVER) : limits(from, 10 * to, LEVER);
   }
   if (site === 'tetrahedral') return limits(100, 1000, SHRIVER);
-  return site === 'acentric' ? limits(10, 500, LEVER) : limits(1, 100, SHRIVER);
+  return site === 'acentric' ? limits(10, 1000, LEVER) : limits(1, 100, SHRIVER);
 }
 
 const limits = (from: number, to: number, source: string): UsualEpsilon => ({
