@@ -49,6 +49,14 @@ const OPENING = /(?<=[([{])(\d{1,3})([A-Z][a-z]?)/g;
 const BETWEEN = /(?<=(?:\(C|H2))(1[78])(O)(?![A-Za-z\d])|(?<=\(C)(15)(N)(?![A-Za-z\d])/g;
 // `d6-dmso`, `[D8]bpy`, `bpy-d8`
 const WHOLE = /(?<=^|[([{·])(?:d|\[D)(\d{1,2})\]?-?(?=[A-Za-z])|(?<=[A-Za-z\d])-[dD](\d{1,2})(?=[)\]}·]|$)/g;
+const MIXED = /HDO|HOD|NH2D(?!\d)|NHD2/g;
+/** Partly labelled molecules: how they are read, and how many atoms are labelled. */
+const MIXED_MEANT: Readonly<Record<string, readonly [string, number]>> = {
+  HDO: ['H2O', 1],
+  HOD: ['H2O', 1],
+  NH2D: ['NH3', 1],
+  NHD2: ['NH3', 2],
+};
 const DEUTERIUM = /D(?![a-z])/g;
 
 /**
@@ -72,6 +80,10 @@ export function takeLabels(source: NormalText, library: LigandIndex): Labels {
     const typed = text.slice(start, start + length);
     found.push({ repair: { start, length, typed, meant, token: meant }, element, massNumber, atoms });
   };
+  for (const match of text.matchAll(MIXED)) {
+    const [meant, atoms] = MIXED_MEANT[match[0]] ?? ['', 0];
+    add(match.index, match[0].length, meant, 'H', 2, atoms);
+  }
   for (const match of text.matchAll(IN_BRACKETS)) {
     const [whole, a, b, c, d = a, e = b, f = c] = match;
     const [mass, element = '', digits = ''] = [Number(d), e, f];

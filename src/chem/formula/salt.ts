@@ -5,7 +5,7 @@ import { type Context, holdsMetal, interpretParts, runHoldsMetal } from './entit
 import type { Ion } from './ions.ts';
 import { compositionOf, findAnion, findCation, findSolvent, ionSpellings, longest, metalOxoanion } from './lexicon.ts';
 import { bridgedPair } from './oligomer.ts';
-import type { BareMetal, RawSalt } from './raw.ts';
+import type { BareMetal, RawEntity, RawSalt } from './raw.ts';
 import { descriptorOf, stereoBefore, withoutStereo } from './stereo.ts';
 import { type Component, countOf, type Group, type Item, readCharge, refuse } from './syntax.ts';
 import { interpretUnbracketed } from './unbracketed.ts';
@@ -26,12 +26,23 @@ export function interpretSalt(components: readonly Component[], context: Context
     salt.solvates.push(...part.solvates.map((one) => ({ ...one, count: one.count * k })));
     if (part.overallCharge !== null) salt.overallCharge = (salt.overallCharge ?? 0) + part.overallCharge * k;
   }
+  separateBracketedIons(salt);
   const beyond = [...salt.entities, ...salt.bareMetals][MOST_UNKNOWNS];
   if (beyond)
     throw refuse('too-large', `more than ${MOST_UNKNOWNS} complexes and metal ions`, context.source, beyond.start);
   salt.ions = mergeIons(salt.ions);
   salt.solvates = mergeSolvates(salt.solvates);
   return salt;
+}
+
+/** `[Co(NCS)4][Hg]`: a metal alone in brackets beside a complex is a free ion. */
+function separateBracketedIons(salt: RawSalt): void {
+  const isIon = (e: RawEntity) =>
+    e.ligands.length === 0 && e.metals.length === 1 && e.metals[0]!.count === 1 && isDBlock(e.metals[0]!.element);
+  if (!salt.entities.some((e) => e.ligands.length > 0)) return;
+  for (const { metals, count, charge, start } of salt.entities.filter(isIon))
+    salt.bareMetals.push({ element: metals[0]!.element, count, charge, start });
+  salt.entities = salt.entities.filter((e) => !isIon(e));
 }
 
 function mergeIons(ions: RawSalt['ions']): RawSalt['ions'] {
@@ -56,7 +67,7 @@ function interpretComponent(component: Component, alone: boolean, context: Conte
     item.kind === 'run' ? runHoldsMetal(item.text, context) : holdsMetal(item, context),
   );
   if (!metal && !alone && asSolvate(component, salt)) return salt;
-  const oneIon = alone ? null : findAnion(component.text.replace(/\^?\d?[+-]$/, ''));
+  const oneIon = alone ? null : anionOf(component.text);
   if (oneIon) {
     salt.ions.push({ ion: oneIon, count: 1 });
     return salt;
@@ -90,7 +101,16 @@ function isEntityGroup(group: Group, context: Context): boolean {
 }
 
 function anionOf(text: string): Ion | null {
-  return findAnion(text) ?? findAnion(text.replace(/\^?\d?[+-]$/, ''));
+  return (
+    withoutCharge(text)
+      .map(findAnion)
+      .find((found) => found !== null) ?? null
+  );
+}
+
+/** A text as it stands, without a sign at its end, and without the digit before that: `PF6-`, `SO42-`. */
+function withoutCharge(text: string): string[] {
+  return [text, text.replace(/\^?[+-]+$/, ''), text.replace(/\^?\d?[+-]$/, '')];
 }
 
 function interpretBracketed(items: readonly Item[], salt: RawSalt, context: Context): void {
@@ -135,7 +155,9 @@ function pushEntity(group: Group, times: number, configuration: string | null, s
 
 function interpretOuterGroup(group: Group, salt: RawSalt, context: Context): void {
   const text = group.inner.replace(/\^?\d*[+-]$/, '');
-  const ion = findCation(group.inner) ?? findAnion(group.inner) ?? findCation(text) ?? findAnion(text);
+  const ion = withoutCharge(group.inner)
+    .map((one) => findCation(one) ?? findAnion(one))
+    .find((found) => found !== null);
   if (ion) {
     salt.ions.push({ ion, count: group.count });
     return;

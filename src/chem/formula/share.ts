@@ -97,9 +97,10 @@ function acceptState(entity: RawEntity, charge: number, metal: RawMetal, state: 
   return false;
 }
 
-/** Mercury(I) and its like: two atoms share the one s electron that each keeps. */
-function isMetalPair(metal: RawMetal, state: number): boolean {
-  return findElement(metal.element)?.group === 12 && state === 1 && metal.count > 1;
+/** Mercury(I), gold clusters and their like: bound to each other, the atoms share the s electrons that they keep. */
+function isMetalPair({ element, count }: RawMetal, state: number): boolean {
+  const group = findElement(element)?.group ?? 0;
+  return count > 1 && ((group === 12 && state === 1) || (group === 11 && state > 0 && state < 1));
 }
 
 function impossibleBecause(symbol: string, state: number): string {

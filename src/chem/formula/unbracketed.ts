@@ -15,8 +15,9 @@ import { type Component, countOf, type Item, readCharge } from './syntax.ts';
  */
 export function interpretUnbracketed(component: Component, context: Context): RawSalt {
   const salt: RawSalt = { entities: [], ions: [], bareMetals: [], solvates: [], overallCharge: null };
+  const typed = context.source.text.slice(0, component.start + component.text.length);
   const stereo = withoutStereo(component.items);
-  const { items: body, options } = splitTrailingCharge(stereo.items);
+  const { items: body, options } = splitTrailingCharge(stereo.items, typed);
   const { items: afterCations, ions: leading } = peelCations(body, context);
   const { items: core, ions: trailing } = peelAnions(afterCations, context);
   salt.ions.push(...leading);
@@ -37,11 +38,17 @@ interface ChargeOption {
   count: number | null;
 }
 
-function splitTrailingCharge(items: readonly Item[]): { items: readonly Item[]; options: ChargeOption[] } {
+function splitTrailingCharge(
+  items: readonly Item[],
+  text: string,
+): { items: readonly Item[]; options: ChargeOption[] } {
   const last = items.at(-1);
   if (!last) return { items, options: [] };
   if (last.kind === 'group') {
     if (last.charge === null) return { items, options: [] };
+    const bare = /^(\d+)[+-]$/.exec(text.slice(last.start + last.inner.length + 2))?.[1];
+    const cut = [...items.slice(0, -1), { ...last, charge: null }];
+    if (bare !== undefined) return { items: cut, options: sharedDigits(bare, Math.sign(last.charge)) };
     return {
       items: [...items.slice(0, -1), { ...last, charge: null }],
       options: [{ charge: last.charge, count: null }],
@@ -58,13 +65,18 @@ function splitTrailingCharge(items: readonly Item[]): { items: readonly Item[]; 
   if (!plain) return { items, options: [] };
   const [whole, digits = '', signs = ''] = plain;
   const sign = signs.startsWith('-') ? -1 : 1;
-  const options: ChargeOption[] = [];
-  if (signs.length > 1 || digits === '')
-    options.push({ charge: sign * signs.length, count: digits === '' ? null : Number(digits) });
-  else if (digits.length > 1)
-    options.push({ charge: sign * Number(digits.at(-1)), count: Number(digits.slice(0, -1)) });
-  else options.push({ charge: sign, count: Number(digits) }, { charge: sign * Number(digits), count: null });
+  const single = { charge: sign * signs.length, count: digits === '' ? null : Number(digits) };
+  const options = signs.length > 1 || digits === '' ? [single] : sharedDigits(digits, sign);
   return { items: cut(whole.length), options };
+}
+
+/** `63+` behind a ligand: six of it and 3+; `2+`: two of it and +, or 2+. */
+function sharedDigits(digits: string, sign: number): ChargeOption[] {
+  if (digits.length > 1) return [{ charge: sign * Number(digits.at(-1)), count: Number(digits.slice(0, -1)) }];
+  return [
+    { charge: sign, count: Number(digits) },
+    { charge: sign * Number(digits), count: null },
+  ];
 }
 
 /** Settle `VO2+` (one oxide and 2+, or two and 1+) by the states the metal is usually met in; ask when both are usual. */

@@ -71,6 +71,24 @@ describe('one substance, many spellings', () => {
     expect(reading.entityCharge).toBe(3);
   });
 
+  test.each([
+    ['Co(NH3)63+', '[Co(NH3)6]3+'],
+    ['Fe(CN)64-', '[Fe(CN)6]4-'],
+    ['Ni(en)3 2+', '[Ni(en)3]2+'],
+    ['[Ru(bpy)3]2+(PF6-)2', '[Ru(bpy)3](PF6)2'],
+    ['[Co(NCS)4][Hg]', 'Hg[Co(NCS)4]'],
+    ['[Co(HDO)(NH3)5]3+', '[Co(H2O)(NH3)5]3+'],
+  ])('%s is %s', (typed, printed) => {
+    expect(readFormula(typed)).toMatchObject({ formula: printed, questions: [] });
+    expect(keys(typed)).toEqual(keys(printed));
+  });
+
+  test('a digit that may be a count or a charge is asked about behind a bracket, too', () => {
+    expect(questionsOf('Cu(phen)2+')).toEqual(['charge-text']);
+    expect(readFormula('Cu(phen)2+', { 'charge-text': '+' }).formula).toBe('[Cu(phen)2]+');
+    expect(readFormula('Cu(phen)2+', { 'charge-text': '2+' }).formula).toBe('[Cu(phen)]2+');
+  });
+
   test('ions written one after the other, as in an equation', () =>
     expect(readFormula('[Co(en)3]3+ 3 Cl-').formula).toBe('[Co(en)3]Cl3'));
 });
