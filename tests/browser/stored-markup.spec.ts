@@ -51,7 +51,11 @@ test('markup in every text field is text on every page that shows it', async ({ 
     notes: markup('preparation notes'),
   });
   const spectrum = await upload('/api/spectra', {
-    file: { name: 'scan <img src=x onerror=window.ran=2>.csv', mimeType: 'text/csv', buffer: Buffer.from(decimalCommaFile()) },
+    file: {
+      name: 'scan <img src=x onerror=window.ran=2>.csv',
+      mimeType: 'text/csv',
+      buffer: Buffer.from(decimalCommaFile()),
+    },
     metadata: JSON.stringify({
       complex: complex.accession,
       lab: lab.id,
