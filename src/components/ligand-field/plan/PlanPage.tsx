@@ -19,6 +19,10 @@ export function PlanPage({ accession }: { accession: string | null }) {
   const { draft, change, reading, read, open, plan, cautions, solvents } = page;
   const field = useRef<HTMLInputElement>(null);
   useEffect(() => {
+    // What was typed before the page woke up is not lost.
+    if (field.current?.value) change({ formula: field.current.value, answered: [] });
+  }, []);
+  useEffect(() => {
     if (field.current && field.current.value !== draft.formula) field.current.value = draft.formula;
   }, [draft.formula]);
   const type = (formula: string) => change({ formula, answered: [], delta: '', B: '' });
