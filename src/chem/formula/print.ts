@@ -1,4 +1,5 @@
 import { findElement } from '../elements.ts';
+import { findLigand } from '../ligands/index.ts';
 import { fragmentKey, ligandKey } from './assemble.ts';
 import { chargeOf } from './charge-text.ts';
 import type { Fragment, RawEntity, RawLigand, RawMetal, RawSalt } from './raw.ts';
@@ -45,8 +46,21 @@ function ligandsText(ligands: readonly RawLigand[]): string {
       compareSymbols(ligandKey(a), ligandKey(b)),
   );
   let text = '';
-  for (const ligand of order) text += ligandText(ligand, !/[A-Za-z]$/.test(text));
+  for (const ligand of order) {
+    const bare = ligandText(ligand, true);
+    text += /[A-Za-z]$/.test(text) || runsInto(text, bare) ? ligandText(ligand, false) : bare;
+  }
   return text;
+}
+
+/** Whether the bare atoms before and the next ones would read as one ligand: two hydrides and an oxide as H2O. */
+function runsInto(before: string, next: string): boolean {
+  const run = /[A-Za-z\d]*$/.exec(before)![0];
+  for (let from = 0; from < run.length; from += 1) {
+    const rest = run.slice(from) + next;
+    for (let end = run.length - from + 1; end <= rest.length; end += 1) if (findLigand(rest.slice(0, end))) return true;
+  }
+  return false;
 }
 
 function metalsText(metals: readonly RawMetal[]): string {

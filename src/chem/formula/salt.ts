@@ -4,8 +4,9 @@ import { assembleEntity } from './assemble.ts';
 import { type Context, holdsMetal, interpretParts, runHoldsMetal } from './entity.ts';
 import type { Ion } from './ions.ts';
 import { compositionOf, findAnion, findCation, findSolvent, ionSpellings, longest, metalOxoanion } from './lexicon.ts';
+import { mergeIons, mergeSolvates, separateBracketedIons } from './merge-parts.ts';
 import { bridgedPair } from './oligomer.ts';
-import type { BareMetal, RawEntity, RawSalt } from './raw.ts';
+import type { BareMetal, RawSalt } from './raw.ts';
 import { descriptorOf, stereoBefore, withoutStereo } from './stereo.ts';
 import { type Component, countOf, type Group, type Item, readCharge, refuse } from './syntax.ts';
 import { interpretUnbracketed } from './unbracketed.ts';
@@ -33,32 +34,6 @@ export function interpretSalt(components: readonly Component[], context: Context
   salt.ions = mergeIons(salt.ions);
   salt.solvates = mergeSolvates(salt.solvates);
   return salt;
-}
-
-/** `[Co(NCS)4][Hg]`: a metal alone in brackets beside a complex is a free ion. */
-function separateBracketedIons(salt: RawSalt): void {
-  const isIon = (e: RawEntity) =>
-    e.ligands.length === 0 && e.metals.length === 1 && e.metals[0]!.count === 1 && isDBlock(e.metals[0]!.element);
-  if (!salt.entities.some((e) => e.ligands.length > 0)) return;
-  for (const { metals, count, charge, start } of salt.entities.filter(isIon))
-    salt.bareMetals.push({ element: metals[0]!.element, count, charge, start });
-  salt.entities = salt.entities.filter((e) => !isIon(e));
-}
-
-function mergeIons(ions: RawSalt['ions']): RawSalt['ions'] {
-  const merged = new Map<string, RawSalt['ions'][number]>();
-  for (const one of ions) {
-    const key = `${one.ion.symbol}${one.ion.charge}`;
-    merged.set(key, { ion: one.ion, count: one.count + (merged.get(key)?.count ?? 0) });
-  }
-  return [...merged.values()];
-}
-
-function mergeSolvates(solvates: RawSalt['solvates']): RawSalt['solvates'] {
-  const merged = new Map<string, RawSalt['solvates'][number]>();
-  for (const one of solvates)
-    merged.set(one.symbol, { ...one, count: one.count + (merged.get(one.symbol)?.count ?? 0) });
-  return [...merged.values()];
 }
 
 function interpretComponent(component: Component, alone: boolean, context: Context): RawSalt {

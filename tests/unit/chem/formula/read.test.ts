@@ -28,6 +28,8 @@ describe('printing', () => {
     ['[Cu(en)2](ReO4)2', '[Cu(en)2][ReO4]2'],
     ['K trans-[Cr(ox)2(H2O)2]', 'Ktrans-[Cr(H2O)2(ox)2]'],
     ['[OsO3N]-', '[OsN(O)3]-'],
+    ['[Ti(O)(H)2]', '[TiH2(O)]'],
+    ['[Os(N)(H)3]', '[OsH3(N)]'],
     ['[Fe(CN)6]^{3-}', '[Fe(CN)6]3-'],
     ['CrO4 2-', '[CrO4]2-'],
     ['CrO42-', '[CrO4]2-'],
