@@ -98,7 +98,7 @@ export const heavierMetals: readonly DemoComplex[] = [
     ],
   },
   {
-    formula: '[Ru(NH3)5(pz)]2+',
+    formula: '[Ru(NH3)5(pyz)]2+',
     geometry: 'OC-6',
     spin: 'low',
     lab: 'hill',

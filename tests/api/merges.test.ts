@@ -257,6 +257,31 @@ describe('merging', () => {
     expect((await record(member, hidden)).spectra).toBe(1);
   });
 
+  test('saved fits go along with their spectra; one of typed wavenumbers is withdrawn', async () => {
+    const { hidden, open } = await twins();
+    const { centres } = await record(member, hidden);
+    const spectrum = await upload(member, north, hidden);
+    const fit = (more: object) => {
+      const { dCount } = centres[0]!;
+      const input = { n: dCount, geometry: 'OC-6', bands: [{ wavenumber: 20_000, ...more }] };
+      const sent = call('POST', `/api/complexes/${hidden}/fits`, { as: member.token, json: { input } });
+      return json<{ id: string }>(sent, 201);
+    };
+    const [band] = await json<{ id: string }[]>(
+      call('PUT', `/api/spectra/${spectrum}/bands`, {
+        as: member.token,
+        json: [{ wavenumber: 20_000, height: 80, quantity: 'epsilon', found: 'typed', assignment: { class: 'd-d' } }],
+      }),
+    );
+    const [measured, typed] = [await fit({ band: band!.id }), await fit({})];
+    await json(merge(hidden, open));
+    const fitsOf = async (who: Person) =>
+      (await json<{ id: string }[]>(read(who, `/api/complexes/${open}/fits`))).map(({ id }) => id);
+    expect(await fitsOf(member)).toEqual([measured.id]);
+    expect(await fitsOf(southLead)).toEqual([]);
+    expect((await call('DELETE', `/api/level-fits/${typed.id}`, { as: steward.token })).status).toBe(404);
+  });
+
   test('a chain of aliases ends where the last record lives', async () => {
     const formula = freshFormula();
     const [a, b] = [await register(member, north, formula, { visibility: 'lab' }), await lab(`West ${runs}`)];

@@ -19,6 +19,7 @@ import { refuse } from '../spectra/refuse.ts';
 import { type Actor, record } from '../trail.ts';
 import { centrePlaces } from './centre-places.ts';
 import { mergeItems } from './folio-items.ts';
+import { moveFits } from './move-fits.ts';
 import { obstaclesTo } from './obstacles.ts';
 import { seenByAllWhoSee, visibilityUnder } from './sight-kept.ts';
 
@@ -131,7 +132,8 @@ async function moveParts(tx: Tx, actor: Actor, { from, into, reason }: Merge) {
   for (const table of [spectrumSpecies, preparationComponents])
     await tx.update(table).set({ complexId: into.id }).where(eq(table.complexId, from.id));
   await noteOnBands(tx, ids(own.spectra), from, into);
-  return { spectra: ids(own.spectra), preparations: ids(own.preparations) };
+  const fits = await moveFits(tx, actor, { from, into, spectra: ids(own.spectra) });
+  return { spectra: ids(own.spectra), preparations: ids(own.preparations), ...(fits.length > 0 ? { fits } : {}) };
 }
 
 /** Attestations stand, and say under which record they were made. */
