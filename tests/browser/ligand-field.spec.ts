@@ -1,7 +1,11 @@
 import AxeBuilder from '@axe-core/playwright';
+import type { Locator } from '@playwright/test';
 import { expect, signIn, test } from './people.ts';
 
 const WIDE = 90_000;
+
+/** The heading of a panel that waits makes way for that of the panel itself. */
+const scrollTo = (heading: Locator) => expect(() => heading.scrollIntoViewIfNeeded({ timeout: 2000 })).toPass();
 
 test('sliders move the marks, a fit is saved and is there after a reload', async ({ page }) => {
   test.setTimeout(WIDE);
@@ -12,7 +16,7 @@ test('sliders move the marks, a fit is saved and is there after a reload', async
   const chromium = items.find(({ strip }) => strip.filter((band) => band.class === 'd-d').length >= 2)!;
   await page.goto(`/complexes/${chromium.accession}`);
   const heading = page.getByRole('heading', { name: 'Level diagram' });
-  await heading.scrollIntoViewIfNeeded();
+  await scrollTo(heading);
   const panel = page.locator('section', { has: heading }).last();
   await expect(panel.getByRole('group', { name: /Candidates/ })).toBeVisible();
   const line = panel.locator('line[data-at]');
@@ -30,7 +34,7 @@ test('sliders move the marks, a fit is saved and is there after a reload', async
   await panel.getByRole('button', { name: 'Save the fit' }).click();
   await expect(panel.getByText('The fit is saved')).toBeVisible();
   await page.reload();
-  await heading.scrollIntoViewIfNeeded();
+  await scrollTo(heading);
   await expect(page.getByRole('region', { name: 'Saved fits' }).getByText('browser fit').first()).toBeVisible();
 
   const { violations } = await new AxeBuilder({ page }).withTags(['wcag2a', 'wcag2aa', 'wcag22aa']).analyze();

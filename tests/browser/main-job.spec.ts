@@ -91,6 +91,7 @@ test('a contributor registers and measures, a lead shares, a guest finds and tak
       .click();
     await expect(page).toHaveURL(/\/folios\/[0-9a-f-]{36}/);
     folio = page.url().split('/').pop()!;
+    await page.waitForLoadState('networkidle');
     await page.getByLabel('Add a complex').fill(accession);
     await page.getByRole('option', { name: new RegExp(accession) }).click();
     await expect(page.getByRole('main').getByText('1 complex')).toBeVisible();

@@ -1,7 +1,7 @@
 import { Combobox } from '@base-ui/react/combobox';
 import { CSPProvider } from '@base-ui/react/csp-provider';
 import { useQuery } from '@tanstack/react-query';
-import { useId, useState } from 'react';
+import { useEffect, useId, useRef, useState } from 'react';
 import type { Page } from '../../contracts/common.ts';
 import type { ComplexSummary } from '../../contracts/complexes.ts';
 import type { FolioRecord } from '../../contracts/sharing.ts';
@@ -23,7 +23,15 @@ interface Props {
 export function AddComplex({ present, editItems }: Props) {
   const id = useId();
   const [text, setText] = useState('');
+  const [open, setOpen] = useState(false);
   const [added, setAdded] = useState<string | null>(null);
+  const field = useRef<HTMLInputElement>(null);
+  useEffect(() => {
+    // What was typed before the page woke up is not lost.
+    if (!field.current?.value) return;
+    setText(field.current.value);
+    setOpen(true);
+  }, []);
   const asked = useSettled(text.trim(), 250);
   const found = useQuery(
     {
@@ -58,6 +66,8 @@ export function AddComplex({ present, editItems }: Props) {
           value={null}
           onValueChange={(chosen: ComplexSummary | null) => add(chosen)}
           inputValue={text}
+          open={open}
+          onOpenChange={setOpen}
           // Closing or choosing would empty the field; what was typed stays until it was added.
           onInputValueChange={(next, { reason }) => reason === 'input-change' && setText(next)}
           itemToStringLabel={(item: ComplexSummary) => item.accession}
@@ -68,6 +78,7 @@ export function AddComplex({ present, editItems }: Props) {
             Add a complex
           </label>
           <Combobox.Input
+            ref={field}
             id={id}
             placeholder="Accession, formula or ligand"
             className={CONTROL}
