@@ -33,8 +33,9 @@ export function plannedEntity(entity: EntityReading, wished: PlannedComplex['geo
       oxidationState: centre.oxidationState,
       geometry,
       donors,
-      // One kind of donor in an octahedron has a centre of inversion; of several it depends on the isomer.
-      centrosymmetric: geometry === 'OC-6' && donors.length === 1,
+      // Six alike about the metal have a centre of inversion. The rings of a tris-chelate take it away (D3), and of
+      // several kinds it depends on the isomer.
+      centrosymmetric: geometry === 'OC-6' && entity.ligands.length === 1 && entity.ligands[0]!.denticity === 1,
     },
   };
 }
