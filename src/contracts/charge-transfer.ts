@@ -7,7 +7,10 @@ export const ChargeTransferInput = z
     oxidationState: z.number().int().min(-4).max(9),
     geometry: z.string().min(1).max(20).describe('Polyhedral symbol'),
     ligands: z.array(z.string().min(1).max(60)).min(1).max(24).describe('Abbreviations or formulae'),
-    spin: z.enum(['low', 'intermediate', 'high']).optional().describe('The tabulated or lowest one unless told'),
+    spin: z
+      .enum(['low', 'intermediate', 'high'])
+      .optional()
+      .describe('Unless told: the tabulated one, else high in T-4 and low elsewhere'),
     delta: z.number().positive().max(100_000).optional().describe('cm⁻¹'),
     B: z.number().positive().max(2000).optional().describe('cm⁻¹'),
   })

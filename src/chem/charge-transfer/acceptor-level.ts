@@ -51,8 +51,8 @@ export function acceptorLevel(dCount: number, geometry: FieldGeometry, spin: Spi
   };
 }
 
-/** The spin state asked for, or the only one, or where nothing is said the lowest in spin. */
+/** The spin state asked for, or the only one; where nothing is said, high in a tetrahedron, whose field is weak, else low. */
 function spinState(dCount: number, geometry: FieldGeometry, spin: Spin | null): SpinChoice | undefined {
   const choices = spinChoices(dCount, geometry);
-  return choices.find((choice) => choice.spin === spin) ?? choices[0];
+  return choices.find((choice) => choice.spin === spin) ?? (geometry === 'T-4' ? choices.at(-1) : choices[0]);
 }

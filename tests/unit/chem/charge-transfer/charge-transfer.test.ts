@@ -32,6 +32,8 @@ describe('where the electron goes', () => {
     [9, 'OC-6', null, 'eg', true],
     [0, 'T-4', null, 'e', false],
     [7, 'T-4', 'high', 't2', false],
+    // Tetrahedra are high-spin (common practice): e2 t2^3 of tetrachloridoferrate(III) takes the electron in e.
+    [5, 'T-4', null, 'e', false],
     [8, 'SP-4', 'low', 'x2-y2', false],
   ] as const)('d%i in %s (%s) into %s', (n, geometry, spin, orbital, raisedByField) => {
     expect(acceptorLevel(n, geometry, spin)).toMatchObject({ orbital, raisedByField });
